@@ -1,0 +1,79 @@
+#pragma once
+#include <optional>
+#include <span>
+#include <string>
+#include <utility>
+#include <vector>
+
+#include "vatwright/kinetics/reaction.hpp"
+
+namespace vatwright {
+
+/// R in J/mol/K.
+inline constexpr double gas_constant = 8.314462618;
+
+/// The reactions of a duty, compiled for evaluation: dense stoichiometry, orders sorted by kind, no text.
+class Kinetics {
+ public:
+  Kinetics() = default;
+  /// species: how many there are. of: index of conversion_of. c_of_feed: its concentration in the mixed feed (mol/m3).
+  Kinetics(std::vector<Reaction> reactions, int species, int of, double c_of_feed_mol_m3);
+
+  [[nodiscard]] int reactions() const { return static_cast<int>(reactions_.size()); }
+  [[nodiscard]] int species() const { return species_; }
+  [[nodiscard]] int of() const { return of_; }                     ///< index of conversion_of
+  [[nodiscard]] double c_of_feed() const { return c_of_feed_; }
+  [[nodiscard]] const Reaction& reaction(int j) const { return reactions_[static_cast<std::size_t>(j)]; }
+  [[nodiscard]] double nu(int species, int reaction) const;        ///< net coefficient nu_ij
+  [[nodiscard]] bool has_table() const;                            ///< a measured table (then there is one reaction)
+  /// Rank of the matrix nu: the number of independent reactions.
+  [[nodiscard]] int independent() const { return independent_; }
+  /// Change of moles by reaction j, sum_i nu_ij.
+  [[nodiscard]] double mole_change(int j) const;
+
+  /// X = 1 - F_A/F_A,feed of conversion_of for extents xi (mol per m3 of mixed feed): -sum_j nu_Aj xi_j / c_A,feed.
+  [[nodiscard]] double conversion(std::span<const double> xi) const;
+  /// c_i = c_feed,i + sum_j nu_ij xi_j, per m3 of mixed feed. c: one per species.
+  void amounts(std::span<const double> c_feed, std::span<const double> xi, std::span<double> c) const;
+
+ private:
+  friend class RateEvaluator;
+  std::vector<Reaction> reactions_;
+  std::vector<double> nu_;          // species x reactions, row by species
+  int species_ = 0, of_ = -1, independent_ = 0;
+  double c_of_feed_ = 0;
+};
+
+/// Evaluates all rates at one state. Keeps the rate constants of the last temperature, so a held vessel pays no
+/// exponential; allocates only when made. One per thread.
+class RateEvaluator {
+ public:
+  explicit RateEvaluator(const Kinetics& kinetics);
+
+  /// r_j of the reactions as written, mol per (m3 of fluid | m3 of bed | kg of catalyst, as the reaction's `per` says) per s.
+  ///   C: true concentrations, mol per m3 of fluid at T; T in K; X: conversion of conversion_of (read by tables only).
+  /// A reaction's forward part is zero where any of its reactants is at or below zero, its reverse part where any product
+  /// is; C^0 is 1 above zero. A table outside its range gives NaN (callers keep inside `table_range`).
+  void operator()(std::span<const double> C, double T_K, double X, std::span<double> r);
+
+  /// How often it was called: cost is tested by counting.
+  [[nodiscard]] long calls() const { return calls_; }
+
+ private:
+  struct Compiled;
+  const Kinetics* kinetics_;
+  std::vector<Compiled> laws_;
+  double T_K_ = -1;
+  long calls_ = 0;
+  void set_temperature(double T_K);
+};
+
+/// Range of conversion of a measured table, where there is one.
+std::optional<std::pair<double, double>> table_range(const Kinetics& kinetics);
+
+/// n of a species S: the least moles of conversion_of that must be consumed to make one mole of S through the equations
+/// as written, forward, other fed species free (ruling: 2 A -> D gives 2; 2 B -> D + H, B + D -> T + H gives 3 for T).
+/// nullopt where S is made without conversion_of or not made. fed: for every species whether it is fed.
+std::optional<double> moles_needed(const Kinetics& kinetics, const std::vector<bool>& fed, int species);
+
+}  // namespace vatwright
