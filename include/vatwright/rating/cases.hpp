@@ -8,8 +8,8 @@
 
 namespace vatwright {
 
-/// Base and cases together (ruling 4): the worst verdict (does-not-fit, cannot-tell, fits), the case it comes from (absent = base,
-/// also where the base is as bad), and the intersection of all windows.
+/// Base and cases together (ruling 4): the worst verdict (does-not-fit, cannot-tell, fits), the case it comes from
+/// (absent = base, also where the base is as bad), and the intersection of all windows.
 struct OverCases {
   Verdict verdict = Verdict::cannot_tell;
   std::optional<std::string> worst_case;

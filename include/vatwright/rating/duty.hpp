@@ -19,16 +19,16 @@ struct Demand {
 };
 
 struct Target {
-  std::optional<double> conversion;   ///< at least, of conversion_of
+  std::optional<double> conversion;  ///< at least, of conversion_of
   std::vector<Demand> demands;
-  double feed_m3_s = 0;               ///< the duty's feed rate, however it was given (feed_rate, production, [[feed]])
+  double feed_m3_s = 0;  ///< the duty's feed rate, however it was given (feed_rate, production, [[feed]])
 };
 
 /// Half-width of a 95 % interval on a key, read and checked (its use comes with the spread of answers).
 struct Spread {
-  std::string key;         ///< full path, "reaction.acylation.rate.k"
+  std::string key;  ///< full path, "reaction.acylation.rate.k"
   bool relative = true;
-  double half_width = 0;   ///< fraction, or SI
+  double half_width = 0;  ///< fraction, or SI
 };
 
 /// Operation as the file gives it: for all vessels, then for one alone.
@@ -44,9 +44,9 @@ struct Duty {
   Target target;
   Thermal thermal = Thermal::hold;
   OperationChoice operation;
-  std::map<std::string, OperationChoice> operation_of;   ///< by tag
-  double inlet_pressure_Pa = 101325;                     ///< ruling 18
-  double hold_K = 0;                                     ///< of vessels without their own
+  std::map<std::string, OperationChoice> operation_of;  ///< by tag
+  double inlet_pressure_Pa = 101325;                    ///< ruling 18
+  double hold_K = 0;                                    ///< of vessels without their own
   double catalyst_kg_m3 = 0;
   Start start;
   ProductLimits limits;
@@ -76,11 +76,11 @@ struct Problem {
   Site site;
   Duty duty;
   std::vector<Assumed> assumed;
-  std::vector<std::string> not_asked;   ///< what reading already knows ("spread", ..); rating adds limits never asked
+  std::vector<std::string> not_asked;  ///< what reading already knows ("spread", ..); rating adds limits never asked
 };
 struct Problems {
   Problem base;
-  std::vector<std::pair<std::string, Problem>> cases;   ///< in the order of the file
+  std::vector<std::pair<std::string, Problem>> cases;  ///< in the order of the file
 };
 
 /// How `vessel` is run in this duty (fill resolved: asked, else the most working fill).
