@@ -21,11 +21,11 @@ class Kinetics {
 
   [[nodiscard]] int reactions() const { return static_cast<int>(reactions_.size()); }
   [[nodiscard]] int species() const { return species_; }
-  [[nodiscard]] int of() const { return of_; }                     ///< index of conversion_of
+  [[nodiscard]] int of() const { return of_; }  ///< index of conversion_of
   [[nodiscard]] double c_of_feed() const { return c_of_feed_; }
   [[nodiscard]] const Reaction& reaction(int j) const { return reactions_[static_cast<std::size_t>(j)]; }
-  [[nodiscard]] double nu(int species, int reaction) const;        ///< net coefficient nu_ij
-  [[nodiscard]] bool has_table() const;                            ///< a measured table (then there is one reaction)
+  [[nodiscard]] double nu(int species, int reaction) const;  ///< net coefficient nu_ij
+  [[nodiscard]] bool has_table() const;                      ///< a measured table (then there is one reaction)
   /// Rank of the matrix nu: the number of independent reactions.
   [[nodiscard]] int independent() const { return independent_; }
   /// Change of moles by reaction j, sum_i nu_ij.
@@ -36,35 +36,57 @@ class Kinetics {
   /// c_i = c_feed,i + sum_j nu_ij xi_j, per m3 of mixed feed. c: one per species.
   void amounts(std::span<const double> c_feed, std::span<const double> xi, std::span<double> c) const;
 
+  /// The first (reaction, species) whose rate has no value at these concentrations: a species with a negative order in
+  /// a part that runs there (its reactants, or products, all above zero), itself at or below zero. Empty: all have one.
+  [[nodiscard]] std::optional<std::pair<int, int>> absent_with_negative_order(std::span<const double> C) const;
+
  private:
   friend class RateEvaluator;
   std::vector<Reaction> reactions_;
-  std::vector<double> nu_;          // species x reactions, row by species
+  std::vector<double> nu_;  // species x reactions, row by species
   int species_ = 0, of_ = -1, independent_ = 0;
   double c_of_feed_ = 0;
 };
 
 /// Evaluates all rates at one state. Keeps the rate constants of the last temperature, so a held vessel pays no
-/// exponential; allocates only when made. One per thread.
+/// exponential; allocates only when made. One per thread; it keeps its own copy of all that it needs.
+///
+///   power law    r = k prod C_i^n_i / of_coefficient / (1 + sum K_i C_i)^m
+///   saturating   r = most prod C_i/(half_i + C_i) / of_coefficient / (1 + sum K_i C_i)^m
+///   reversible   r = forward (1 - Q/K), Q = prod C_i^nu_i; expanded, so that an absent reactant does not hide the
+///                reverse part: species i has the order n_i + nu_i in it
+///   pressure     every C_i above is C_i R T (half-saturation and adsorption constants are then in Pa and 1/Pa)
+///   table        r = consumption(X) / |nu_A|
 class RateEvaluator {
  public:
   explicit RateEvaluator(const Kinetics& kinetics);
+  ~RateEvaluator();
+  RateEvaluator(const RateEvaluator&);
+  RateEvaluator& operator=(const RateEvaluator&);
+  RateEvaluator(RateEvaluator&&) noexcept;
+  RateEvaluator& operator=(RateEvaluator&&) noexcept;
 
-  /// r_j of the reactions as written, mol per (m3 of fluid | m3 of bed | kg of catalyst, as the reaction's `per` says) per s.
+  /// r_j of the reactions as written, mol per (m3 of fluid | m3 of bed | kg of catalyst, as the reaction's `per` says)
+  /// per s.
   ///   C: true concentrations, mol per m3 of fluid at T; T in K; X: conversion of conversion_of (read by tables only).
-  /// A reaction's forward part is zero where any of its reactants is at or below zero, its reverse part where any product
-  /// is; C^0 is 1 above zero. A table outside its range gives NaN (callers keep inside `table_range`).
+  /// A reaction's forward part is zero where any of its reactants (net coefficient below zero) is at or below zero, its
+  /// reverse part where any product is; C^0 is 1, other species below zero count as zero. A part without a finite value
+  /// (a negative order on a species that is absent; overflow) counts as zero and is noted, see `no_value`: whoever
+  /// gives out an answer asks that first. Apart from tables r is always finite. A table outside its range gives NaN
+  /// (callers keep inside `table_range`).
   void operator()(std::span<const double> C, double T_K, double X, std::span<double> r);
 
+  /// How often a part of a rate had no finite value so far: above zero, what was reckoned with these rates is no answer
+  /// unless Kinetics::absent_with_negative_order is empty at every state that counts.
+  [[nodiscard]] long no_value() const { return no_value_; }
   /// How often it was called: cost is tested by counting.
   [[nodiscard]] long calls() const { return calls_; }
 
  private:
   struct Compiled;
-  const Kinetics* kinetics_;
   std::vector<Compiled> laws_;
   double T_K_ = -1;
-  long calls_ = 0;
+  long calls_ = 0, no_value_ = 0;
   void set_temperature(double T_K);
 };
 

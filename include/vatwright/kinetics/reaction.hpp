@@ -7,8 +7,8 @@
 
 namespace vatwright {
 
-/// k(T): at `at_K` it is k; away from there by Arrhenius, k exp(-(E/R)(1/T - 1/at)), by theta, k theta^(T - at), or not at all.
-/// SI: mol, m3, s, Pa (kg in place of mol under amounts = mass; kg of catalyst per its mass).
+/// k(T): at `at_K` it is k; away from there by Arrhenius, k exp(-(E/R)(1/T - 1/at)), by theta, k theta^(T - at), or not
+/// at all. SI: mol, m3, s, Pa (kg in place of mol under amounts = mass; kg of catalyst per its mass).
 struct RateConstant {
   enum class Moves { not_at_all, arrhenius, theta };
   double k = 0;
@@ -19,7 +19,8 @@ struct RateConstant {
   [[nodiscard]] double at(double T_K) const;
 };
 
-/// (species index, figure): an order, a half-saturation concentration (mol/m3), an adsorption constant (m3/mol or 1/Pa).
+/// (species index, figure): an order, a half-saturation concentration (mol/m3), an adsorption constant (m3/mol or
+/// 1/Pa).
 struct SpeciesFigure {
   int species = 0;
   double value = 0;
@@ -39,30 +40,31 @@ struct Saturating {
 enum class Basis { concentration, pressure };
 enum class Per { unsaid, fluid, bed, catalyst };
 
-/// A rate law as a whole. The rate of the REACTION as written is law / of_coefficient / (1 + sum K_i C_i)^adsorption_power.
+/// A rate law as a whole. The rate of the REACTION as written is law / of_coefficient / (1 + sum K_i
+/// C_i)^adsorption_power.
 struct RateLaw {
   std::variant<PowerLaw, Saturating> law;
-  double of_coefficient = 1;   ///< |nu| of the species whose rate the constant gives; 1 for the reaction itself
+  double of_coefficient = 1;  ///< |nu| of the species whose rate the constant gives; 1 for the reaction itself
   Basis basis = Basis::concentration;
   Per per = Per::unsaid;
   std::vector<SpeciesFigure> adsorption;
   double adsorption_power = 1;
 };
 
-/// Measured rates: consumption of conversion_of (mol/m3 fluid/s, positive) against conversion, at one temperature and the
-/// feed's composition. Only in a duty of one reaction. Interpolated in 1/consumption (see kinetics/rate_table.hpp).
+/// Measured rates: consumption of conversion_of (mol/m3 fluid/s, positive) against conversion, at one temperature and
+/// the feed's composition. Only in a duty of one reaction. Interpolated in 1/consumption (see kinetics/rate_table.hpp).
 struct RateTable {
   std::vector<double> conversion;
   std::vector<double> consumption_mol_m3_s;
   std::optional<double> at_K;
 };
 
-/// Heat of reaction per mole of the equation as written; negative dH = releases. Where every species' heat capacity is known
-/// it moves: dH(T) = dH_at + integral of dCp from at_K, dCp = sum_n dCp[n] T^n.
+/// Heat of reaction per mole of the equation as written; negative dH = releases. Where every species' heat capacity is
+/// known it moves: dH(T) = dH_at + integral of dCp from at_K, dCp = sum_n dCp[n] T^n.
 struct HeatOfReaction {
   double dH_J_mol = 0;
   double at_K = 298.15;
-  std::vector<double> dCp;   ///< empty: constant
+  std::vector<double> dCp;  ///< empty: constant
   [[nodiscard]] double at(double T_K) const;
 };
 
@@ -83,14 +85,17 @@ struct Measured {
 };
 
 struct Reaction {
-  std::string name;       ///< as given, else the equation
-  std::string equation;   ///< as written
-  std::vector<SpeciesFigure> nu;   ///< net coefficients, negative = consumed; species with net 0 are kept with 0
+  std::string name;               ///< as given, else the equation
+  std::string equation;           ///< as written
+  std::vector<SpeciesFigure> nu;  ///< net coefficients, negative = consumed; species with net 0 are kept with 0
   std::variant<RateLaw, RateTable> forward;
-  std::optional<Equilibrium> equilibrium;   ///< reversible: exactly one of these two
+  std::optional<Equilibrium> equilibrium;  ///< reversible: exactly one of these two
   std::optional<RateLaw> reverse;
   std::optional<HeatOfReaction> heat;
   std::optional<Measured> measured;
+  /// The two sides as written, coefficients positive ("A + R -> 2 R": left A 1, R 1; right R 2). For whoever fills in
+  /// orders that were left out; balances and stop rules use nu alone.
+  std::vector<SpeciesFigure> left, right;
 };
 
 }  // namespace vatwright
