@@ -20,6 +20,7 @@ void ExplicitStepper::dense(const Step& s, std::span<double> rows) {
     rows[2 * n + i] = 3 * rise - 2 * a - b + bulge;
     rows[3 * n + i] = a + b - 2 * rise - 2 * bulge;
     rows[4 * n + i] = bulge;
+    rows[5 * n + i] = 0;
   }
 }
 

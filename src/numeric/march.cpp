@@ -19,8 +19,15 @@ bool all_finite(const State& values) {
 
 double at(std::span<const double> rows, std::size_t n, std::size_t i, double theta) {
   double value = 0;
-  for (std::size_t row = 5; row-- > 0;) value = value * theta + rows[row * n + i];
+  for (std::size_t row = rows_of_step; row-- > 0;) value = value * theta + rows[row * n + i];
   return value;
+}
+
+Tolerance tolerance(const MarchOptions& options, std::size_t n) {
+  VATWRIGHT_EXPECTS(options.scale.empty() || options.scale.size() == n);
+  Tolerance tol{options.rel_tol, State(n, options.abs_tol)};
+  for (std::size_t i = 0; i < options.scale.size(); ++i) tol.abs[i] *= options.scale[i];
+  return tol;
 }
 
 /// The fastest decay that a Jacobian shows, 1/time; 0 where none.
@@ -42,11 +49,12 @@ class Marcher {
         options_(options),
         events_(events),
         jacobian_(jacobian),
-        tol_(tolerances(y0.size())),
-        stiff_(n_, jacobian, floors()),
-        rows_(5 * n_),
+        tol_(tolerance(options, y0.size())),
+        stiff_(n_, jacobian, tol_),
+        rows_(rows_of_step * n_),
         place_(n_),
         J_(n_ * n_) {
+    for (double each : tol_.abs) noise_.push_back(1e3 * each);
     step_.t = t0;
     step_.y.assign(y0.begin(), y0.end());
     step_.dydt.resize(n_);
@@ -66,18 +74,6 @@ class Marcher {
   }
 
  private:
-  State tolerances(std::size_t n) const {
-    VATWRIGHT_EXPECTS(options_.scale.empty() || options_.scale.size() == n);
-    State tol(n, options_.abs_tol);
-    for (std::size_t i = 0; i < options_.scale.size(); ++i) tol[i] *= options_.scale[i];
-    return tol;
-  }
-  State floors() const {  // what of a component is noise for a difference quotient
-    State all(tol_);
-    for (double& each : all) each *= 1e3;
-    return all;
-  }
-
   NoAnswer stuck(const std::string& why) const {
     return {NoAnswer::Kind::unsolved,
             "the march stopped at " + number_text(step_.t) + " of " + number_text(t1_) + ": " + why};
@@ -96,27 +92,17 @@ class Marcher {
     return std::nullopt;
   }
 
-  /// Norm of v against the tolerances at y.
-  double norm(const State& v, const State& y, const State& y1) const {
-    double largest = 0;
-    for (std::size_t i = 0; i < n_; ++i) {
-      const double size = std::max(std::abs(y[i]), std::abs(y1[i]));
-      largest = std::max(largest, std::abs(v[i]) / (tol_[i] + options_.rel_tol * size));
-    }
-    return largest;
-  }
-
   /// A step over which the solution and its slope, followed by Euler's method, hardly change (Hairer, Norsett, Wanner,
   /// Solving Ordinary Differential Equations I, sec. II.4, from memory).
   double first_step() {
-    const double d0 = norm(step_.y, step_.y, step_.y), d1 = norm(step_.dydt, step_.y, step_.y);
+    const double d0 = tol_.norm(step_.y, step_.y, step_.y), d1 = tol_.norm(step_.dydt, step_.y, step_.y);
     double h = d0 > 1e-5 && d1 > 1e-5 ? 0.01 * d0 / d1 : 1e-6 * span_;
     h = std::min(h, span_);
     State y1(step_.y), change(n_);
     for (std::size_t i = 0; i < n_; ++i) y1[i] += h * step_.dydt[i];
     f_(step_.t + h, y1, change);
     for (std::size_t i = 0; i < n_; ++i) change[i] = (change[i] - step_.dydt[i]) / h;
-    const double steepest = std::max(d1, norm(change, step_.y, step_.y));
+    const double steepest = std::max(d1, tol_.norm(change, step_.y, step_.y));
     if (!(steepest > 0)) return h;
     return std::isfinite(steepest) ? std::min(100 * h, std::pow(0.01 / steepest, 0.2)) : h;
   }
@@ -128,10 +114,10 @@ class Marcher {
     const bool last = next_h_ >= rest * (1 - 1e-12);
     step_.h = last ? rest : std::min(next_h_, rest / 2 < next_h_ ? rest / 2 : next_h_);
     attempt();
-    const double error = norm(step_.error, step_.y, step_.y1);
+    const double error = tol_.norm(step_.error, step_.y, step_.y1);
     const bool sound =
         std::isfinite(error) && all_finite(step_.error) && all_finite(step_.y1) && all_finite(step_.dydt1);
-    const double power = is_stiff_ ? RosenbrockStepper::power : ExplicitStepper::power;
+    const double power = is_stiff_ ? RadauStepper::power : ExplicitStepper::power;
     const double factor = sound ? std::clamp(0.9 * std::pow(error, -power), 0.2, grow_) : 0.2;
     if (!sound || error > 1) {
       next_h_ = step_.h * std::min(factor, 0.9);
@@ -191,7 +177,7 @@ class Marcher {
   void keep(bool last) {
     const double share = event_at_.value_or(1.0);
     double scale = 1;
-    for (std::size_t row = 0; row < 5; ++row, scale *= share)
+    for (std::size_t row = 0; row < rows_of_step; ++row, scale *= share)
       for (std::size_t i = 0; i < n_; ++i) track_.coefficients_.push_back(rows_[row * n_ + i] * scale);
     track_.stiff_steps_ += is_stiff_ ? 1 : 0;
     step_.t = event_at_ || !last ? step_.t + share * step_.h : t1_;
@@ -207,11 +193,12 @@ class Marcher {
     if (++since_weighed_ < 25) return;
     since_weighed_ = 0;
     const double h_lambda = step_.h * decay();
-    const bool other = is_stiff_ ? h_lambda < 0.5 : h_lambda > 2;
+    const bool other = is_stiff_ ? h_lambda < 0.1 : h_lambda > 0.7;
     votes_ = other ? votes_ + 1 : 0;
     if (votes_ < needed_) return;
     if (is_stiff_) needed_ *= 2;  // to and fro costs more each time
     is_stiff_ = !is_stiff_;
+    stiff_.forget();
     votes_ = 0;
   }
 
@@ -220,7 +207,7 @@ class Marcher {
     if (jacobian_ != nullptr)
       (*jacobian_)(step_.t, step_.y, J_);
     else
-      difference_jacobian(f_, step_.t, step_.y, step_.dydt, step_.h, floors(), false, J_);
+      difference_jacobian(f_, step_.t, step_.y, step_.dydt, step_.h, noise_, J_);
     return fastest_decay(J_, n_);
   }
 
@@ -230,10 +217,10 @@ class Marcher {
   const MarchOptions& options_;
   std::span<const Event> events_;
   const Jacobian* jacobian_;
-  State tol_;
+  Tolerance tol_;
   ExplicitStepper explicit_;
-  RosenbrockStepper stiff_;
-  State rows_, place_, J_, level_;
+  RadauStepper stiff_;
+  State noise_, rows_, place_, J_, level_;
   std::optional<double> event_at_;
   Step step_;
   Track track_;

@@ -31,12 +31,22 @@ struct Step {
   State y1, dydt1, error;  ///< at its end: state, derivative, estimate of the error
 };
 
+/// What an error is measured against: the largest |v_i|/(abs_i + rel |y_i|), y the larger of two states.
+struct Tolerance {
+  double rel = 0;
+  State abs;
+  [[nodiscard]] double norm(std::span<const double> v, const State& y, const State& y1) const;
+};
+
+/// Powers of theta = (t - s.t)/s.h in the polynomial of a step, 0 .. 5.
+inline constexpr std::size_t rows_of_step = 6;
+
 /// Dormand and Prince's pair, from the library; the error goes with h^5.
 class ExplicitStepper {
  public:
   static constexpr double power = 1.0 / 5;
   void attempt(CountedRhs& f, Step& s);
-  /// Five rows of n: the polynomial in (t - s.t)/s.h over the step just made.
+  /// rows_of_step rows of n: the polynomial of the step just made.
   void dense(const Step& s, std::span<double> rows);
 
  private:
@@ -44,45 +54,44 @@ class ExplicitStepper {
   State middle_;
 };
 
-/// df/dy by differences about (t, y); central: second order, else one-sided from dydt. step: what the solution moves by
-/// in the step ahead, which sets how far to look where a component is near zero. J: n x n, row by row.
-void difference_jacobian(CountedRhs& f, double t, const State& y, const State& dydt, double h,
-                         std::span<const double> floor, bool central, std::span<double> J);
+/// df/dy by differences from dydt = f(t, y), one-sided, J row by row. h: the step ahead, which tells how far to look
+/// where a component is near zero; floor: what of each is noise.
+void difference_jacobian(CountedRhs& f, double t, const State& y, const State& dydt, double h, const State& floor,
+                         std::span<double> J);
 
-/// RODAS of Hairer and Wanner, L-stable; the error goes with h^4.
-class RosenbrockStepper {
+/// Radau IIA with five stages: L-stable, of order 9 at the nodes, its polynomial of degree 5 good to h^6 between them
+/// even where the fast part follows the slow one. The error is estimated from the fall of that polynomial's
+/// coefficients: the last, as a share of best approximation, times the ratio by which they fall (at most 1); it goes
+/// with h^6.
+class RadauStepper {
  public:
-  static constexpr double power = 1.0 / 4;
-  RosenbrockStepper(std::size_t n, const Jacobian* jacobian, State floor)
-      : n_(n),
-        jacobian_(jacobian),
-        floor_(std::move(floor)),
-        J_(n * n),
-        lu_(n * n),
-        pivots_(n),
-        dfdt_(n),
-        y_(n),
-        f_(n),
-        k_(6 * n) {}
-  /// New place: the Jacobian is taken anew by the next attempt.
-  void moved() { fresh_ = false; }
+  static constexpr double power = 1.0 / 6;
+  RadauStepper(std::size_t n, const Jacobian* jacobian, const Tolerance& tolerance);
   void attempt(CountedRhs& f, Step& s);
   void dense(const Step& s, std::span<double> rows);
+  /// The step just made was kept: the next starts at its end.
+  void moved() { fresh_ = false; }
+  /// Another method made steps since: the last polynomial is no guess any more.
+  void forget() { q_h_ = 0; }
+  /// The Jacobian at the start of the last step.
   [[nodiscard]] std::span<const double> jacobian() const { return J_; }
 
  private:
-  void take_derivatives(CountedRhs& f, const Step& s);
-  bool factorise(double diagonal);
-  void solve(std::span<double> b) const;
-  std::span<double> k(std::size_t i) { return {k_.data() + i * n_, n_}; }
-  std::span<const double> k(std::size_t i) const { return {k_.data() + i * n_, n_}; }
+  void take_jacobian(CountedRhs& f, const Step& s);
+  void guess(const Step& s);
+  bool factorise(double h);
+  void solve();
+  bool iterate(CountedRhs& f, const Step& s);
+  void take_polynomial();
+  void estimate(Step& s);
 
   std::size_t n_;
   const Jacobian* jacobian_;
-  State floor_;
-  State J_, lu_;
+  const Tolerance& tolerance_;
+  State floor_, J_, lu_, b_, Z_, F_, place_;
   std::vector<std::size_t> pivots_;
-  State dfdt_, y_, f_, k_;
+  State q_;         // 5 rows of n: powers 1 .. 5 of the last step's polynomial
+  double q_h_ = 0;  // the step that it belongs to; 0: none
   bool fresh_ = false;
 };
 

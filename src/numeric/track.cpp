@@ -19,9 +19,12 @@ void Track::read(double t, std::span<double> y) const {
   const auto after = std::upper_bound(t_.begin() + 1, t_.end() - 1, t);
   const auto step = static_cast<std::size_t>(after - t_.begin()) - 1;
   const double theta = (t - t_[step]) / (t_[step + 1] - t_[step]);
-  const double* c = coefficients_.data() + step * 5 * n;
-  for (std::size_t i = 0; i < n; ++i)
-    y[i] = c[i] + theta * (c[n + i] + theta * (c[2 * n + i] + theta * (c[3 * n + i] + theta * c[4 * n + i])));
+  const double* c = coefficients_.data() + step * 6 * n;
+  for (std::size_t i = 0; i < n; ++i) {
+    const double* ci = c + i;  // Horner's scheme over the rows
+    y[i] =
+        ci[0] + theta * (ci[n] + theta * (ci[2 * n] + theta * (ci[3 * n] + theta * (ci[4 * n] + theta * ci[5 * n]))));
+  }
 }
 
 }  // namespace vatwright

@@ -34,7 +34,7 @@ class Track {
   [[nodiscard]] const std::vector<double>& nodes() const { return t_; }
   /// Evaluations of f.
   [[nodiscard]] long calls() const { return calls_; }
-  /// Steps made by the Rosenbrock method, of nodes().size() - 1.
+  /// Steps made by the stiff method, of nodes().size() - 1.
   [[nodiscard]] long stiff_steps() const { return stiff_steps_; }
   /// Why it ended before the wanted t, where an event did it: index of the event.
   [[nodiscard]] std::optional<int> ended_by() const { return ended_by_; }
@@ -43,14 +43,14 @@ class Track {
   friend class Marcher;
   int n_ = 0;
   std::vector<double> t_;
-  std::vector<double> coefficients_;  // per step: 5 rows of n, powers of (t - t_i)/(t_(i+1) - t_i)
+  std::vector<double> coefficients_;  // per step: 6 rows of n, powers of (t - t_i)/(t_(i+1) - t_i)
   long calls_ = 0, stiff_steps_ = 0;
   std::optional<int> ended_by_;
 };
 
 /// dy/dt = f(t, y) from t0 to t1 (t1 >= t0).
 ///   Dormand and Prince's 5(4) pair with its dense output while it serves; where its step is held by stability (step
-///   times fastest decay above 2 in two checks, by the eigenvalues of the Jacobian), the L-stable Rosenbrock method
+///   times fastest decay above 0.7 in two checks, by the eigenvalues of the Jacobian), the L-stable Rosenbrock method
 ///   RODAS of order 4(3), and back where the step is short against the fastest decay again. Each step keeps the error
 ///   estimate of every component below abs_tol scale_i + rel_tol |y_i|.
 /// f: called only inside [t0, t1], but with any y near the solution (so also with small negative amounts). NaN or
@@ -60,11 +60,12 @@ class Track {
 /// output
 ///   (looked for at four points of each step). A quantity that only grazes zero may not cross: ask for a small positive
 ///   level.
-/// jacobian: df/dy where it is known; left out, the Rosenbrock method takes central differences (2 n calls a step).
+/// jacobian: df/dy where it is known; left out, the stiff method takes differences (n calls a step).
+///   It steers the convergence inside a step, not the answer.
 /// NoAnswer::unsolved, saying where: f has no value at the start, the step falls below rounding (a singular point, the
 ///   blow-up of y' = y^2), more than most_calls.
 /// J. R. Dormand, P. J. Prince, J. Comput. Appl. Math. 6 (1980) 19; E. Hairer, G. Wanner, Solving Ordinary Differential
-/// Equations II, 2nd ed., Springer 1996, sec. IV.7 (both from memory).
+/// Equations II, 2nd ed., Springer 1996, sec. IV.5 and IV.8 (both from memory).
 Outcome<Track> march(Rhs f, std::span<const double> y0, double t0, double t1, const MarchOptions& options = {},
                      std::span<const Event> events = {}, const Jacobian* jacobian = nullptr);
 
