@@ -25,16 +25,16 @@ struct ProductLimits {
 struct Limit {
   enum class State { holds, broken, cannot_tell };
   std::string_view name;  ///< the wording of the list below
-  std::optional<double> value, bound;
-  std::string_view unit;  ///< "K", "Pa", "m3/s", "W", "W/m2", "1"; empty: null
-  std::optional<double>
-      margin;  ///< (bound - value)/|bound| (1 if 0); a lower bound counts value - bound; K: plain difference
+  std::optional<double> value = {}, bound = {};
+  std::string_view unit = {};  ///< "K", "Pa", "m3/s", "W", "W/m2", "1"; empty: null
+  std::optional<double> margin =
+      {};  ///< (bound - value)/|bound| (1 if 0); a lower bound counts value - bound; K: plain difference
   State state = State::holds;
-  std::string why;  ///< for people: what stands in the way, or what is missing; empty where it holds
+  std::string why = {};  ///< for people: what stands in the way, or what is missing; empty where it holds
   /// What the search for windows follows: the margin over its scale (temperatures too), running on smoothly to where a
   /// direction of heat is no longer needed; -1 where the limit is broken without a number; absent where it can not be
   /// told or has none. The limit holds where this is at least -holds_within.
-  std::optional<double> search_margin;
+  std::optional<double> search_margin = {};
 };
 
 /// Whether a vessel is looked at by itself, or as part of a hookup (what all vessels draw together is then the
