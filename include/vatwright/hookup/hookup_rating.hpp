@@ -1,0 +1,34 @@
+#pragma once
+#include <string>
+#include <vector>
+
+#include "vatwright/hookup/expression.hpp"
+#include "vatwright/rating/rating.hpp"
+
+namespace vatwright {
+
+/// All answers for one hookup.
+struct HookupRating {
+  Rating whole;                 ///< sums, maxima, the mixed outlet; limits only those of the whole
+  std::vector<Rating> vessels;  ///< in the order of the text, cumulative figures, feed_fraction and profile
+  std::string text;             ///< fully grouped with the shares of the reach
+  std::vector<double> shares;   ///< of the reach, full digits, in the order of the text
+  int vessel_count = 0;
+  int free_shares = 0;
+};
+
+struct HookupOptions {
+  bool windows = true;
+  bool profiles = false;
+  std::optional<int> yield_of;  ///< shares serve the yield of this species; left out: what the target asks
+};
+
+/// Rates a hookup at the duty's feed rate, and its window.
+/// Free shares are chosen for the objective at the END of the hookup (the target's first yield, else its conversion,
+/// else its first demand): the best among those that break no limit, else the best without limits; anew at every feed
+/// rate of the window. Best found: sampled over all shares of a joint and polished, not proved. Parallel branches get
+/// the same state, mix adiabatically and leave at the lowest branch pressure. The verdict is that of all vessels'
+/// limits, the limits of the whole, and the target at the mixed outlet.
+HookupRating rate_hookup(const Problem& problem, const Hookup& hookup, const HookupOptions& options = {});
+
+}  // namespace vatwright

@@ -1,0 +1,56 @@
+#pragma once
+#include <functional>
+#include <optional>
+#include <string>
+#include <vector>
+
+#include "vatwright/hookup/hookup_rating.hpp"
+
+namespace vatwright {
+
+enum class By { fit, conversion, ceiling, yield };
+
+struct RankOptions {
+  int most = 3;
+  int top = 10;
+  By by = By::fit;
+  bool exact = false;
+  int threads = 1;
+  std::optional<Hookup> today;
+  /// The most hookups that are rated; a size (number of vessels) that would go beyond is left out whole.
+  long long most_rated = 250'000;
+  /// Told now and then how many are rated, of how many; called by one thread at a time.
+  std::function<void(long long done, long long total)> progress;
+};
+struct Ranked {
+  HookupRating rating;
+  std::optional<double> value;       ///< of `by`
+  std::vector<std::string> same_as;  ///< what differs only in name, whole texts, sorted
+};
+struct Stair {
+  int vessel_count = 0;
+  std::optional<std::string> best;
+  std::optional<double> value;
+};
+struct Ranking {
+  std::vector<Ranked> top;
+  std::vector<Stair> stair;
+  int offered = 0, most = 0;
+  long long hookups = 0, rated = 0;  ///< all labelled ones, before merging; those rated
+  std::string complete = "partly";   ///< "proved" | "visited" | "partly"
+  std::string why_partly;            ///< in words, where partly
+  std::optional<double> within;
+  std::optional<Ranked> today;
+  std::optional<long long> today_place;  ///< from 1, among merged hookups
+  bool unsolved = false;
+};
+
+/// The species whose yield `By::yield` ranks by: that of the first yield the target asks. Absent: none is asked.
+std::optional<int> yield_ranked(const Duty& duty);
+
+/// Rates every series-parallel hookup of up to `most` of the offered vessels (indices into Site::vessels), those that
+/// differ only in name once, and orders them as ruled: see order.hpp. Any number of threads gives the same answer.
+/// Precondition: for By::yield, yield_ranked(duty) is there.
+Ranking rank(const Problem& problem, const std::vector<int>& offered, const RankOptions& options);
+
+}  // namespace vatwright
