@@ -10,10 +10,10 @@ namespace vatwright {
 
 struct MarchOptions {
   double rel_tol = 1e-10;
-  double abs_tol = 1e-12;         ///< times `scale` of each component where given
-  std::span<const double> scale;  ///< empty: 1 each
-  long most_calls = 2'000'000;    ///< of f, those for differences of a Jacobian included
-  double first_step = 0;          ///< 0: chosen
+  double abs_tol = 1e-12;              ///< times `scale` of each component where given
+  std::span<const double> scale = {};  ///< empty: 1 each
+  long most_calls = 2'000'000;         ///< of f, those for differences of a Jacobian included
+  double first_step = 0;               ///< 0: chosen
 };
 
 /// g(t, y), whose first zero crossing from + to - ends a march.
