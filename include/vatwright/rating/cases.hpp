@@ -12,8 +12,8 @@ namespace vatwright {
 /// (absent = base, also where the base is as bad), and the intersection of all windows.
 struct OverCases {
   Verdict verdict = Verdict::cannot_tell;
-  std::optional<std::string> worst_case;
-  std::vector<Interval> windows_all_cases;
+  std::optional<std::string> worst_case = {};
+  std::vector<Interval> windows_all_cases = {};
 };
 OverCases over_cases(const Rating& base, const std::vector<std::pair<std::string, const Rating*>>& cases);
 

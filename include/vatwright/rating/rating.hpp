@@ -5,6 +5,7 @@
 #include <utility>
 #include <vector>
 
+#include "vatwright/quantity/show.hpp"
 #include "vatwright/rating/duty.hpp"
 
 namespace vatwright {
@@ -30,12 +31,13 @@ struct Windows {
 
 /// What a target item asks, and what is reached.
 struct TargetItem {
-  std::string text;  ///< "conversion of A"
-  std::optional<double> value;
+  std::string text = {};  ///< "conversion of A"
+  std::optional<double> value = {};
   double bound = 0;
   bool at_least = true;
   double margin = 0;  ///< + = met; NaN-free: a value that does not exist misses by its whole bound
   bool met = false;
+  Shown shown = Shown::number;  ///< how value and bound are shown
 };
 
 /// Every answer about one vessel by itself, or (rating of a hookup) about the whole. What does not exist is absent.

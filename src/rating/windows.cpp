@@ -1,0 +1,194 @@
+#include <algorithm>
+#include <cmath>
+#include <limits>
+#include <utility>
+
+#include "vatwright/numeric/root.hpp"
+#include "vatwright/quantity/show.hpp"
+#include "vatwright/rating/rating.hpp"
+
+namespace vatwright {
+
+namespace {
+constexpr double per_decade = 8;            // samples: margins of real vessels turn over a factor of ten or so
+constexpr double end_width = 1e-10;         // an end is known to this, relative
+constexpr double one_rate = 1e-6;           // two ends this near count as one
+constexpr double turned_negative = -1e-11;  // a margin that has left zero, not rounding
+constexpr double look_between = 4;          // how much further than the neighbours differ a turning point may reach
+
+/// One trial, as the search sees it: x = ln(feed rate), m the smallest margin squeezed into (-1, 1), a failed trial -1.
+struct Sample {
+  double x = 0, feed_m3_s = 0, m = -1;
+  bool inside = false;
+};
+
+double squeeze(double margin) { return margin / (1 + std::abs(margin)); }
+
+double smallest_margin(const Trial& trial) {
+  double least = std::numeric_limits<double>::infinity();
+  for (const auto& [name, margin] : trial.margins) {
+    if (margin && !(*margin >= least)) least = *margin;
+  }
+  return least;
+}
+
+/// Margins below zero at this trial, else the smallest: the name of an end.
+std::optional<std::string> first_negative(const Trial& trial) {
+  for (const auto& [name, margin] : trial.margins) {
+    if (margin && *margin < turned_negative) return name;
+  }
+  return std::nullopt;
+}
+
+class Search {
+ public:
+  Search(const std::function<Trial(double)>& trial, double lo_m3_s, double hi_m3_s)
+      : trial_(trial), lo_m3_s_(lo_m3_s), hi_m3_s_(hi_m3_s) {}
+
+  Windows run() {
+    sample_grid();
+    look_between_samples();
+    collect();
+    return std::move(windows_);
+  }
+
+ private:
+  const std::function<Trial(double)>& trial_;
+  double lo_m3_s_, hi_m3_s_;
+  std::vector<Sample> samples_;  // rising
+  Windows windows_;
+
+  Trial try_at(double feed_m3_s) {
+    ++windows_.trials;
+    Trial trial = trial_(feed_m3_s);
+    if (trial.fails && !trial.fails_why.empty() && windows_.why.empty()) {
+      windows_.why = "at " + show(feed_m3_s, Shown::feed) + ": " + trial.fails_why;
+    }
+    windows_.unsolved = windows_.unsolved || trial.unsolved;
+    return trial;
+  }
+
+  Sample sample(double x, double feed_m3_s) {
+    const Trial trial = try_at(feed_m3_s);
+    if (trial.fails) return {x, feed_m3_s, -1, false};
+    const double least = smallest_margin(trial);
+    const double m = std::isinf(least) && least > 0 ? 1 : squeeze(least);
+    return {x, feed_m3_s, m, least >= -holds_within};
+  }
+  Sample sample(double x) { return sample(x, std::exp(x)); }
+
+  void sample_grid() {
+    const double a = std::log(lo_m3_s_), b = std::log(hi_m3_s_);
+    const int n = std::max(2, static_cast<int>(std::ceil((b - a) / std::log(10.0) * per_decade)));
+    samples_.reserve(static_cast<std::size_t>(n) + 8);
+    samples_.push_back(sample(a, lo_m3_s_));
+    for (int i = 1; i < n; ++i) samples_.push_back(sample(a + (b - a) * i / n));
+    samples_.push_back(sample(b, hi_m3_s_));
+  }
+
+  /// Where three samples lie on one side and the middle one is nearest to the other, the turning point may lie beyond
+  /// it.
+  void look_between_samples() {
+    std::vector<Sample> found;
+    for (std::size_t i = 1; i + 1 < samples_.size(); ++i) {
+      const Sample &l = samples_[i - 1], &c = samples_[i], &r = samples_[i + 1];
+      if (l.inside != c.inside || r.inside != c.inside) continue;
+      const double sign = c.inside ? -1 : 1;  // outside: the greatest is looked for; inside: the least
+      const double left = sign * (c.m - l.m), right = sign * (c.m - r.m);
+      if (left < 0 || right < 0 || (left == 0 && right == 0)) continue;
+      if (std::abs(c.m) > look_between * std::max(left, right)) continue;
+      if (auto other = beyond(l, c, r, sign)) found.push_back(*other);
+    }
+    samples_.insert(samples_.end(), found.begin(), found.end());
+    std::sort(samples_.begin(), samples_.end(), [](const Sample& a, const Sample& b) { return a.x < b.x; });
+  }
+
+  std::optional<Sample> beyond(const Sample& l, const Sample& c, const Sample& r, double sign) {
+    std::optional<Sample> best;
+    const auto height = [&](double x) {
+      const Sample s = sample(x);
+      if (s.inside != c.inside && (!best || sign * s.m > sign * best->m)) best = s;
+      return sign * s.m;
+    };
+    find_peak(height, l.x, r.x, 1e-7);
+    return best;
+  }
+
+  struct End {
+    Sample in, out;
+  };
+  /// The end between a sample inside and one outside: a crossing of zero, or a jump.
+  End refine(Sample in, Sample out) {
+    const double shift = in.m > 0 ? 0 : 2 * holds_within;  // a margin that rests on zero: the edge of what still holds
+    const auto f = [&](double x) {
+      if (x == in.x) return in.m + shift;
+      if (x == out.x) return out.m + shift;
+      const Sample s = sample(x);
+      if ((s.x - in.x) * (s.x - out.x) < 0) (s.inside && s.m + shift >= 0 ? in : out) = s;
+      return s.m + shift;
+    };
+    (void)find_root(f, std::min(in.x, out.x), std::max(in.x, out.x), {.rel_tol = 0, .abs_tol = end_width / 4});
+    while (std::abs(out.x - in.x) > end_width) {
+      const Sample s = sample(in.x + (out.x - in.x) / 2);
+      if (s.x == in.x || s.x == out.x) break;
+      (s.inside ? in : out) = s;
+    }
+    return {in, out};
+  }
+
+  std::optional<std::string> name_of(const End& end) {
+    const double further = end.out.feed_m3_s * (end.out.x > end.in.x ? 1 + one_rate : 1 - one_rate);
+    const Trial probe = try_at(further);
+    if (!probe.fails) {
+      if (auto name = first_negative(probe)) return name;
+    }
+    const Trial at = try_at(end.out.feed_m3_s);
+    if (!at.fails) {
+      if (auto name = first_negative(at)) return name;
+      return least_name(at);
+    }
+    if (!at.fails_by.empty()) return at.fails_by;
+    return std::nullopt;
+  }
+
+  static std::optional<std::string> least_name(const Trial& trial) {
+    const double least = smallest_margin(trial);
+    for (const auto& [name, margin] : trial.margins) {
+      if (margin && *margin == least) return name;
+    }
+    return std::nullopt;
+  }
+
+  void collect() {
+    std::optional<End> lower, upper;
+    for (std::size_t i = 0; i < samples_.size(); ++i) {
+      const bool before = i > 0 && samples_[i - 1].inside;
+      if (samples_[i].inside && !before) {
+        windows_.intervals.emplace_back();
+        lower.reset(), upper.reset();
+        if (i > 0) lower = refine(samples_[i], samples_[i - 1]);
+        if (lower) windows_.intervals.back().lo = lower->in.feed_m3_s;
+      }
+      if (!samples_[i].inside && before) {
+        upper = refine(samples_[i - 1], samples_[i]);
+        windows_.intervals.back().hi = upper->in.feed_m3_s;
+      }
+    }
+    if (windows_.intervals.empty()) return;
+    windows_.floor_m3_s = windows_.intervals.back().lo;
+    windows_.ceiling_m3_s = windows_.intervals.back().hi;
+    if (lower) windows_.ends.floor = name_of(*lower);
+    if (upper) windows_.ends.ceiling = name_of(*upper);
+  }
+};
+}  // namespace
+
+std::pair<double, double> search_range(double fluid_volume_m3) {
+  return {1e-6 * fluid_volume_m3 / 3600, 1e8 * fluid_volume_m3 / 3600};
+}
+
+Windows find_windows(const std::function<Trial(double feed_m3_s)>& trial, double lo_m3_s, double hi_m3_s) {
+  return Search(trial, lo_m3_s, hi_m3_s).run();
+}
+
+}  // namespace vatwright
