@@ -8,6 +8,7 @@ namespace vatwright {
 namespace {
 
 constexpr double nothing = 1e-10;
+constexpr int most_pivots = 10'000;  // Bland's rule ends by itself; rounding might not let it
 
 /// Rows of [A | artificial unit matrix | b] and a basic column for each.
 class Tableau {
@@ -24,12 +25,14 @@ class Tableau {
 
   /// Least cost over the columns before `columns`; false: no bound below.
   bool minimise(const std::vector<double>& cost, std::size_t columns) {
-    while (const auto in = entering(cost, columns)) {
+    for (int pivots = 0; pivots < most_pivots; ++pivots) {
+      const auto in = entering(cost, columns);
+      if (!in) return true;
       const auto out = leaving(*in);
       if (!out) return false;
       pivot(*out, *in);
     }
-    return true;
+    return false;
   }
 
   double value(const std::vector<double>& cost) const {

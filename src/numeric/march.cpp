@@ -187,14 +187,14 @@ class Marcher {
     stiff_.moved();
   }
 
-  /// Is the step held by stability, or does the other method serve better? Asked every 25 steps; two answers alike
-  /// count.
+  /// Is the step held by stability, or does the other method serve better? Asked every 25 steps; a clear answer twice
+  /// running, or a weak one eight times, goes over.
   void weigh_methods() {
     if (++since_weighed_ < 25) return;
     since_weighed_ = 0;
     const double h_lambda = step_.h * decay();
-    const bool other = is_stiff_ ? h_lambda < 0.1 : h_lambda > 0.7;
-    votes_ = other ? votes_ + 1 : 0;
+    const int vote = is_stiff_ ? (h_lambda < 0.1 ? 4 : 0) : h_lambda > 0.7 ? 4 : h_lambda > 0.3 ? 1 : 0;
+    votes_ = vote > 0 ? votes_ + vote : 0;
     if (votes_ < needed_) return;
     if (is_stiff_) needed_ *= 2;  // to and fro costs more each time
     is_stiff_ = !is_stiff_;
@@ -226,7 +226,7 @@ class Marcher {
   Track track_;
   double next_h_ = 0, grow_ = 5;
   bool is_stiff_ = false;
-  int since_weighed_ = 0, votes_ = 0, needed_ = 2;
+  int since_weighed_ = 0, votes_ = 0, needed_ = 8;
 };
 
 Outcome<Track> march(Rhs f, std::span<const double> y0, double t0, double t1, const MarchOptions& options,

@@ -5,7 +5,8 @@
 
 namespace vatwright {
 
-/// Solves A x = b for a small dense A (n x n, row by row; overwritten), b overwritten with x. false: singular or not finite.
+/// Solves A x = b for a small dense A (n x n, row by row; overwritten), b overwritten with x. false: singular or not
+/// finite.
 bool solve_linear(std::span<double> A, std::span<double> b);
 /// All eigenvalues of a real n x n matrix, row by row; empty where they can not be had (not finite).
 std::vector<std::complex<double>> eigenvalues(std::span<const double> A, int n);

@@ -7,7 +7,7 @@
 namespace vatwright {
 
 struct RootOptions {
-  double rel_tol = 1e-14;   ///< of the root
+  double rel_tol = 1e-14;  ///< of the root
   double abs_tol = 0;
   int most_calls = 200;
 };
@@ -16,8 +16,8 @@ struct RootOptions {
 /// toms748 of Alefeld, Potra and Shi (ACM TOMS 21 (1995) 327). NaN, no bracket or too many calls: NoAnswer::unsolved.
 Outcome<double> find_root(Function f, double a, double b, const RootOptions& options = {});
 
-/// All roots of f in [a, b] that the rising sample points `at` (first a, last b) show: sign changes between samples, and,
-/// where three samples of one sign have the middle one nearest to zero, the extremum refined by Brent's method and
+/// All roots of f in [a, b] that the rising sample points `at` (first a, last b) show: sign changes between samples,
+/// and, where three samples of one sign have the middle one nearest to zero, the extremum refined by Brent's method and
 /// looked past. Double roots within `touch` (absolute, in f) count once. Rising order.
 Outcome<std::vector<double>> find_all_roots(Function f, const std::vector<double>& at, double touch = 0,
                                             const RootOptions& options = {});
