@@ -1,4 +1,5 @@
-// The house keeps its arrows: a room includes only what tests/support/arrows.txt lists, and a library only from its room.
+// The house keeps its arrows: a room includes only what tests/support/arrows.txt lists, and a library only from its
+// room.
 #include <filesystem>
 #include <fstream>
 #include <map>
@@ -92,7 +93,7 @@ TEST_CASE("a library is seen from its rooms only", "[house]") {
 
 TEST_CASE("the list of arrows has no circle", "[house]") {
   const auto arrows = read_arrows();
-  std::map<std::string, int> height;   // a room stands higher than all it includes
+  std::map<std::string, int> height;  // a room stands higher than all it includes
   for (std::size_t pass = 0; pass <= arrows.rooms.size(); ++pass)
     for (const auto& [room, rights] : arrows.rooms)
       for (const auto& right : rights) height[room] = std::max(height[room], height[right] + 1);
@@ -108,8 +109,8 @@ TEST_CASE("the top level holds what was agreed and nothing else", "[house]") {
     const auto name = entry.path().filename().string();
     if (name[0] != '.' && name.rfind("build", 0) != 0) seen.insert(name);
   }
-  CHECK(seen == std::set<std::string>{"CMakeLists.txt", "README.md", "DEVELOPERS.md", "LICENSE", "src", "include", "vessels", "tests",
-                                      "docs"});
+  CHECK(seen == std::set<std::string>{"CMakeLists.txt", "README.md", "DEVELOPERS.md", "LICENSE", "src", "include",
+                                      "vessels", "tests", "docs"});
 }
 
 TEST_CASE("only the entrance writes to the terminal by itself", "[house]") {
