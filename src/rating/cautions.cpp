@@ -85,7 +85,7 @@ std::vector<Caution> cautions_of(const Problem& problem) {
   std::vector<Caution> cautions;
   cautions.push_back(
       {"screening",
-       "This is a screening by calculation, not a design and not a safety review. Site rules, local codes "
+       "This is a screening by calculation, not a design and not a hazard review. Site rules, local codes "
        "and licensed engineers decide what may be done."});
   if (pressure_above_atmosphere(problem.duty) || heat_is_in_play(problem)) {
     cautions.push_back(
