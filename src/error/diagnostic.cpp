@@ -5,6 +5,8 @@
 #include <tuple>
 #include <utility>
 
+#include "glyph.hpp"
+
 namespace vatwright {
 namespace {
 
@@ -26,11 +28,11 @@ int Diagnostics::add_source(std::string name, std::string text) {
 }
 
 void Diagnostics::error(Place place, std::string subject, std::string key, std::string found, std::string expected) {
-  all_.push_back({Severity::error, place, std::move(subject), std::move(key), std::move(found), std::move(expected)});
+  all_.push_back({Severity::error, place, harmless(subject), harmless(key), harmless(found), harmless(expected)});
 }
 
 void Diagnostics::warning(Place place, std::string subject, std::string key, std::string found, std::string expected) {
-  all_.push_back({Severity::warning, place, std::move(subject), std::move(key), std::move(found), std::move(expected)});
+  all_.push_back({Severity::warning, place, harmless(subject), harmless(key), harmless(found), harmless(expected)});
 }
 
 bool Diagnostics::has_errors() const {

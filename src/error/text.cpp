@@ -13,8 +13,8 @@ constexpr int most_excerpts = 200;  // a file of thousands of faults is told in 
 std::string place_text(const Place& place, const std::vector<Source>& sources) {
   if (place.source < 0 || static_cast<std::size_t>(place.source) >= sources.size()) return {};
   std::string text = harmless(sources[static_cast<std::size_t>(place.source)].name);
-  if (place.line > 0) text += ":" + std::to_string(place.line);
-  if (place.line > 0 && place.column > 0) text += ":" + std::to_string(place.column);
+  if (place.line > 0) text.append(1, ':').append(std::to_string(place.line));
+  if (place.line > 0 && place.column > 0) text.append(1, ':').append(std::to_string(place.column));
   return text + ": ";
 }
 
@@ -26,13 +26,13 @@ std::string painted(const std::string& text, Severity severity, bool colour) {
 std::string headline(const Diagnostic& d, const std::vector<Source>& sources, bool colour) {
   std::string text = place_text(d.place, sources);
   if (d.severity == Severity::warning) text += painted("warning:", d.severity, colour) + " ";
-  text += harmless(d.subject);
+  text += d.subject;
   if (!d.subject.empty() && !d.key.empty()) text += ", ";
-  text += harmless(d.key);
+  text += d.key;
   if (!d.subject.empty() || !d.key.empty()) text += ": ";
-  text += harmless(d.found);
+  text += d.found;
   if (!d.found.empty() && !d.expected.empty()) text += "; ";
-  return text + harmless(d.expected) + "\n";
+  return text + d.expected + "\n";
 }
 
 }  // namespace

@@ -107,7 +107,7 @@ class Reader {
   bool fail_spaced(std::size_t end, std::size_t space, const std::string& sign) {
     const std::string_view word = rest().substr(0, rest().find_first_of(" /.*()^"));
     if (const auto question = question_about(word); !question.empty())
-      return fail(end, end + space, quoted(word) + " after the unit", {}, std::string(question));
+      return fail(end, end + space, quoted(word) + " after the unit", {}, question);
     return fail(end, end + space, "a space inside the unit", is_digit(next()) ? "" : sign,
                 is_digit(next()) ? "expected the power next to its unit, such as \"6.3 m3\"" : "");
   }
@@ -187,7 +187,7 @@ class Reader {
     const std::string_view word = text_.substr(begin, end - begin);
     const std::string found = "no unit " + quoted(word);
     if (const auto question = question_about(word); !question.empty())
-      return fail(begin, end, quoted(word) + " says too little", {}, std::string(question));
+      return fail(begin, end, quoted(word) + " says too little", {}, question);
     return fail(begin, end, found, near_unit(word, below_stroke ? '/' : '.'));
   }
 

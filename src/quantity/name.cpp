@@ -75,7 +75,8 @@ std::string written(const std::vector<Power>& powers) {
     else if (!above.empty())
       side += ".";
     side += unit;
-    if (size != 1) side += (size == std::floor(size) ? "" : "^") + shortest(size);
+    if (size != std::floor(size)) side += '^';
+    if (size != 1) side += shortest(size);
   }
   return (above.empty() ? "1" : above) + below;
 }

@@ -69,7 +69,7 @@ std::string cleaned(std::string_view text, std::size_t decimal) {
   return plain;
 }
 
-/// "write "6.3 m3"", with the sign and what follows the figures put back.
+/// "expected "6.3 m3"", with the sign and what follows the figures put back.
 std::string write(std::string_view text, std::size_t begin, std::size_t end, const std::string& figures) {
   return quoted(std::string(text.substr(0, begin)) + figures + std::string(text.substr(end)));
 }
@@ -81,21 +81,20 @@ std::variant<Number, QuantityFault> refuse_marks(std::string_view text, std::siz
   constexpr std::size_t none = std::string_view::npos;
   if (marks.commas == 1 && marks.points == 0 && marks.others == 0) {
     if (marks.digits_after == 3 && figure.front() != '0')
-      return fault(
-          text, "a comma in the number",
-          "expected a decimal point or nothing: write " + write_with(marks.last_comma) + " or " + write_with(none));
-    return fault(text, "a decimal comma", "write " + write_with(marks.last_comma));
+      return fault(text, "a comma in the number",
+                   "expected " + write_with(marks.last_comma) + " or " + write_with(none));
+    return fault(text, "a decimal comma", "expected " + write_with(marks.last_comma));
   }
   if (marks.commas > 0) {
     std::size_t decimal = none;
     if (marks.points == 1 && (marks.commas > 1 || marks.last_point > marks.last_comma)) decimal = marks.last_point;
     if (marks.commas == 1 && marks.last_comma > marks.last_point) decimal = marks.last_comma;
-    return fault(text, "commas in the number", "write " + write_with(decimal));
+    return fault(text, "commas in the number", "expected " + write_with(decimal));
   }
   if (marks.others > 0) {
     const bool spaced = leading_space(figure.substr(figure.find_first_not_of("0123456789."))) > 0;
     return fault(text, spaced ? "two numbers before the unit" : "a mark between digits",
-                 "write " + write_with(marks.points == 1 ? marks.last_point : none));
+                 "expected " + write_with(marks.points == 1 ? marks.last_point : none));
   }
   return fault(text, "two points in one number", "expected one decimal point");
 }
@@ -123,7 +122,8 @@ std::variant<Number, QuantityFault> refuse_missing(std::string_view text) {
   if (text.empty()) return fault(text, "an empty text", "expected a number with its unit");
   for (const std::string_view minus : {"\xe2\x88\x92", "\xe2\x80\x93", "\xe2\x80\x94"})
     if (text.starts_with(minus) && text.size() > minus.size() && is_digit(text[minus.size()]))
-      return fault(text, "a dash of a word processor", "write " + quoted("-" + std::string(text.substr(minus.size()))));
+      return fault(text, "a dash of a word processor",
+                   "expected " + quoted(std::string(1, '-').append(text.substr(minus.size()))));
   for (const char sign : {'<', '>', '~', '='})
     if (text.front() == sign) return fault(text, "a sign before the number", "expected one number with its unit");
   return fault(text, "no number at the front", "expected a number with its unit");

@@ -39,7 +39,9 @@ QuantityFault unit_fault(std::string_view text, const Number& number, const Unit
   if (unit.empty() && wrong.instead.empty())
     return fault(text, wrong.found, "expected a unit such as \"m3\", \"degC\", \"bar\", \"kJ/mol\", \"W/m2/K\"");
   if (unit.empty()) return fault(text, wrong.found, "expected units joined by . and /, such as \"W/m2/K\"");
-  return fault(text, wrong.found, "write " + quoted(std::string(number.digits) + " " + unit));
+  const bool capitals = unit.size() == number.rest.size() && small_letters(unit) == small_letters(number.rest);
+  return fault(text, wrong.found,
+               "expected " + quoted(std::string(number.digits) + " " + unit) + (capitals ? " (capitals count)" : ""));
 }
 
 Read below_zero(std::string_view text, long double below, const Unit& unit) {

@@ -221,13 +221,6 @@ constexpr Pair questions[] = {
     {"sch", "schedules are not looked up: which inside diameter? write it, such as 52.5 mm"},
 };
 
-std::string small_letters(std::string_view word) {
-  std::string small(word);
-  for (char& c : small)
-    if (c >= 'A' && c <= 'Z') c = static_cast<char>(c - 'A' + 'a');
-  return small;
-}
-
 const Unit* by_capitals(const std::string& small) {
   // "mpa" and "MPA" are the megapascal: mPa stands inside compounds only
   const auto same = [&](const Unit& u) { return u.kind != Kind::part && small_letters(u.name) == small; };
@@ -270,6 +263,13 @@ bool is_one_edit_off(std::string_view a, std::string_view b) {
 
 }  // namespace
 
+std::string small_letters(std::string_view word) {
+  std::string small(word);
+  for (char& c : small)
+    if (c >= 'A' && c <= 'Z') c = static_cast<char>(c - 'A' + 'a');
+  return small;
+}
+
 const Unit* find_unit(std::string_view word) {
   const auto found = std::find_if(units.begin(), units.end(), [&](const Unit& u) { return u.name == word; });
   return found == units.end() ? nullptr : &*found;
@@ -288,7 +288,7 @@ std::string near_unit(std::string_view word, char separator) {
   return {};
 }
 
-std::string_view question_about(std::string_view word) {
+std::string question_about(std::string_view word) {
   if (word.size() > 10) return {};
   std::string small = small_letters(word);
   const auto asked = [&] {
@@ -297,7 +297,7 @@ std::string_view question_about(std::string_view word) {
   auto found = asked();
   if (found == std::end(questions))
     small.resize(std::min(small.find_last_not_of("0123456789") + 1, small.size())), found = asked();
-  return found == std::end(questions) ? std::string_view{} : found->right;
+  return found == std::end(questions) ? "" : "expected an answer first: " + std::string(found->right);
 }
 
 }  // namespace vatwright

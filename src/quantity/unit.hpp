@@ -30,7 +30,10 @@ const Unit* find_unit(std::string_view word);
 /// nothing is near. `separator` joins units that were run together ("m2K" -> "m2/K" below a stroke).
 std::string near_unit(std::string_view word, char separator);
 
-/// A unit that says too little: the question to be answered before it can be used; empty for all others.
-std::string_view question_about(std::string_view word);
+std::string small_letters(std::string_view word);
+
+/// A unit that says too little: the question to be answered before it can be used, worded as what is expected; empty
+/// for all others.
+std::string question_about(std::string_view word);
 
 }  // namespace vatwright

@@ -31,7 +31,8 @@ struct Source {
   std::string text;
 };
 
-/// Collects every fault of a run, so that all are told at once. Throws nothing.
+/// Collects every fault of a run, so that all are told at once. Throws nothing. The four texts of a fault may hold any
+/// bytes: they are kept as valid UTF-8 on one line, control characters and other bytes written out (\x1b, \xff).
 class Diagnostics {
  public:
   /// Registers a file; the answer is the index for Place::source.
@@ -50,12 +51,14 @@ class Diagnostics {
   std::vector<Diagnostic> all_;
 };
 
-/// The text shown to a person: each fault on a line of its own, then the line of the file with a mark under the place.
+/// The text shown to a person: each fault on a line of its own, then the line of the file with a mark under the place
+/// (cut around it to 76 columns; only for the first 200 faults). Valid UTF-8 whatever the file holds.
 /// Warnings say so ("warning: " after the place). colour: ANSI colour around the mark and the severity.
 std::string to_text(const Diagnostics& diagnostics, bool colour);
 
-/// The word of `known` nearest to `word` by edits, or empty where none is near (more than a third of the letters wrong).
-/// Ignoring case and the characters - _ counts as nearest of all.
+/// The word of `known` nearest to `word` by edits, or empty where none is near (more than a third of the letters wrong;
+/// one wrong letter is near from two letters on). Where edits lead nowhere, the one word that has it as a part
+/// ("tank", "stirred-tank"). Ignoring case and the characters - _ counts as nearest of all.
 std::string nearest(std::string_view word, const std::vector<std::string>& known);
 
 }  // namespace vatwright

@@ -20,7 +20,7 @@ struct Quantity {
 };
 
 /// What is wrong with a text, as the two halves of a Diagnostic, each a whole phrase: `found "6.3 m2", an area` and
-/// `expected a volume, such as "6.3 m3"` or `write "6.3 m3"`. Valid UTF-8 whatever the text; the text is cut to 60
+/// `expected a volume, such as "6.3 m3"`. Valid UTF-8 whatever the text; the text is cut to 60
 /// characters.
 struct QuantityFault {
   std::string found, expected;
