@@ -96,7 +96,10 @@ struct Network::Walk {
       if (passes) passes->push_back({q, 0, std::nullopt, nothing_arrives(before)});
       return before;
     }
-    auto outcome = leaf.run_for(*arrives, m.problem.duty).at(q, detail);
+    Stream entering = *arrives;
+    if (first)
+      entering.pressure_Pa = leaf.operation.pressure_Pa.value_or(entering.pressure_Pa);  // fed at its own pressure
+    auto outcome = leaf.run_for(entering, m.problem.duty).at(q, detail);
     auto out = outlet_of(outcome);
     if (auto* stream = std::get_if<Stream>(&out)) stream->feed_m3_s = q;
     if (passes) {

@@ -17,10 +17,13 @@ struct HookupRating {
   int free_shares = 0;
 };
 
+/// What free shares serve: what the target asks, or the conversion whatever it asks.
+enum class Serve { target, conversion };
+
 struct HookupOptions {
   bool windows = true;
   bool profiles = false;
-  std::optional<int> yield_of;  ///< shares serve the yield of this species; left out: what the target asks
+  Serve serve = Serve::target;
 };
 
 /// Rates a hookup at the duty's feed rate, and its window.

@@ -1,0 +1,130 @@
+#include "ceiling.hpp"
+
+#include <algorithm>
+#include <cmath>
+#include <utility>
+
+#include "vatwright/numeric/root.hpp"
+
+namespace vatwright {
+namespace {
+
+constexpr double step_down = 1.3335214321633240;  // 10^(1/8)
+constexpr double first_factor = 1.3;
+
+class CeilingSearch {
+ public:
+  CeilingSearch(Chooser& chooser, double from) : chooser_(chooser), range_(search_range(chooser.network())) {
+    from_ = std::clamp(from, range_.first, range_.second);
+    target_ = target();
+  }
+
+  bool falls() const {
+    const Duty& duty = chooser_.problem().duty;
+    const Kinetics& k = duty.chemistry.kinetics;
+    if (k.reactions() != 1 || duty.thermal == Thermal::jacketed) return false;
+    const bool reversible = k.reaction(0).equilibrium || k.reaction(0).reverse;
+    if (reversible && !duty.operation_of.empty()) return false;  // a vessel at its own temperature may run backwards
+    return is_all_of_target(chooser_.objective(), duty) && chooser_.objective().of == Objective::Of::conversion;
+  }
+
+  Ceiling by_turns(std::vector<double> shares) {
+    double q = from_;
+    for (int turn = 0; turn < 12; ++turn) {
+      const auto end = crossing(q, shares);
+      if (!end) return whole_window();
+      const bool still = turn > 0 && std::abs(*end - q) <= 1e-11 * q;
+      q = *end;
+      if (still || q >= range_.second) break;
+      if (chooser_.space().dimensions() == 0) break;
+      const auto best = chooser_.choose_free(q);
+      if (!best) return whole_window();
+      if (best->value < target_ - 1e-9) break;  // not better than the shares that just meet it
+      shares = best->shares;
+    }
+    if (q <= range_.first && !inside(range_.first)) return {};
+    return below(q);
+  }
+
+  Ceiling whole_window() { return told(windows_between(range_.first, range_.second)); }
+
+ private:
+  double target() const { return chooser_.problem().duty.target.conversion.value_or(0); }
+
+  Trial trial(double q) {
+    return trial_of(chooser_.problem(), chooser_.network(), chooser_.choose(q, Purpose::window));
+  }
+  bool inside(double q) {
+    const Trial t = trial(q);
+    unsolved_ = unsolved_ || t.unsolved;
+    return !t.fails && std::all_of(t.margins.begin(), t.margins.end(),
+                                   [](const auto& m) { return !m.second || *m.second >= -holds_within; });
+  }
+  Windows windows_between(double lo, double hi) {
+    return find_windows([&](double q) { return trial(q); }, lo, hi);
+  }
+  Ceiling told(const Windows& w) {
+    Ceiling c;
+    c.unsolved = unsolved_ || w.unsolved;
+    c.feed_m3_s = w.ceiling_m3_s;
+    c.open = !w.intervals.empty() && !w.ceiling_m3_s;
+    return c;
+  }
+
+  // The feed rate at which these shares just meet the target; an end of the search where they do at all or none.
+  std::optional<double> crossing(double q, const std::vector<double>& shares) {
+    bool failed = false;
+    const auto over = [&](double x) {
+      const auto v = chooser_.value_at(std::exp(x), shares);
+      failed = failed || !v;
+      return v.value_or(0) - target_ + 0.5 * holds_within * target_;
+    };
+    double a = std::log(q), fa = over(a), step = std::log(first_factor);
+    const double end = std::log(fa >= 0 ? range_.second : range_.first);
+    for (double b = a; !failed; step *= 2) {
+      b = fa >= 0 ? std::min(end, a + step) : std::max(end, a - step);
+      const double fb = over(b);
+      if (failed) break;
+      if ((fa >= 0) != (fb >= 0)) return refined(over, std::min(a, b), std::max(a, b));
+      if (b == end) return std::exp(end);
+      a = b, fa = fb;
+    }
+    return std::nullopt;
+  }
+  template <class Over>
+  std::optional<double> refined(const Over& over, double a, double b) {
+    const auto root = find_root(over, a, b, {.rel_tol = 0, .abs_tol = 1e-12});
+    return answer(root) ? std::optional(std::exp(*answer(root))) : std::nullopt;
+  }
+
+  // The uppermost rate inside, at or below q: at q itself where no limit is in the way.
+  Ceiling below(double q) {
+    if (inside(q)) return q >= range_.second ? Ceiling{true, std::nullopt, unsolved_} : Ceiling{false, q, unsolved_};
+    double above = q;
+    while (above > range_.first) {
+      double next = std::max(range_.first, above / step_down);
+      if (above > from_ && next < from_) next = from_;  // the duty's own rate is looked at
+      if (inside(next)) {
+        Ceiling found = told(windows_between(next, above));
+        if (std::exchange(found.open, false)) found.feed_m3_s = above;  // it ends just there
+        return found;
+      }
+      above = next;
+    }
+    return {false, std::nullopt, unsolved_};
+  }
+
+  Chooser& chooser_;
+  std::pair<double, double> range_;
+  double from_ = 0, target_ = 0;
+  bool unsolved_ = false;
+};
+
+}  // namespace
+
+Ceiling find_ceiling(Chooser& chooser, double from_m3_s, std::vector<double> start) {
+  CeilingSearch search(chooser, from_m3_s);
+  return search.falls() ? search.by_turns(std::move(start)) : search.whole_window();
+}
+
+}  // namespace vatwright

@@ -1,0 +1,23 @@
+#pragma once
+#include <optional>
+#include <string>
+
+#include "chooser.hpp"
+
+namespace vatwright {
+
+/// The upper end of the uppermost window, found without the whole window.
+struct Ceiling {
+  bool open = false;                ///< the window runs to the end of the search: higher than any figure
+  std::optional<double> feed_m3_s;  ///< absent: no window, or open
+  bool unsolved = false;
+};
+
+/// The ceiling of a hookup, as find_windows over the whole search would give it (1e-6 relative).
+///   from_m3_s: where to begin, a feed rate inside the search range; start: shares good there.
+/// One reaction and a target of conversion: conversion falls as the feed rises, so the rate at which the best shares
+/// just meet the target is found by turns (root at fixed shares, shares at that rate); where a limit is broken there,
+/// feed rates are tried downwards, 8 to a decade, and the end is refined. Else the whole window is searched.
+Ceiling find_ceiling(Chooser& chooser, double from_m3_s, std::vector<double> start);
+
+}  // namespace vatwright

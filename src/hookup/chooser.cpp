@@ -1,0 +1,74 @@
+#include "chooser.hpp"
+
+#include <algorithm>
+
+#include "vatwright/hookup/tune.hpp"
+
+namespace vatwright {
+namespace {
+
+bool all_met(const std::vector<TargetItem>& items) {
+  return std::all_of(items.begin(), items.end(), [](const TargetItem& i) { return i.met; });
+}
+
+}  // namespace
+
+Chooser::Chooser(const Problem& problem, const Hookup& hookup, const Objective& objective)
+    : problem_(problem), network_(problem, hookup), space_(hookup, network_.volumes()), objective_(objective) {}
+
+std::optional<double> Chooser::value_at(double feed_m3_s, const std::vector<double>& shares) {
+  const auto outlet = network_.outlet(feed_m3_s, shares);
+  const auto* stream = answer(outlet);
+  return stream ? value_of(objective_, problem_.duty, *stream) : std::nullopt;
+}
+
+// The coordinates of the best shares, no limit asked.
+std::optional<std::vector<double>> Chooser::tune(double feed_m3_s, double* value) {
+  const auto f = [&](std::span<const double> x) { return value_at(feed_m3_s, space_.shares(x)); };
+  const auto tuned = tune_free(f, space_.in_proportion());
+  if (!tuned) return std::nullopt;
+  *value = tuned->score.objective;
+  return tuned->x;
+}
+
+std::optional<Chooser::Free> Chooser::choose_free(double feed_m3_s) {
+  if (space_.dimensions() == 0) {
+    const auto shares = space_.shares({});
+    const auto value = value_at(feed_m3_s, shares);
+    return value ? std::optional(Free{shares, *value}) : std::nullopt;
+  }
+  double value = 0;
+  const auto x = tune(feed_m3_s, &value);
+  return x ? std::optional(Free{space_.shares(*x), value}) : std::nullopt;
+}
+
+JudgedHookup Chooser::choose(double feed_m3_s, Purpose purpose, Detail detail) {
+  const auto judged_at = [&](std::span<const double> x) {
+    return judge_hookup(problem_, network_, feed_m3_s, space_.shares(x), detail);
+  };
+  if (space_.dimensions() == 0) return judged_at({});
+  double value = 0;
+  const auto free = tune(feed_m3_s, &value);
+  JudgedHookup best = judged_at(free ? *free : space_.in_proportion());
+  if (free && !breaks_limit(best)) return best;
+  if (breaks_limit_of_files(best)) return best;  // no share helps
+  const bool missed_anyhow = free && is_all_of_target(objective_, problem_.duty) && !all_met(best.targets);
+  if (purpose == Purpose::window && missed_anyhow) return best;
+
+  const auto score = [&](std::span<const double> x) {
+    const JudgedHookup here = judge_hookup(problem_, network_, feed_m3_s, space_.shares(x), Detail::full);
+    const auto margin = least_margin(here);
+    const auto* outlet = answer(here.passes.outlet);
+    const auto objective = outlet ? value_of(objective_, problem_.duty, *outlet) : std::nullopt;
+    if (!margin || !objective) return Score{-1, 0, false};
+    return Score{*margin + holds_within / 2, *objective, true};
+  };
+  std::vector<std::vector<double>> seeds;
+  if (free) seeds.push_back(*free);
+  const auto within = tune_within(score, space_.in_proportion(), seeds);
+  if (!within) return best;
+  if (within->score.margin < 0 && purpose == Purpose::reach) return best;
+  return judged_at(within->x);
+}
+
+}  // namespace vatwright
