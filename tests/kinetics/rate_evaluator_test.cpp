@@ -195,6 +195,53 @@ TEST_CASE("never NaN, never infinity: random laws at random compositions, zeros 
   }
 }
 
+namespace {
+
+/// The same law read straight from the reaction, as it stands in a book: no caching, no gathering of constants.
+double by_the_book(const Reaction& one, const std::array<double, 4>& C, double T) {
+  const auto law_rate = [&](const RateLaw& law) {
+    const double unit = law.basis == Basis::pressure ? gas_constant * T : 1;
+    const auto amount = [&](const SpeciesFigure& f) { return unit * C[static_cast<std::size_t>(f.species)]; };
+    double r = 0;
+    if (const auto* power = std::get_if<PowerLaw>(&law.law)) {
+      r = power->k.at(T);
+      for (const SpeciesFigure& n : power->orders) r *= std::pow(amount(n), n.value);
+    } else {
+      const auto& form = std::get<Saturating>(law.law);
+      r = form.most.at(T);
+      for (const SpeciesFigure& half : form.half) r *= amount(half) / (half.value + amount(half));
+    }
+    double covered = 1;
+    for (const SpeciesFigure& K : law.adsorption) covered += K.value * amount(K);
+    return r / law.of_coefficient / std::pow(covered, law.adsorption_power);
+  };
+  const RateLaw& forward = std::get<RateLaw>(one.forward);
+  if (one.reverse) return law_rate(forward) - law_rate(*one.reverse);
+  if (!one.equilibrium) return law_rate(forward);
+  double Q = 1;
+  const double unit = forward.basis == Basis::pressure ? gas_constant * T : 1;
+  for (const SpeciesFigure& nu : one.nu) Q *= std::pow(unit * C[static_cast<std::size_t>(nu.species)], nu.value);
+  return law_rate(forward) * (1 - Q / one.equilibrium->at(T));
+}
+
+}  // namespace
+
+TEST_CASE("random laws agree with the formula read straight from the reaction", "[rates]") {
+  std::mt19937 random(12);
+  std::uniform_real_distribution<double> amount(0.1, 5), temperature(250, 600);
+  for (int trial = 0; trial < 500; ++trial) {
+    const Reaction one = random_reaction(random, 4);
+    const std::array C{amount(random), amount(random), amount(random), amount(random)};
+    const double T = temperature(random), expected = by_the_book(one, C, T);
+    const auto forward = rates(Kinetics({one}, 4, 0, 1), {C.begin(), C.end()}, T);
+    Reaction no_reverse = one;
+    no_reverse.reverse.reset();
+    no_reverse.equilibrium.reset();
+    const double size = std::abs(by_the_book(no_reverse, C, T));
+    CHECK(forward[0] == Approx(expected).epsilon(1e-11).margin(1e-11 * size));
+  }
+}
+
 TEST_CASE("an evaluation allocates nothing, at a new temperature neither", "[rates]") {
   Reaction one = elementary({{0, -1}, {1, -1}, {2, 1}}, 1);
   one.equilibrium = Equilibrium{4, 300.0, HeatOfReaction{-4e4, 298.15, {1, 2}}};

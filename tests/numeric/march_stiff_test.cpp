@@ -117,3 +117,20 @@ TEST_CASE("van der Pol's swing goes to and fro between the methods", "[march][st
   CHECK(at(*answer(track), 2)[1] == Approx(-0.8928097010248125).epsilon(1e-8));
   CHECK(answer(track)->calls() < 60'000);
 }
+
+TEST_CASE("a reactant that runs out while something else follows it fast", "[march][stiff]") {
+  // dC/dt = -C^n, n below 1: C = (1 - (1 - n) t)^(1/(1 - n)), gone at 1/(1 - n); y' = -L (y - C).
+  const double n = GENERATE(0.0, 0.3, 0.5, 0.9), L = GENERATE(1.0, 1e3, 1e6);
+  const auto f = [=](double, In y, Out d) {
+    d[0] = y[0] > 0 ? -std::pow(y[0], n) : 0;
+    d[1] = -L * (y[1] - y[0]);
+  };
+  const std::vector<double> y0{1, 1};
+  const auto track = march(f, y0, 0, 12);
+  REQUIRE(answer(track) != nullptr);
+  for (double t = 0; t < 12; t += 0.0625) {
+    const double C = std::pow(std::max(0.0, 1 - (1 - n) * t), 1 / (1 - n));
+    CHECK(at(*answer(track), t)[0] == Approx(C).margin(5e-10));
+  }
+  CHECK(answer(track)->calls() < 5000);
+}

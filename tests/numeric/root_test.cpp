@@ -92,6 +92,24 @@ TEST_CASE("a root on a sample is found once", "[root]") {
   CHECK(answer(roots)->front() == 0.5);
 }
 
+TEST_CASE("steady states of a stirred tank with a rate maximum", "[root]") {
+  // r = k C/(1 + K C)^2, K C0 = 20: (20 - u)(1 + u)^2 = k tau u with u = K C; folds at k tau 75.7621 and 122.2379
+  // (criterion of Matsuura and Kato, Chem. Eng. Sci. 22 (1967) 171, from memory; states by the cubic, recomputed).
+  const auto [k_tau, states] = GENERATE(table<double, std::vector<double>>({
+      {60, {16.822333}},
+      {76, {1.0, 1.271584, 15.728416}},
+      {90, {0.467194, 2.931933, 14.600873}},
+      {110, {0.304852, 5.287522, 12.407626}},
+      {125, {0.244945}},
+  }));
+  const auto balance = [k_tau = k_tau](double u) { return (20 - u) * (1 + u) * (1 + u) - k_tau * u; };
+  const int cells = GENERATE(16, 64);
+  const auto roots = find_all_roots(balance, samples(0, 20, cells));
+  REQUIRE(answer(roots) != nullptr);
+  REQUIRE(answer(roots)->size() == states.size());
+  for (std::size_t i = 0; i < states.size(); ++i) CHECK((*answer(roots))[i] == Approx(states[i]).margin(1e-6));
+}
+
 TEST_CASE("a sample without a value is no silent gap", "[root]") {
   const auto roots = find_all_roots([](double x) { return x == 0.25 ? std::nan("") : x - 0.5; }, samples(0, 1, 4));
   CHECK(std::get<NoAnswer>(roots).why == "the function has no value at 0.25");
