@@ -1,0 +1,208 @@
+#include <algorithm>
+
+#include "page_parts.hpp"
+#include "vatwright/report/page.hpp"
+
+namespace vatwright {
+namespace {
+
+std::string heat_words(std::optional<double> cooling_W, const Look& look) {
+  if (!cooling_W) return "not asked, or not known";
+  if (*cooling_W < 0) return show(-*cooling_W, Shown::heat, look.units) + " of heating";
+  return show(*cooling_W, Shown::heat, look.units) + " of cooling";
+}
+
+std::string yields_words(const Rating& rating, const Look& look) {
+  std::string text;
+  for (const auto& [species, yield] : rating.yields)
+    text += (text.empty() ? "" : ", ") + species + " " + figure_with_unit(yield, Shown::percent, look);
+  return text;
+}
+
+std::string window_end(const char* name, std::optional<double> rate, const std::optional<std::string>& end,
+                       const Look& look) {
+  if (!rate) return std::string("no ") + name + " in the range searched";
+  return std::string(name) + " " + show(*rate, Shown::feed, look.units) + (end ? ", ended by " + *end : "");
+}
+
+std::vector<std::string> window_words(const Windows& windows, const Look& look) {
+  std::vector<std::string> texts = {words_of(windows.intervals, look)};
+  if (!windows.intervals.empty()) {
+    texts.push_back(window_end("ceiling", windows.ceiling_m3_s, windows.ends.ceiling, look));
+    texts.push_back(window_end("floor", windows.floor_m3_s, windows.ends.floor, look));
+  }
+  if (!windows.why.empty()) texts.push_back(windows.why);
+  return texts;
+}
+
+void add_whole(Page& page, const ExamineAnswer& answer, const Look& look) {
+  const Rating& whole = answer.rating.whole;
+  const OverCases over = over_cases_of(answer);
+  std::vector<Page::Item> items;
+  items.push_back({"hookup", {answer.rating.text}});
+  items.push_back(
+      {"verdict", {words_of(over.verdict) + (over.worst_case ? ", because of the case " + *over.worst_case : "")}});
+  items.push_back(
+      {"conversion", {answer.head.conversion_of + " " + figure_with_unit(whole.conversion, Shown::percent, look)}});
+  if (!whole.yields.empty()) items.push_back({"yields", {yields_words(whole, look)}});
+  if (whole.outlet)
+    items.push_back({"outlet",
+                     {show(whole.outlet->temperature_K, Shown::temperature, look.units) + ", " +
+                      show(whole.outlet->pressure_Pa, Shown::pressure, look.units)}});
+  if (whole.hottest_K) items.push_back({"hottest", {show(*whole.hottest_K, Shown::temperature, look.units)}});
+  if (whole.start_peak_K)
+    items.push_back({"hottest at start-up", {show(*whole.start_peak_K, Shown::temperature, look.units)}});
+  items.push_back({"heat", {heat_words(whole.cooling_W, look)}});
+  if (whole.preheat_W && *whole.preheat_W != 0)
+    items.push_back({"preheating", {show(*whole.preheat_W, Shown::heat, look.units)}});
+  if (whole.windows) items.push_back({"window", window_words(*whole.windows, look)});
+  if (!answer.cases.empty()) items.push_back({"over all cases", {words_of(over.windows_all_cases, look)}});
+  page.items(items);
+  if (!whole.stands_in_the_way.empty()) {
+    page.heading("What stands in the way");
+    for (const std::string& text : whole.stands_in_the_way) page.paragraph(text, 2, 2);
+  }
+}
+
+void add_vessels(Page& page, const HookupRating& rating, const Look& look) {
+  Table table;
+  table.columns = {{"vessel", Align::left, true},
+                   {"kind"},
+                   {"share\n%", Align::right},
+                   {"X\n%", Align::right},
+                   {with_unit("outlet", Shown::temperature, look), Align::right},
+                   {with_unit("hottest", Shown::temperature, look), Align::right},
+                   {with_unit("outlet", Shown::pressure, look), Align::right},
+                   {with_unit("cooling", Shown::heat, look), Align::right},
+                   {"medium", Align::left, true}};
+  for (const Rating& vessel : rating.vessels) {
+    const auto outlet = [&](double Stream::*what) {
+      return vessel.outlet ? std::optional((*vessel.outlet).*what) : std::nullopt;
+    };
+    table.rows.push_back({vessel.tag, short_kind(vessel.kind), figure(vessel.feed_fraction, Shown::percent, look),
+                          figure(vessel.conversion, Shown::percent, look),
+                          figure(outlet(&Stream::temperature_K), Shown::temperature, look),
+                          figure(vessel.hottest_K, Shown::temperature, look),
+                          figure(outlet(&Stream::pressure_Pa), Shown::pressure, look),
+                          figure(vessel.cooling_W, Shown::heat, look), vessel.medium.value_or("-")});
+  }
+  page.heading("Vessels, in the order of the hookup; X is what has been converted up to their outlet");
+  page.table(table);
+}
+
+struct LimitShown {
+  Shown value, margin;
+};
+LimitShown shown_of(const Limit& limit) {
+  if (limit.unit == "K") return {Shown::temperature, Shown::difference};
+  if (limit.unit == "Pa")
+    return {limit.name == "pressure drop" ? Shown::pressure_drop : Shown::pressure, Shown::percent};
+  if (limit.unit == "m3/s") return {Shown::feed, Shown::percent};
+  if (limit.unit == "W") return {Shown::heat, Shown::percent};
+  if (limit.unit == "W/m2") return {Shown::heat_flux, Shown::percent};
+  return {limit.name == "fill" ? Shown::percent : Shown::number, Shown::percent};
+}
+
+std::string margin_text(const Limit& limit, const Look& look) {
+  if (!limit.margin) return "-";
+  const std::string text = show(*limit.margin, shown_of(limit).margin, look.units);
+  return *limit.margin > 0 ? "+" + text : text;
+}
+
+void add_limit_rows(Table& table, const Rating& rating, const Look& look) {
+  for (const Limit& limit : rating.limits) {
+    const Shown shown = shown_of(limit).value;
+    table.rows.push_back({rating.tag.empty() ? "whole" : rating.tag, std::string(limit.name),
+                          figure_with_unit(limit.value, shown, look), figure_with_unit(limit.bound, shown, look),
+                          margin_text(limit, look), words_of(limit.state)});
+  }
+}
+
+void add_limits(Page& page, const HookupRating& rating, const Look& look) {
+  Table table;
+  table.columns = {{"vessel", Align::left, true}, {"limit", Align::left, true}, {"value", Align::right},
+                   {"bound", Align::right},       {"margin", Align::right},     {"state"}};
+  for (const Rating& vessel : rating.vessels) add_limit_rows(table, vessel, look);
+  add_limit_rows(table, rating.whole, look);
+  if (table.rows.empty()) return;
+  page.heading("Limits");
+  page.table(table);
+}
+
+void add_states(Page& page, const HookupRating& rating, const Look& look) {
+  Table table;
+  table.columns = {{"vessel", Align::left, true},
+                   {"X\n%", Align::right},
+                   {with_unit("temperature", Shown::temperature, look), Align::right},
+                   {"stable"},
+                   {"reached by the start"}};
+  bool complete = true;
+  for (const Rating& vessel : rating.vessels) {
+    if (!vessel.steady_states) continue;
+    complete = complete && vessel.states_complete.value_or(true);
+    for (const SteadyState& state : *vessel.steady_states)
+      table.rows.push_back({vessel.tag, figure(state.conversion, Shown::percent, look),
+                            figure(state.temperature_K, Shown::temperature, look), state.stable ? "yes" : "no",
+                            state.reached ? "yes" : "no"});
+  }
+  if (table.rows.empty()) return;
+  page.heading(complete ? "Steady states, all there are" : "Steady states that were found; there may be more");
+  page.table(table);
+}
+
+void add_profile(Page& page, const Rating& vessel, const Look& look) {
+  constexpr std::size_t rows = 8;
+  const Profile& profile = *vessel.profile;
+  Table table;
+  table.columns = {{with_unit("from inlet", Shown::length, look), Align::right},
+                   {"X\n%", Align::right},
+                   {with_unit("temperature", Shown::temperature, look), Align::right},
+                   {with_unit("pressure", Shown::pressure, look), Align::right},
+                   {with_unit("medium", Shown::temperature, look), Align::right}};
+  const std::size_t n = profile.length_m.size();
+  const std::size_t shown = std::min(rows, n);
+  for (std::size_t i = 0; i < shown; ++i) {
+    const std::size_t at = shown == 1 ? 0 : i * (n - 1) / (shown - 1);
+    table.rows.push_back({figure(profile.length_m[at], Shown::length, look),
+                          figure(profile.conversion[at], Shown::percent, look),
+                          figure(profile.temperature_K[at], Shown::temperature, look),
+                          figure(profile.pressure_Pa[at], Shown::pressure, look),
+                          figure(profile.medium_K[at], Shown::temperature, look)});
+  }
+  page.heading("Along " + vessel.tag);
+  page.table(table);
+}
+
+void add_cases(Page& page, const ExamineAnswer& answer, const Look& look) {
+  for (const auto& [name, of_case] : answer.cases) {
+    const Rating& whole = of_case.rating.whole;
+    page.heading("Case " + name);
+    std::vector<Page::Item> items = {{"hookup", {of_case.rating.text}},
+                                     {"verdict", {words_of(whole.verdict)}},
+                                     {"feed rate", {figure_with_unit(of_case.head.feed_m3_s, Shown::feed, look)}},
+                                     {"conversion", {figure_with_unit(whole.conversion, Shown::percent, look)}}};
+    if (whole.windows) items.push_back({"window", window_words(*whole.windows, look)});
+    if (!whole.stands_in_the_way.empty()) items.push_back({"in the way", whole.stands_in_the_way});
+    page.items(items);
+  }
+}
+
+}  // namespace
+
+std::string to_page(const ExamineAnswer& answer, const Look& look) {
+  Page page{look};
+  add_head(page, "examine", answer.head, look);
+  page.blank();
+  add_whole(page, answer, look);
+  add_vessels(page, answer.rating, look);
+  add_limits(page, answer.rating, look);
+  add_states(page, answer.rating, look);
+  for (const Rating& vessel : answer.rating.vessels)
+    if (vessel.profile && !vessel.profile->length_m.empty()) add_profile(page, vessel, look);
+  add_cases(page, answer, look);
+  add_vessel_cautions(page, answer.rating.vessels);
+  add_tail(page, answer.head, answer.rating.whole.cautions);
+  return page.text();
+}
+
+}  // namespace vatwright
