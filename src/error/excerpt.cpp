@@ -8,7 +8,7 @@ namespace vatwright {
 namespace {
 
 constexpr std::size_t before_place = 44;  // columns kept before the place where the line is cut
-constexpr std::size_t widest = 72;
+constexpr std::size_t widest = 70;
 
 }  // namespace
 

@@ -140,7 +140,7 @@ std::optional<Kinetic> of_equilibrium(Dimension d) {
 }
 
 std::optional<Kinetic> kinetic(Dimension d) {
-  for (const auto family : {per_fluid, per_catalyst, by_pressure, of_equilibrium})
+  for (const auto family : {per_catalyst, per_fluid, by_pressure, of_equilibrium})
     if (auto found = family(d)) return found;
   return {};
 }

@@ -20,7 +20,7 @@ struct Unit {
   long double factor = 1;
   Dimension dimension;
   Kind kind = Kind::plain;
-  long double zero = 0;  ///< temperature: absolute zero lies at minus this number
+  double zero = 0;  ///< temperature: absolute zero lies at minus this number
 };
 
 /// Null where the word is not a unit; capitals count.
