@@ -72,8 +72,12 @@ class RootHunt {
     for (std::size_t i = 0; i < at_.size(); ++i) {
       if (values_[i] == 0) roots_.push_back(at_[i]);
       if (i + 1 < at_.size() && values_[i] * signum(values_[i + 1]) < 0) add_between(i, i + 1);
-      if (i > 0 && i + 1 < at_.size() && near_miss(i)) refine(i);
+      if (near_miss(i)) refine(i - 1, i + 1);
     }
+    const std::size_t last = at_.size() - 2;  // interval
+    // no third sample beyond an end shows a dip there; the neighbour's hunt may have covered it
+    if (dips_within(0) && !near_miss(1)) refine(0, 1);
+    if (last > 0 && dips_within(last) && !near_miss(last)) refine(last, last + 1);
     if (failed_) return *failed_;
     std::ranges::sort(roots_);
     return roots_;
@@ -92,21 +96,31 @@ class RootHunt {
   void add_between(std::size_t i, std::size_t j) { add_root(at_[i], at_[j], values_[i], values_[j]); }
 
   bool near_miss(std::size_t i) const {
+    if (i == 0 || i + 1 >= at_.size()) return false;
     const double sign = signum(values_[i]);
     if (sign == 0 || signum(values_[i - 1]) != sign || signum(values_[i + 1]) != sign) return false;
     const double middle = std::abs(values_[i]), left = std::abs(values_[i - 1]), right = std::abs(values_[i + 1]);
-    return (middle < left || (i == 1 && middle < right)) && middle <= right;  // two equal ones: hunted once
+    return middle < left && middle <= right;  // two equal ones: hunted once
   }
 
-  /// The extremum nearest to zero around sample i: two roots where it lies beyond zero, one where it touches.
-  void refine(std::size_t i) {
+  /// |f| falls into the interval after sample i from both of its ends, which are of one sign.
+  bool dips_within(std::size_t i) const {
     const double sign = signum(values_[i]);
-    const double a = at_[i - 1], b = at_[i + 1];
+    if (sign == 0 || signum(values_[i + 1]) != sign) return false;
+    const double aside = 1e-4 * (at_[i + 1] - at_[i]);
+    return sign * checked(f_, at_[i] + aside) < std::abs(values_[i]) &&
+           sign * checked(f_, at_[i + 1] - aside) < std::abs(values_[i + 1]);
+  }
+
+  /// The extremum nearest to zero between two samples: two roots where it lies beyond zero, one where it touches.
+  void refine(std::size_t i, std::size_t j) {
+    const double sign = signum(values_[i]);
+    const double a = at_[i], b = at_[j];
     const Peak nearest = find_peak([&](double x) { return -sign * checked(f_, x); }, a, b, 1e-8);
     const double value = -sign * nearest.value;
     if (value * sign < -touch_) {
-      add_root(a, nearest.at, values_[i - 1], value);
-      add_root(nearest.at, b, value, values_[i + 1]);
+      add_root(a, nearest.at, values_[i], value);
+      add_root(nearest.at, b, value, values_[j]);
     } else if (value * sign <= touch_) {
       roots_.push_back(nearest.at);
     }
@@ -134,12 +148,16 @@ Outcome<std::vector<double>> find_all_roots(Function f, const std::vector<double
 
 Peak find_peak(Function f, double a, double b, double rel_tol) {
   const int bits = std::clamp(static_cast<int>(std::ceil(-std::log2(rel_tol))), 4, 26);  // no more is in f near a peak
+  const auto height = [&](double x) {
+    const double value = f(x);
+    return std::isnan(value) ? -1e300 : value;
+  };
   std::uintmax_t most_calls = 200;
   const auto [at, least] =
-      boost::math::tools::brent_find_minima([&](double x) { return -f(x); }, a, b, bits, most_calls);
+      boost::math::tools::brent_find_minima([&](double x) { return -height(x); }, a, b, bits, most_calls);
   Peak best{at, -least};
   for (double end : {a, b})
-    if (const double value = f(end); value > best.value) best = {end, value};
+    if (const double value = height(end); value > best.value) best = {end, value};
   return best;
 }
 

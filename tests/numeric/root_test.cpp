@@ -64,13 +64,13 @@ TEST_CASE("all roots of a cubic with three are found, rising", "[root]") {
 }
 
 TEST_CASE("two roots between two samples are seen by the extremum between them", "[root]") {
-  const double gap = GENERATE(1e-2, 1e-4, 1e-6);
-  const auto f = [gap](double x) { return (x - 0.53) * (x - 0.53) - gap * gap; };
+  const double gap = GENERATE(1e-2, 1e-4, 1e-6), middle = GENERATE(0.02, 0.03, 0.06, 0.53, 0.94, 0.97, 0.98);
+  const auto f = [=](double x) { return (x - middle) * (x - middle) - gap * gap; };
   const auto roots = find_all_roots(f, samples(0, 1, 16));
   REQUIRE(answer(roots) != nullptr);
   REQUIRE(answer(roots)->size() == 2);
-  CHECK((*answer(roots))[0] == Approx(0.53 - gap).margin(1e-12));
-  CHECK((*answer(roots))[1] == Approx(0.53 + gap).margin(1e-12));
+  CHECK((*answer(roots))[0] == Approx(middle - gap).margin(1e-12));
+  CHECK((*answer(roots))[1] == Approx(middle + gap).margin(1e-12));
 }
 
 TEST_CASE("a double root counts once, within the touch that is asked", "[root]") {
@@ -84,6 +84,11 @@ TEST_CASE("a double root counts once, within the touch that is asked", "[root]")
 TEST_CASE("two equal samples beside an extremum do not double the roots", "[root]") {
   const auto f = [](double x) { return (x - 0.5) * (x - 0.5) - 1e-4; };
   CHECK(answer(find_all_roots(f, {0, 0.4, 0.6, 1}))->size() == 2);
+}
+
+TEST_CASE("two samples alone show a dip between them", "[root]") {
+  CHECK(answer(find_all_roots([](double x) { return (x - 0.4) * (x - 0.6); }, {0, 1}))->size() == 2);
+  CHECK(answer(find_all_roots([](double x) { return x + 1; }, {0, 1}))->empty());
 }
 
 TEST_CASE("a root on a sample is found once", "[root]") {
@@ -128,4 +133,10 @@ TEST_CASE("a peak lies where calculus puts it", "[root]") {
 TEST_CASE("a peak at an end of the range is that end", "[root]") {
   CHECK(find_peak([](double x) { return x; }, 0, 2).at == 2);
   CHECK(find_peak([](double x) { return -x; }, 0, 2).value == 0);
+}
+
+TEST_CASE("where there is no value there is no peak", "[root]") {
+  const Peak peak = find_peak([](double x) { return x < 0.2 ? std::nan("") : -(x - 0.5) * (x - 0.5); }, 0, 1);
+  CHECK(peak.at == Approx(0.5).margin(1e-7));
+  CHECK(peak.value == Approx(0).margin(1e-14));
 }

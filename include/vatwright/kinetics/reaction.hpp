@@ -8,7 +8,8 @@
 namespace vatwright {
 
 /// k(T): at `at_K` it is k; away from there by Arrhenius, k exp(-(E/R)(1/T - 1/at)), by theta, k theta^(T - at), or not
-/// at all. SI: mol, m3, s, Pa (kg in place of mol under amounts = mass; kg of catalyst per its mass).
+/// at all (nor without at_K). SI: mol, m3, s, Pa (kg in place of mol under amounts = mass; kg of catalyst per its
+/// mass).
 struct RateConstant {
   enum class Moves { not_at_all, arrhenius, theta };
   double k = 0;
@@ -16,11 +17,12 @@ struct RateConstant {
   Moves moves = Moves::not_at_all;
   double activation_J_mol = 0;
   double theta = 1;
+  /// At or below 0 K, where a solver may look but nothing is: the limit, 0, where Arrhenius moves it.
   [[nodiscard]] double at(double T_K) const;
 };
 
-/// (species index, figure): an order, a half-saturation concentration (mol/m3), an adsorption constant (m3/mol or
-/// 1/Pa).
+/// (species index, figure): a coefficient, an order, a half-saturation concentration (mol/m3; Pa on the basis of
+/// pressures), an adsorption constant (m3/mol; 1/Pa).
 struct SpeciesFigure {
   int species = 0;
   double value = 0;
@@ -31,17 +33,20 @@ struct PowerLaw {
   RateConstant k;
   std::vector<SpeciesFigure> orders;
 };
-/// most times the product of C/(half + C).
+/// most times the product of C/(half + C), half above zero.
 struct Saturating {
   RateConstant most;
   std::vector<SpeciesFigure> half;
 };
 
+/// What the amounts in a law are: concentrations, mol/m3, or partial pressures, Pa (ideal gas, p_i = C_i R T).
 enum class Basis { concentration, pressure };
+/// What a rate counts on: m3 of fluid, m3 of packed bed, kg of catalyst. unsaid: fluid, but a packed tube needs it
+/// said.
 enum class Per { unsaid, fluid, bed, catalyst };
 
-/// A rate law as a whole. The rate of the REACTION as written is law / of_coefficient / (1 + sum K_i
-/// C_i)^adsorption_power.
+/// A rate law as a whole. The rate of the reaction as written is
+///   law / of_coefficient / (1 + sum K_i C_i)^adsorption_power
 struct RateLaw {
   std::variant<PowerLaw, Saturating> law;
   double of_coefficient = 1;  ///< |nu| of the species whose rate the constant gives; 1 for the reaction itself
@@ -64,8 +69,8 @@ struct RateTable {
 struct HeatOfReaction {
   double dH_J_mol = 0;
   double at_K = 298.15;
-  std::vector<double> dCp;  ///< empty: constant
-  [[nodiscard]] double at(double T_K) const;
+  std::vector<double> dCp;                    ///< J/mol/K, J/mol/K2, ..; empty: constant
+  [[nodiscard]] double at(double T_K) const;  ///< dH(T), J/mol
 };
 
 /// K(T) from K at `at_K` by van 't Hoff: d ln K/dT = dH(T)/(R T^2), integrated exactly. heat absent: K constant.
