@@ -70,7 +70,7 @@ std::optional<Bounds> read_bounds(const Node& node, const Measure& m, std::strin
 std::optional<std::vector<std::string>> read_texts(const Node& node, const Scope& scope, std::string_view key) {
   const auto one = [&](const Node& n) { return read_text(n, scope, key); };
   if (const Array* array = node.array()) return each<std::string>(*array, one);
-  const std::string example = node.text() ? "[" + quoted(*node.text()) + "]" : "[\"..\"]";
+  const std::string example = node.text() ? std::string("[").append(quoted(*node.text())) + "]" : "[\"..\"]";
   scope.error(node.place, key, found_text(node), "expected a list, " + example);
   return std::nullopt;
 }

@@ -67,7 +67,7 @@ std::string found_text(const Node& node) {
 std::string joined(const std::vector<std::string>& words, std::string_view last) {
   std::string text;
   for (std::size_t i = 0; i < words.size(); ++i) {
-    if (i > 0) text += i + 1 == words.size() ? " " + std::string(last) + " " : ", ";
+    if (i > 0) text += i + 1 == words.size() ? std::string(" ").append(last) + " " : ", ";
     text += words[i];
   }
   return text;

@@ -105,7 +105,7 @@ bool is_number(const std::string& cell) {
 
 std::string written(std::string cell) {
   if (!cell.empty() && std::string("=+-@").find(cell.front()) != std::string::npos && !is_number(cell))
-    cell = "'" + cell;
+    cell.insert(cell.begin(), '\'');
   if (cell.find_first_of(",\"\r\n") == std::string::npos) return cell;
   std::string quoted = "\"";
   for (char letter : cell) quoted += letter == '"' ? std::string("\"\"") : std::string(1, letter);
@@ -114,7 +114,7 @@ std::string written(std::string cell) {
 
 std::string line_of(const std::vector<std::string>& cells) {
   std::string line;
-  for (std::size_t i = 0; i < cells.size(); ++i) line += (i == 0 ? "" : ",") + written(cells[i]);
+  for (std::size_t i = 0; i < cells.size(); ++i) line.append(i == 0 ? "" : ",").append(written(cells[i]));
   return line + "\r\n";
 }
 

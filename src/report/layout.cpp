@@ -55,7 +55,8 @@ std::string joined_line(const Block& block, std::size_t line, const std::vector<
   std::string text;
   for (std::size_t j = 0; j < columns.size(); ++j) {
     const std::string cell = line < block[j].size() ? block[j][line] : "";
-    text += (j == 0 ? "" : spaces(gap)) + padded(cell, widths[j], columns[j].align);
+    if (j > 0) text += spaces(gap);
+    text += padded(cell, widths[j], columns[j].align);
   }
   return without_trailing(text);
 }
