@@ -5,7 +5,7 @@
 #include <tuple>
 #include <utility>
 
-#include "glyph.hpp"
+#include "vatwright/error/glyph.hpp"
 
 namespace vatwright {
 namespace {

@@ -2,7 +2,7 @@
 
 #include <algorithm>
 
-#include "glyph.hpp"
+#include "vatwright/error/glyph.hpp"
 
 namespace vatwright {
 namespace {

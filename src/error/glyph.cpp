@@ -1,4 +1,4 @@
-#include "glyph.hpp"
+#include "vatwright/error/glyph.hpp"
 
 #include <cstdint>
 #include <utility>

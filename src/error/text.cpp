@@ -2,8 +2,8 @@
 #include <string>
 
 #include "excerpt.hpp"
-#include "glyph.hpp"
 #include "vatwright/error/diagnostic.hpp"
+#include "vatwright/error/glyph.hpp"
 
 namespace vatwright {
 namespace {

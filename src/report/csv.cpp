@@ -104,12 +104,13 @@ bool is_number(const std::string& cell) {
 }
 
 std::string written(std::string cell) {
-  if (!cell.empty() && std::string("=+-@").find(cell.front()) != std::string::npos && !is_number(cell))
-    cell.insert(cell.begin(), '\'');
+  const bool reckoned = !cell.empty() && std::string_view("=+-@").find(cell.front()) != std::string_view::npos;
+  if (reckoned && !is_number(cell)) cell.insert(cell.begin(), '\'');
   if (cell.find_first_of(",\"\r\n") == std::string::npos) return cell;
   std::string quoted = "\"";
-  for (char letter : cell) quoted += letter == '"' ? std::string("\"\"") : std::string(1, letter);
-  return quoted + "\"";
+  for (char letter : cell) quoted.append(letter == '"' ? 2 : 1, letter);
+  quoted += '"';
+  return quoted;
 }
 
 std::string line_of(const std::vector<std::string>& cells) {

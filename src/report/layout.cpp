@@ -4,6 +4,7 @@
 #include <numeric>
 
 #include "letters.hpp"
+#include "vatwright/error/glyph.hpp"
 
 namespace vatwright {
 namespace {
@@ -15,8 +16,8 @@ constexpr int widest_label = 24;  // labels of items beyond this are wrapped
 std::string spaces(int n) { return std::string(static_cast<std::size_t>(std::max(n, 0)), ' '); }
 
 std::string padded(const std::string& text, int width, Align align) {
-  const std::string fill = spaces(width - width_of(text));
-  return align == Align::left ? text + fill : fill + text;
+  std::string line = text;
+  return line.insert(align == Align::left ? line.size() : 0, spaces(width - width_of(text)));
 }
 
 std::string without_trailing(std::string text) {
@@ -24,17 +25,17 @@ std::string without_trailing(std::string text) {
   return text;
 }
 
-/// The longest beginning of `word` that fits `width` columns (one letter at the least).
+/// The longest beginning of `word` that fits `width` columns (one letter at the least), in bytes.
 std::size_t fitting(std::string_view word, int width) {
-  std::size_t end = 0;
+  std::string_view rest = word;
   int used = 0;
-  while (end < word.size()) {
-    std::size_t next = end;
-    used += width_of(next_letter(word, next));
-    if (used > width && end != 0) break;
-    end = next;
+  while (!rest.empty()) {
+    std::string_view next = rest;
+    used += static_cast<int>(take_glyph(next, 0).columns);
+    if (used > width && rest.size() != word.size()) break;
+    rest = next;
   }
-  return end;
+  return word.size() - rest.size();
 }
 
 std::vector<std::string> split(const std::string& text, char at) {
@@ -95,31 +96,26 @@ std::vector<int> fitted_widths(const Table& table) {
 }  // namespace
 
 int width_of(std::string_view text) {
-  int width = 0;
-  for (std::size_t at = 0; at < text.size();) width += width_of(next_letter(text, at));
-  return width;
+  std::size_t width = 0;
+  while (!text.empty()) width += take_glyph(text, width).columns;
+  return static_cast<int>(width);
 }
 
 std::string printable(std::string_view text) {
-  std::string out;
-  for (std::size_t at = 0; at < text.size();) {
-    const std::size_t from = at;
-    const char32_t letter = next_letter(text, at);
-    const bool steers = letter < 0x20 || (letter >= 0x7F && letter < 0xA0) || (letter >= 0x202A && letter <= 0x202E) ||
-                        (letter >= 0x2066 && letter <= 0x2069) || letter == not_a_letter;
-    if (letter == '\n' || letter == '\t' || letter == '\r')
-      out += ' ';
-    else
-      out += steers ? "?" : text.substr(from, at - from);
-  }
-  return out;
+  std::string one_line(text);
+  std::replace_if(
+      one_line.begin(), one_line.end(), [](char letter) { return letter == '\n' || letter == '\r'; }, ' ');
+  return harmless(one_line);
 }
 
 std::string to_ascii(std::string_view text) {
   std::string out;
-  for (std::size_t at = 0; at < text.size();) {
-    const char32_t letter = next_letter(text, at);
-    out += std::string(static_cast<std::size_t>(width_of(letter)), letter == not_a_letter ? '?' : ascii_of(letter));
+  while (!text.empty()) {
+    const Glyph glyph = take_glyph(text, 0);
+    if (glyph.columns <= 2)
+      out.append(glyph.columns, ascii_of(glyph.shown));
+    else
+      out += glyph.shown;  // written out already
   }
   return out;
 }
@@ -146,8 +142,10 @@ std::vector<std::string> wrap(std::string_view text, int width) {
   return lines;
 }
 
-std::string Page::bold(const std::string& text) const { return look_.colour ? "\x1b[1m" + text + "\x1b[0m" : text; }
-void Page::line(const std::string& text) { text_ += text + "\n"; }
+std::string Page::bold(const std::string& text) const {
+  return look_.colour ? std::string("\x1b[1m").append(text).append("\x1b[0m") : text;
+}
+void Page::line(const std::string& text) { text_.append(look_.ascii ? to_ascii(text) : text) += '\n'; }
 void Page::blank() { line(""); }
 
 void Page::title(std::string_view text) {
@@ -179,7 +177,7 @@ void Page::items(const std::vector<Item>& items) {
     for (const std::string& text : item.texts)
       for (const std::string& part : wrap(printable(text), widths[1])) block[1].push_back(part);
     for (std::size_t i = 0; i < std::max(block[0].size(), block[1].size()); ++i)
-      line(without_trailing("  " + joined_line(block, i, layout.columns, widths)));
+      line(without_trailing(spaces(2).append(joined_line(block, i, layout.columns, widths))));
   }
 }
 
@@ -213,6 +211,6 @@ void Page::table(const Table& given) {
   }
 }
 
-std::string Page::text() const { return look_.ascii ? to_ascii(text_) : text_; }
+std::string Page::text() const { return text_; }
 
 }  // namespace vatwright

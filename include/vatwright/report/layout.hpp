@@ -9,10 +9,9 @@ namespace vatwright {
 
 inline constexpr int page_width = 80;
 
-/// Columns that a UTF-8 text takes on a screen: 0 for marks that combine, 2 for wide letters, 1 for the rest.
+/// Columns that a UTF-8 text takes on a screen.
 int width_of(std::string_view text);
-/// The text as it may stand on a screen: control characters (which could steer a terminal) and bytes that are no UTF-8
-/// become '?', line ends and tabs a space.
+/// The text as it may stand on one line of a screen: what could steer a terminal is written out, line ends are spaces.
 std::string printable(std::string_view text);
 /// The text in ASCII, of the same width: letters lose their marks, what has no likeness becomes '?'.
 std::string to_ascii(std::string_view text);
