@@ -17,11 +17,13 @@ struct Chemistry {
   /// True concentrations C_i (mol/m3 of fluid) at extents xi, T and P. Liquid: c_feed + nu xi, whatever T and P. Ideal gas:
   /// c_i/sum(c) * P/(R T).   C: one per species.
   void concentrations(std::span<const double> xi, double T_K, double P_Pa, std::span<double> C) const;
+  /// The same from the amounts c_i (mol per m3 of mixed feed) themselves; c and C may be one span.
+  void concentrations_of_amounts(std::span<const double> c, double T_K, double P_Pa, std::span<double> C) const;
   /// Volume of fluid per m3 of mixed feed: 1 for a liquid, sum(c) R T/P for a gas.
   [[nodiscard]] double expansion(std::span<const double> xi, double T_K, double P_Pa) const;
   /// Density of the fluid, kg/m3, where it is known (gas: from molar masses; mass per m3 of feed over the expansion).
   [[nodiscard]] std::optional<double> density(std::span<const double> xi, double T_K, double P_Pa) const;
-  /// Mass of 1 m3 of mixed feed, kg, where it is known.
+  /// Mass of 1 m3 of mixed feed, kg, where it is known: the feed's density, else (gas) from molar masses.
   [[nodiscard]] std::optional<double> feed_mass() const;
 };
 
@@ -33,6 +35,10 @@ struct HeatKnowledge {
   std::string why;
 };
 HeatKnowledge heat_knowledge(const Chemistry& chemistry);
+
+/// Whether heat capacity and heats of reaction are the same at any temperature and composition; T is then linear in the
+/// extents. Precondition: known.
+bool heat_is_constant(const Chemistry& chemistry);
 
 /// Heat capacity of what 1 m3 of mixed feed has become, J/K: rho cp where the mixture's is given (constant), else the sum of
 /// c_i cp_i(T). Precondition: known.

@@ -65,6 +65,7 @@ struct VesselOutcome {
   double coldest_K = 0, hottest_K = 0;     ///< inside (a tube's inlet included; what arrives at a tank not)
   double lowest_Pa = 0, highest_Pa = 0;    ///< inside
   std::optional<double> pressure_drop_Pa;  ///< tubes; absent where viscosity (gas: or a molar mass) is missing
+  std::optional<double> let_down_above_Pa; ///< a let-down was asked to more than what arrives: that much (ruled: does not pass)
   std::optional<double> start_peak_K;      ///< tanks: the hottest while it comes on line
   std::vector<SteadyState> states;         ///< tanks, rising conversion
   bool states_complete = true;             ///< tanks: certain in the range searched

@@ -1,0 +1,126 @@
+#include "tank_curve.hpp"
+
+#include <algorithm>
+#include <cmath>
+#include <limits>
+
+#include "vatwright/numeric/root.hpp"
+
+namespace vatwright {
+
+TankCurve::TankCurve(Way way) : way_(std::move(way)) {
+  if (way_.path().falls()) {  // h rises all the way: nothing to look for
+    y_ = {-y_most, y_most};
+    f_ = {log_time(y_[0]), log_time(y_[1])};
+    return;
+  }
+  sample();
+  refine_extrema();
+}
+
+double TankCurve::log_time(double y) {
+  const Place p = place_at(y, way_.length());
+  const double rate = way_.rate(p.d, p.s);
+  return rate > 0 ? std::log(p.d / rate) : std::numeric_limits<double>::infinity();
+}
+
+void TankCurve::sample() {
+  y_ = graded_places();
+  for (double d : way_.path().kinks(way_.sign()))
+    if (d < way_.length()) y_.push_back(std::log(d / (way_.length() - d)));
+  std::ranges::sort(y_);
+  for (double y : y_) f_.push_back(log_time(y));
+  // equilibrium: the last samples are rounding of the rate
+  while (y_.size() > 2 && way_.kind() == EndKind::equilibrium && y_[y_.size() - 2] > 28) {
+    y_.pop_back();
+    f_.pop_back();
+  }
+  // A pair of extrema may hide in one interval: where the slope is least there, look closer.
+  for (std::size_t i = f_.size() - 2; i >= 2; --i) look_closer(i);
+}
+
+void TankCurve::look_closer(std::size_t i) {
+  const auto slope = [&](std::size_t k) { return (f_[k + 1] - f_[k]) / (y_[k + 1] - y_[k]); };
+  const double before = slope(i - 2), here = slope(i - 1), after = slope(i);
+  const bool all_rise = before > 0 && here > 0 && after > 0, all_fall = before < 0 && here < 0 && after < 0;
+  const bool least = std::abs(here) <= std::abs(before) && std::abs(here) <= std::abs(after);
+  if (!(all_rise || all_fall) || !least || std::abs(here) > 0.2) return;
+  constexpr int parts = 8;
+  std::vector<double> y, f;
+  for (int k = 1; k < parts; ++k) {
+    y.push_back(y_[i - 1] + (y_[i] - y_[i - 1]) * k / parts);
+    f.push_back(log_time(y.back()));
+  }
+  const auto place = static_cast<std::ptrdiff_t>(i);
+  y_.insert(y_.begin() + place, y.begin(), y.end());
+  f_.insert(f_.begin() + place, f.begin(), f.end());
+}
+
+void TankCurve::refine_extrema() {
+  std::vector<std::pair<double, double>> found;
+  const double noise = 1e-13;
+  for (std::size_t i = 1; i + 1 < f_.size(); ++i) {
+    const double up = f_[i] - f_[i - 1], down = f_[i] - f_[i + 1];
+    const double sign = up > noise && down > -noise ? 1 : up < -noise && down < noise ? -1 : 0;
+    if (sign == 0 || !std::isfinite(f_[i - 1]) || !std::isfinite(f_[i + 1])) continue;
+    const Peak peak = find_peak([&](double y) { return sign * log_time(y); }, y_[i - 1], y_[i + 1], 1e-9);
+    found.emplace_back(peak.at, sign * peak.value);
+  }
+  for (const auto& [y, f] : found) {
+    fold_y_.push_back(y);
+    const auto at = std::ranges::lower_bound(y_, y);
+    const auto index = at - y_.begin();
+    if (at != y_.end() && *at == y) continue;
+    y_.insert(at, y);
+    f_.insert(f_.begin() + index, f);
+  }
+}
+
+std::vector<TankCurve::Fold> TankCurve::folds() const {
+  std::vector<Fold> all;
+  for (double y : fold_y_) {
+    const auto at = std::ranges::lower_bound(y_, y);
+    all.push_back({place_at(y, way_.length()).d, std::exp(f_[static_cast<std::size_t>(at - y_.begin())])});
+  }
+  return all;
+}
+
+bool TankCurve::add_state(std::size_t i, double log_tau, Answer& answer) {
+  const auto miss = [&](double y) {
+    const double f = log_time(y);
+    return std::isfinite(f) ? f - log_tau : 1e300;
+  };
+  double y = 0;
+  if (f_[i] == log_tau) {
+    y = y_[i];
+  } else {
+    const auto root = find_root(miss, y_[i], y_[i + 1], {.rel_tol = 1e-16, .abs_tol = 2e-15});
+    const double* found = vatwright::answer(root);
+    if (found == nullptr) return false;
+    y = *found;
+  }
+  answer.states.push_back({place_at(y, way_.length()), f_[i + 1] > f_[i], false});
+  return true;
+}
+
+TankCurve::Answer TankCurve::states(double tau) {
+  Answer answer;
+  const double log_tau = std::log(tau);
+  if (log_tau < f_.front()) {  // next to the inlet: d = tau R(inlet)
+    const double d = tau * way_.rate(0, way_.length());
+    if (d > 0) answer.states.push_back({{d, way_.length() - d}, true, false});
+  }
+  for (std::size_t i = 0; i + 1 < f_.size(); ++i) {
+    const bool between = (f_[i] <= log_tau && log_tau < f_[i + 1]) || (f_[i + 1] < log_tau && log_tau <= f_[i]);
+    if (between && !add_state(i, log_tau, answer)) answer.failed = true;
+  }
+  if (log_tau >= f_.back()) {
+    if (way_.kind() == EndKind::confined)
+      answer.confined_hit = true;
+    else
+      answer.states.push_back({{way_.length(), 0}, true, true});
+  }
+  return answer;
+}
+
+}  // namespace vatwright

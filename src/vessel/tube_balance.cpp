@@ -1,0 +1,144 @@
+#include "tube_balance.hpp"
+
+#include <algorithm>
+#include <cmath>
+#include <limits>
+
+#include "tube_outcome.hpp"
+#include "vatwright/vessel/pressure_drop.hpp"
+
+namespace vatwright {
+namespace {
+
+/// The largest concentration of what takes part, mol per m3 of mixed feed.
+double scale_of(const Chemistry& chemistry) {
+  double largest = 0;
+  for (int i = 0; i < chemistry.kinetics.species(); ++i)
+    for (int j = 0; j < chemistry.kinetics.reactions(); ++j)
+      if (chemistry.kinetics.nu(i, j) != 0)
+        largest = std::max(largest, chemistry.feed.c_mol_m3[static_cast<std::size_t>(i)]);
+  return largest > 0 ? largest : 1;
+}
+
+}  // namespace
+
+TubeBalance::TubeBalance(const Setup& setup, bool with_pressure, double feed_m3_s)
+    : setup_(setup),
+      evaluator_(setup.chemistry.kinetics),
+      broken_(broken_orders(setup.chemistry.kinetics)),
+      R_(setup.capacity.size()),
+      with_pressure_(with_pressure),
+      factor_(with_pressure ? setup.volume_m3 / feed_m3_s : 1),
+      feed_m3_s_(feed_m3_s),
+      length_m_(length_of(setup.vessel.kind)),
+      c_scale_(scale_of(setup.chemistry)),
+      gone_(1e-12 * c_scale_),
+      C_(static_cast<std::size_t>(setup.chemistry.kinetics.species())),
+      r_(R_),
+      dT_(R_) {
+  exhausted_.assign(C_.size(), false);
+  setup.chemistry.kinetics.amounts(setup.chemistry.feed.c_mol_m3, setup.arrives.xi_mol_m3, C_);
+  for (const BrokenOrder& b : broken_) {
+    if (std::ranges::find(can_run_out_, b.species) == can_run_out_.end()) can_run_out_.push_back(b.species);
+    if (C_[b.species] <= gone_) exhausted_[b.species] = true;
+  }
+  if (setup.is_held || !setup.heat_known()) return;
+  linear_ = heat_is_constant(setup.chemistry);
+  if (!linear_) return;
+  const double capacity = heat_capacity(setup.chemistry, setup.arrives.xi_mol_m3, setup.inlet_K);
+  for (std::size_t j = 0; j < R_; ++j)
+    dT_[j] = -setup.chemistry.kinetics.reaction(static_cast<int>(j)).heat->dH_J_mol / capacity;
+}
+
+std::vector<double> TubeBalance::at_inlet() const {
+  std::vector<double> y = setup_.arrives.xi_mol_m3;
+  if (with_pressure_) y.push_back(1);
+  return y;
+}
+
+std::vector<double> TubeBalance::scale() const {
+  std::vector<double> all(R_, c_scale_);
+  if (with_pressure_) all.push_back(1);
+  return all;
+}
+
+double TubeBalance::temperature(std::span<const double> y) const {
+  if (!linear_) return adiabatic_temperature(setup_.chemistry, setup_.arrives.xi_mol_m3, setup_.inlet_K, y.first(R_));
+  double T = setup_.inlet_K;
+  for (std::size_t j = 0; j < R_; ++j) T += dT_[j] * (y[j] - setup_.arrives.xi_mol_m3[j]);
+  return T;
+}
+
+double TubeBalance::pressure(std::span<const double> y) const {
+  return with_pressure_ ? setup_.inlet_Pa * std::sqrt(std::max(y[R_], 0.01 * no_pressure)) : setup_.inlet_Pa;
+}
+
+double TubeBalance::left(std::size_t species, std::span<const double> y) const {
+  double c = setup_.chemistry.feed.c_mol_m3[species];
+  for (std::size_t j = 0; j < R_; ++j)
+    c += setup_.chemistry.kinetics.nu(static_cast<int>(species), static_cast<int>(j)) * y[j];
+  return (c - gone_) / c_scale_;
+}
+
+/// Rates with what can run out never below what counts as gone: those just above zero.
+void TubeBalance::rates_just_above(std::span<const double> y, double T) {
+  setup_.chemistry.kinetics.amounts(setup_.chemistry.feed.c_mol_m3, y.first(R_), C_);
+  for (std::size_t i : can_run_out_) C_[i] = std::max(C_[i], gone_);
+  const double X = setup_.chemistry.kinetics.conversion(y.first(R_));
+  setup_.chemistry.concentrations_of_amounts(C_, T, pressure(y), C_);
+  evaluator_(C_, T, X, r_);
+  for (std::size_t j = 0; j < R_; ++j) r_[j] *= setup_.capacity[j];
+}
+
+double TubeBalance::made(std::size_t species) const {
+  double sum = 0;
+  for (std::size_t j = 0; j < R_; ++j)
+    sum += std::max(0.0, setup_.chemistry.kinetics.nu(static_cast<int>(species), static_cast<int>(j)) * r_[j]);
+  return sum;
+}
+
+double TubeBalance::used(std::size_t species) const {
+  double sum = 0;
+  for (std::size_t j = 0; j < R_; ++j)
+    sum += std::max(0.0, -setup_.chemistry.kinetics.nu(static_cast<int>(species), static_cast<int>(j)) * r_[j]);
+  return sum;
+}
+
+/// Reactions that use up what is exhausted are cut to what is made of it; a cut may cut what another one makes, hence the rounds.
+void TubeBalance::share_out() {
+  for (int round = 0; round < 4; ++round) {
+    for (std::size_t i : can_run_out_) {
+      if (!exhausted_[i]) continue;
+      const double use = used(i), make = made(i);
+      if (!(use > make)) continue;
+      for (std::size_t j = 0; j < R_; ++j)
+        if (setup_.chemistry.kinetics.nu(static_cast<int>(i), static_cast<int>(j)) * r_[j] < 0) r_[j] *= make / use;
+    }
+  }
+}
+
+double TubeBalance::wanting(std::size_t species, std::span<const double> y) {
+  rates_just_above(y, temperature(y));
+  const bool was = exhausted_[species];
+  exhausted_[species] = false;  // the others stay cut
+  share_out();
+  exhausted_[species] = was;
+  return used(species) - made(species);
+}
+
+void TubeBalance::operator()(std::span<const double> y, std::span<double> dy) {
+  const double T = temperature(y);
+  if (!(T > 1)) {
+    std::ranges::fill(dy, std::numeric_limits<double>::quiet_NaN());
+    return;
+  }
+  rates_just_above(y, T);
+  share_out();
+  for (std::size_t j = 0; j < R_; ++j) dy[j] = factor_ * r_[j];
+  if (!with_pressure_) return;
+  const double P = pressure(y);
+  const double loss = loss_per_length(setup_, feed_m3_s_, y.first(R_), T, P).value_or(0);
+  dy[R_] = -2 * P / (setup_.inlet_Pa * setup_.inlet_Pa) * length_m_ * loss;
+}
+
+}  // namespace vatwright

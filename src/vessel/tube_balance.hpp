@@ -1,0 +1,56 @@
+#pragma once
+#include "broken_order.hpp"
+#include "setup.hpp"
+
+namespace vatwright {
+
+/// The balances along a tube with any number of reactions:
+///   dxi_j/ds = f m_j r_j(C, T),   T held or from the extents (adiabatic),
+///   d(P/P_in)^2/ds = -2 P/P_in^2 L loss(xi, T, P)     where the pressure acts
+/// s is V/v (f = 1) where nothing but the space time matters, else the fraction of the length (f = V/v).
+///
+/// A reactant of an order below 1 that has run out is `exhausted`: the reactions that use it up are scaled down together to what
+/// others make of it, until they make more than could be used.
+class TubeBalance {
+ public:
+  TubeBalance(const Setup& setup, bool with_pressure, double feed_m3_s);
+
+  [[nodiscard]] std::size_t size() const { return R_ + (with_pressure_ ? 1 : 0); }
+  [[nodiscard]] std::vector<double> at_inlet() const;
+  [[nodiscard]] std::vector<double> scale() const;
+  void operator()(std::span<const double> y, std::span<double> dy);
+  [[nodiscard]] double temperature(std::span<const double> y) const;
+  [[nodiscard]] double pressure(std::span<const double> y) const;
+
+  /// Species that can run out, each once.
+  [[nodiscard]] const std::vector<std::size_t>& can_run_out() const { return can_run_out_; }
+  [[nodiscard]] const std::vector<bool>& exhausted() const { return exhausted_; }
+  void set_exhausted(std::vector<bool> exhausted) { exhausted_ = std::move(exhausted); }
+  /// What is left of a species over what counts as gone; crosses zero where it runs out.
+  [[nodiscard]] double left(std::size_t species, std::span<const double> y) const;
+  /// Use that an exhausted species could have, less what is made of it; crosses zero where it comes back.
+  [[nodiscard]] double wanting(std::size_t species, std::span<const double> y);
+  /// Below this the pressure counts as used up, as (P/P_in)^2.
+  static constexpr double no_pressure = 1e-6;
+  [[nodiscard]] long calls() const { return evaluator_.calls(); }
+  [[nodiscard]] long no_value() const { return evaluator_.no_value(); }
+  [[nodiscard]] bool with_pressure() const { return with_pressure_; }
+
+ private:
+  void rates_just_above(std::span<const double> y, double T);
+  void share_out();
+  [[nodiscard]] double made(std::size_t species) const;
+  [[nodiscard]] double used(std::size_t species) const;
+
+  const Setup& setup_;
+  RateEvaluator evaluator_;
+  std::vector<BrokenOrder> broken_;
+  std::vector<std::size_t> can_run_out_;
+  std::vector<bool> exhausted_;   // per species
+  std::size_t R_ = 0;
+  bool with_pressure_ = false, linear_ = true;
+  double factor_ = 1, feed_m3_s_ = 0, length_m_ = 0, c_scale_ = 1, gone_ = 0;
+  std::vector<double> C_, r_, dT_;
+};
+
+}  // namespace vatwright

@@ -1,0 +1,134 @@
+#include "tube_outcome.hpp"
+
+#include <algorithm>
+#include <cmath>
+#include <sstream>
+
+#include "vatwright/numeric/root.hpp"
+#include "vatwright/vessel/pressure_drop.hpp"
+
+namespace vatwright {
+namespace {
+
+struct BoreOf {
+  double operator()(const StirredTank&) const { return 0; }
+  double operator()(const Tube& tube) const { return tube.bore_m; }
+  double operator()(const PackedTube& tube) const { return tube.bore_m; }
+};
+
+/// Fractions of the length, denser at the inlet where most happens.
+std::vector<double> standing_places(int intervals) {
+  std::vector<double> all;
+  for (int k = 0; k <= intervals; ++k) all.push_back(std::pow(static_cast<double>(k) / intervals, 1.5));
+  return all;
+}
+
+std::vector<double> places_of(const SolvedTube& tube, int intervals) {
+  std::vector<double> all = standing_places(intervals);
+  all.insert(all.end(), tube.places.begin(), tube.places.end());
+  std::ranges::sort(all);
+  const auto same = std::ranges::unique(all);
+  all.erase(same.begin(), same.end());
+  return all;
+}
+
+/// Heat that the wall must take at a place, W per m2 of inner surface.
+double flux_at(const SolvedTube& tube, const Stream& there) {
+  const Setup& setup = tube.setup;
+  const Chemistry& chemistry = setup.chemistry;
+  std::vector<double> C(static_cast<std::size_t>(chemistry.kinetics.species()));
+  std::vector<double> r(setup.capacity.size());
+  chemistry.concentrations(there.xi_mol_m3, there.temperature_K, there.pressure_Pa, C);
+  tube.evaluator(C, there.temperature_K, chemistry.kinetics.conversion(there.xi_mol_m3), r);
+  double heat = 0;
+  for (std::size_t j = 0; j < r.size(); ++j)
+    heat -= setup.capacity[j] * r[j] * chemistry.kinetics.reaction(static_cast<int>(j)).heat->at(there.temperature_K);
+  return heat * std::visit(BoreOf{}, setup.vessel.kind) / 4;  // volume over surface
+}
+
+void add_fluxes(const SolvedTube& tube, const std::vector<double>& places, HeatNeed& heat) {
+  const auto flux = [&](double z) { return flux_at(tube, tube.at(z)); };
+  std::vector<double> at_places;
+  for (double z : places) at_places.push_back(flux(z));
+  for (std::size_t i = 0; i < places.size(); ++i) {
+    double most = at_places[i], least = at_places[i];
+    if (i > 0 && i + 1 < places.size()) {
+      const double before = at_places[i - 1], after = at_places[i + 1];
+      if (most > before && most >= after) most = find_peak(flux, places[i - 1], places[i + 1], 1e-6).value;
+      if (least < before && least <= after)
+        least = -find_peak([&](double z) { return -flux(z); }, places[i - 1], places[i + 1], 1e-6).value;
+    }
+    heat.most_flux_W_m2 = std::max(heat.most_flux_W_m2, most);
+    heat.least_flux_W_m2 = std::min(heat.least_flux_W_m2, least);
+  }
+}
+
+HeatNeed heat_of(const SolvedTube& tube, const Stream& outlet, const std::vector<double>& places) {
+  const Setup& setup = tube.setup;
+  const auto& xi_in = setup.arrives.xi_mol_m3;
+  HeatNeed heat;
+  heat.preheat_W = tube.feed_m3_s * sensible_heat(setup.chemistry, xi_in, setup.arrives.temperature_K, setup.inlet_K);
+  heat.cooling_W = tube.feed_m3_s * released_heat(setup.chemistry, xi_in, outlet.xi_mol_m3, setup.inlet_K);
+  add_fluxes(tube, places, heat);
+  return heat;
+}
+
+Profile profile_of(const SolvedTube& tube) {
+  Profile profile;
+  const double length = length_of(tube.setup.vessel.kind);
+  for (double z : standing_places(40)) {
+    const Stream there = tube.at(z);
+    profile.length_m.push_back(z * length);
+    profile.volume_m3.push_back(z * tube.setup.volume_m3);
+    profile.conversion.push_back(tube.setup.chemistry.kinetics.conversion(there.xi_mol_m3));
+    profile.temperature_K.push_back(there.temperature_K);
+    profile.pressure_Pa.push_back(there.pressure_Pa);
+    profile.medium_K.emplace_back();
+  }
+  return profile;
+}
+
+}  // namespace
+
+VesselOutcome tell(const SolvedTube& tube, Detail detail) {
+  const Setup& setup = tube.setup;
+  VesselOutcome outcome;
+  outcome.outlet = tube.at(1);
+  outcome.conversion = setup.chemistry.kinetics.conversion(outcome.outlet.xi_mol_m3);
+  outcome.isothermal = setup.is_held;
+  outcome.let_down_above_Pa = setup.let_down_above_Pa;
+  outcome.highest_Pa = setup.inlet_Pa;
+  outcome.lowest_Pa = outcome.outlet.pressure_Pa;
+  if (loss_per_length(setup, tube.feed_m3_s, setup.arrives.xi_mol_m3, setup.inlet_K, setup.inlet_Pa))
+    outcome.pressure_drop_Pa = setup.inlet_Pa - outcome.outlet.pressure_Pa;
+  const auto places = places_of(tube, detail == Detail::map ? 1 : 24);
+  outcome.coldest_K = outcome.hottest_K = setup.inlet_K;
+  for (double z : places) {
+    Stream there = tube.at(z);
+    outcome.coldest_K = std::min(outcome.coldest_K, there.temperature_K);
+    outcome.hottest_K = std::max(outcome.hottest_K, there.temperature_K);
+    if (detail != Detail::map) outcome.inside.push_back(std::move(there));
+  }
+  if (detail == Detail::map) return outcome;
+  if (setup.is_held && setup.heat_known()) outcome.heat = heat_of(tube, outcome.outlet, places);
+  if (detail == Detail::profile) outcome.profile = profile_of(tube);
+  return outcome;
+}
+
+std::optional<double> loss_per_length(const Setup& setup, double feed_m3_s, std::span<const double> xi, double T_K,
+                                      double P_Pa) {
+  const auto mass = setup.chemistry.feed_mass();
+  const auto viscosity = setup.chemistry.feed.viscosity_Pa_s;
+  if (!mass || !viscosity) return std::nullopt;
+  return pressure_gradient(setup.vessel.kind,
+                           {feed_m3_s * *mass, *setup.chemistry.density(xi, T_K, P_Pa), *viscosity});
+}
+
+NoAnswer pressure_used_up(double z, double length_m) {
+  std::ostringstream why;
+  why.precision(3);
+  why << "the pressure is used up after " << z * length_m << " m of " << length_m << " m";
+  return {NoAnswer::Kind::does_not_pass, why.str()};
+}
+
+}  // namespace vatwright

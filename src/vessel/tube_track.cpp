@@ -1,0 +1,162 @@
+#include "tube_track.hpp"
+
+#include <algorithm>
+#include <cmath>
+#include <numbers>
+
+namespace vatwright {
+namespace {
+
+constexpr double u_most = y_most;
+constexpr double narrowest = 1e-15;
+constexpr std::size_t most_panels = 4000;
+
+/// cos(pi j k/n), the places and the transform at once.
+template <int n>
+struct Cosines {
+  std::array<std::array<double, n + 1>, n + 1> at{};
+  Cosines() {
+    for (int j = 0; j <= n; ++j)
+      for (int k = 0; k <= n; ++k)
+        at[static_cast<std::size_t>(j)][static_cast<std::size_t>(k)] = std::cos(std::numbers::pi * (j * k % (2 * n)) / n);
+  }
+};
+
+/// sum of a_k T_k(z).
+template <std::size_t n>
+double chebyshev_sum(const std::array<double, n>& a, double z) {
+  double b1 = 0, b2 = 0;
+  for (std::size_t k = n; k-- > 1;) {
+    const double b = a[k] + 2 * z * b1 - b2;
+    b2 = b1;
+    b1 = b;
+  }
+  return a[0] + z * b1 - b2;
+}
+
+}  // namespace
+
+Place TubeTrack::place_of(double u) const {
+  const double L = way_.length();
+  return {-L * std::expm1(-u), L * std::exp(-u)};
+}
+
+double TubeTrack::slowness(double u) {
+  const Place p = place_of(u);
+  return p.s / way_.rate(p.d, p.s);
+}
+
+bool TubeTrack::add_panel(double u0, double u1) {
+  static const Cosines<degree> cosines;
+  std::array<double, degree + 1> g{}, a{};
+  double largest = 0;
+  for (std::size_t k = 0; k <= degree; ++k) {
+    g[k] = slowness(u0 + (u1 - u0) * (1 + cosines.at[1][k]) / 2);
+    if (!(g[k] > 0) || !std::isfinite(g[k])) return false;
+    largest = std::max(largest, g[k]);
+  }
+  for (std::size_t j = 0; j <= degree; ++j) {
+    double sum = (g[0] + cosines.at[j][degree] * g[degree]) / 2;
+    for (std::size_t k = 1; k < degree; ++k) sum += cosines.at[j][k] * g[k];
+    a[j] = sum * 2 / degree;
+  }
+  a[0] /= 2;
+  a[degree] /= 2;
+  const double last = std::max({std::abs(a[degree]), std::abs(a[degree - 1]), std::abs(a[degree - 2])});
+  const double cancelled = way_.kind() == EndKind::equilibrium ? 2e-14 * std::exp(u1) : 0;  // of the rate, near its zero
+  if (last > largest * (1e-12 + cancelled) && u1 - u0 > narrowest * std::max(1.0, u1)) return false;
+
+  std::array<double, degree + 2> P{};  // the integral from u0
+  for (std::size_t j = 1; j <= degree + 1; ++j) {
+    const double above = j + 1 <= degree ? a[j + 1] : 0;
+    P[j] = ((j == 1 ? 2 : 1) * a[j - 1] - above) / (2 * static_cast<double>(j)) * (u1 - u0) / 2;
+  }
+  Panel panel{u0, u1, panels_.empty() ? 0 : panels_.back().t1, 0, {}};
+  // P(z) - P(-1) = (1 + z) Q(z): (1 + z) T_k = T_k + (T_(k+1) + T_(k-1))/2, taken apart from the top
+  panel.Q[degree] = 2 * P[degree + 1];
+  for (std::size_t k = degree; k >= 1; --k) {
+    const double above = k + 1 <= degree ? panel.Q[k + 1] : 0;
+    const double q = 2 * (P[k] - panel.Q[k]) - above;
+    panel.Q[k - 1] = k == 1 ? q / 2 : q;
+  }
+  panel.t1 = panel.t0 + value(panel, 2);
+  panels_.push_back(panel);
+  return true;
+}
+
+bool TubeTrack::extend() {
+  if (ended_ || failed_) return false;
+  const double u0 = panels_.empty() ? 0 : panels_.back().u1;
+  if (u0 >= u_most) {
+    ended_ = true;
+    return false;
+  }
+  double u1 = std::min(u0 + width_, u_most);
+  for (double d : kinks_) {
+    const double u = d < way_.length() ? -std::log1p(-d / way_.length()) : u_most;
+    if (u > u0 * (1 + 1e-12) + 1e-14) {
+      u1 = std::min(u1, u);
+      break;
+    }
+  }
+  while (!add_panel(u0, u1)) {
+    if (way_.kind() == EndKind::equilibrium && u0 > 25) {  // the rest is the rounding of the rate
+      ended_ = true;
+      return false;
+    }
+    if (u1 - u0 <= narrowest * std::max(1.0, u0) || panels_.size() > most_panels) {
+      failed_ = true;
+      return false;
+    }
+    u1 = u0 + (u1 - u0) / 2;
+  }
+  width_ = std::min(2 * (u1 - u0), 2.5);
+  return true;
+}
+
+double TubeTrack::value(const Panel& panel, double w) { return w * chebyshev_sum(panel.Q, w - 1); }
+
+/// w in [0, 2] where the panel has come to t: Newton's method, kept inside its bracket.
+double TubeTrack::solve(const Panel& panel, double t) {
+  const double wanted = t - panel.t0, whole = panel.t1 - panel.t0;
+  if (wanted <= 0) return 0;
+  double lo = 0, hi = 2, w = 2 * wanted / whole;
+  for (int i = 0; i < 100; ++i) {
+    const double excess = value(panel, w) - wanted;
+    (excess > 0 ? hi : lo) = w;
+    const double h = std::max(1e-7 * w, 1e-300);
+    const double slope = (value(panel, std::min(2.0, w + h)) - value(panel, w - h)) / (std::min(2.0, w + h) - (w - h));
+    double next = w - excess / slope;
+    if (!(next > lo && next < hi)) next = (lo + hi) / 2;
+    const bool settled = std::abs(next - w) <= 2e-16 * w;
+    w = next;
+    if (settled || hi - lo <= 2e-16 * hi) break;
+  }
+  return w;
+}
+
+TubeTrack::Reading TubeTrack::read(double t) {
+  while ((panels_.empty() || panels_.back().t1 < t) && extend()) {
+  }
+  if (panels_.empty() || panels_.back().t1 < t) return {{way_.length(), 0}, true};
+  const auto panel = std::ranges::lower_bound(panels_, t, {}, &Panel::t1);
+  return {place_of(panel->u0 + (panel->u1 - panel->u0) * solve(*panel, t) / 2), false};
+}
+
+std::optional<double> TubeTrack::time_to(Place place) {
+  if (!(place.s > 0) || !(place.d > 0)) return std::nullopt;
+  const double L = way_.length();
+  const double u = place.d <= place.s ? -std::log1p(-place.d / L) : -std::log(place.s / L);
+  while ((panels_.empty() || panels_.back().u1 < u) && extend()) {
+  }
+  if (panels_.empty() || panels_.back().u1 < u) return std::nullopt;
+  const auto panel = std::ranges::lower_bound(panels_, u, {}, &Panel::u1);
+  return panel->t0 + value(*panel, 2 * (u - panel->u0) / (panel->u1 - panel->u0));
+}
+
+std::optional<double> TubeTrack::end_time() const {
+  if (!ended_ || panels_.empty()) return std::nullopt;
+  return panels_.back().t1;
+}
+
+}  // namespace vatwright
