@@ -37,8 +37,9 @@ std::string help_text(const Command& command) {
   std::vector<Page::Item> items;
   for (std::string_view name : command.options) {
     const Option& option = option_of(name);
-    items.push_back({std::string(name) + (option.value.empty() ? "" : std::string(" ").append(option.value)),
-                     {std::string(option.help)}});
+    std::string label(name);
+    if (!option.value.empty()) label.append(" ").append(option.value);
+    items.push_back({label, {std::string(option.help)}});
   }
   items.push_back({"--help", {"this text"}});
   page.items(items);

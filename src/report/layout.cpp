@@ -142,14 +142,14 @@ std::vector<std::string> wrap(std::string_view text, int width) {
   return lines;
 }
 
-std::string Page::bold(const std::string& text) const {
-  return look_.colour ? std::string("\x1b[1m").append(text).append("\x1b[0m") : text;
+void Page::line(const std::string& text, Weight weight) {
+  const bool bold = look_.colour && weight == Weight::bold;
+  text_.append(bold ? "\x1b[1m" : "").append(look_.ascii ? to_ascii(text) : text).append(bold ? "\x1b[0m\n" : "\n");
 }
-void Page::line(const std::string& text) { text_.append(look_.ascii ? to_ascii(text) : text) += '\n'; }
 void Page::blank() { line(""); }
 
 void Page::title(std::string_view text) {
-  for (const std::string& part : wrap(printable(text), page_width)) line(bold(part));
+  for (const std::string& part : wrap(printable(text), page_width)) line(part, Weight::bold);
 }
 
 void Page::heading(std::string_view text) {
@@ -194,7 +194,7 @@ void Page::table(const Table& given) {
       for (const std::string& piece : wrap(part, widths[j])) head.back().push_back(piece);
     head_lines = std::max(head_lines, head.back().size());
   }
-  for (std::size_t i = 0; i < head_lines; ++i) line(bold(joined_line(head, i, table.columns, widths)));
+  for (std::size_t i = 0; i < head_lines; ++i) line(joined_line(head, i, table.columns, widths), Weight::bold);
   std::string rule;
   for (int i = 0, n = std::accumulate(widths.begin(), widths.end(), gap * (static_cast<int>(widths.size()) - 1)); i < n;
        ++i)

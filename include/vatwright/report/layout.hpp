@@ -53,8 +53,8 @@ class Page {
   [[nodiscard]] std::string text() const;
 
  private:
-  void line(const std::string& text);
-  [[nodiscard]] std::string bold(const std::string& text) const;
+  enum class Weight { plain, bold };
+  void line(const std::string& text, Weight weight = Weight::plain);
 
   Look look_;
   std::string text_;
