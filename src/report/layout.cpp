@@ -62,6 +62,19 @@ std::string joined_line(const Block& block, std::size_t line, const std::vector<
   return without_trailing(text);
 }
 
+/// Fills figures up with spaces behind, so that flush right their decimal points meet.
+void align_points(Table& table, std::size_t column) {
+  const auto behind = [](const std::string& cell) {
+    const bool number = cell.find_first_of("0123456789") != std::string::npos;
+    return number ? cell.size() - std::min(cell.find_first_of(".e"), cell.size()) : std::string::npos;
+  };
+  std::size_t most = 0;
+  for (const auto& row : table.rows)
+    if (behind(row[column]) != std::string::npos) most = std::max(most, behind(row[column]));
+  for (auto& row : table.rows)
+    if (behind(row[column]) != std::string::npos) row[column].append(most - behind(row[column]), ' ');
+}
+
 std::vector<int> natural_widths(const Table& table) {
   std::vector<int> widths;
   for (std::size_t j = 0; j < table.columns.size(); ++j) {
@@ -185,6 +198,8 @@ void Page::table(const Table& given) {
   Table table = given;
   for (auto& row : table.rows)
     for (std::string& cell : row) cell = printable(cell);
+  for (std::size_t j = 0; j < table.columns.size(); ++j)
+    if (table.columns[j].align == Align::point) align_points(table, j);
   const std::vector<int> widths = fitted_widths(table);
   Block head;
   std::size_t head_lines = 0;
@@ -204,7 +219,8 @@ void Page::table(const Table& given) {
     Block block;
     std::size_t lines = 1;
     for (std::size_t j = 0; j < row.size(); ++j) {
-      block.push_back(wrap(row[j], widths[j]));
+      const bool whole = table.columns[j].align == Align::point && width_of(row[j]) <= widths[j];
+      block.push_back(whole ? std::vector{row[j]} : wrap(row[j], widths[j]));
       lines = std::max(lines, block.back().size());
     }
     for (std::size_t i = 0; i < lines; ++i) line(joined_line(block, i, table.columns, widths));

@@ -68,12 +68,12 @@ void add_vessels(Page& page, const HookupRating& rating, const Look& look) {
   Table table;
   table.columns = {{"vessel", Align::left, true},
                    {"kind"},
-                   {"share\n%", Align::right},
-                   {"X\n%", Align::right},
-                   {with_unit("outlet", Shown::temperature, look), Align::right},
-                   {with_unit("hottest", Shown::temperature, look), Align::right},
-                   {with_unit("outlet", Shown::pressure, look), Align::right},
-                   {with_unit("cooling", Shown::heat, look), Align::right},
+                   {"share\n%", Align::point},
+                   {"X\n%", Align::point},
+                   {with_unit("outlet", Shown::temperature, look), Align::point},
+                   {with_unit("hottest", Shown::temperature, look), Align::point},
+                   {with_unit("outlet", Shown::pressure, look), Align::point},
+                   {with_unit("cooling", Shown::heat, look), Align::point},
                    {"medium", Align::left, true}};
   for (const Rating& vessel : rating.vessels) {
     const auto outlet = [&](double Stream::*what) {
@@ -120,8 +120,8 @@ void add_limit_rows(Table& table, const Rating& rating, const Look& look) {
 
 void add_limits(Page& page, const HookupRating& rating, const Look& look) {
   Table table;
-  table.columns = {{"vessel", Align::left, true}, {"limit", Align::left, true}, {"value", Align::right},
-                   {"bound", Align::right},       {"margin", Align::right},     {"state"}};
+  table.columns = {{"vessel", Align::left, true}, {"limit", Align::left, true}, {"value", Align::point},
+                   {"bound", Align::point},       {"margin", Align::point},     {"state"}};
   for (const Rating& vessel : rating.vessels) add_limit_rows(table, vessel, look);
   add_limit_rows(table, rating.whole, look);
   if (table.rows.empty()) return;
@@ -132,8 +132,8 @@ void add_limits(Page& page, const HookupRating& rating, const Look& look) {
 void add_states(Page& page, const HookupRating& rating, const Look& look) {
   Table table;
   table.columns = {{"vessel", Align::left, true},
-                   {"X\n%", Align::right},
-                   {with_unit("temperature", Shown::temperature, look), Align::right},
+                   {"X\n%", Align::point},
+                   {with_unit("temperature", Shown::temperature, look), Align::point},
                    {"stable"},
                    {"reached by the start"}};
   bool complete = true;
@@ -154,11 +154,11 @@ void add_profile(Page& page, const Rating& vessel, const Look& look) {
   constexpr std::size_t rows = 8;
   const Profile& profile = *vessel.profile;
   Table table;
-  table.columns = {{with_unit("from inlet", Shown::length, look), Align::right},
-                   {"X\n%", Align::right},
-                   {with_unit("temperature", Shown::temperature, look), Align::right},
-                   {with_unit("pressure", Shown::pressure, look), Align::right},
-                   {with_unit("medium", Shown::temperature, look), Align::right}};
+  table.columns = {{with_unit("from inlet", Shown::length, look), Align::point},
+                   {"X\n%", Align::point},
+                   {with_unit("temperature", Shown::temperature, look), Align::point},
+                   {with_unit("pressure", Shown::pressure, look), Align::point},
+                   {with_unit("medium", Shown::temperature, look), Align::point}};
   const std::size_t n = profile.length_m.size();
   const std::size_t shown = std::min(rows, n);
   for (std::size_t i = 0; i < shown; ++i) {

@@ -67,13 +67,15 @@ std::string with_unit(const std::string& name, Shown shown, const Look& look) {
   return name + "\n" + unit_of(shown, look.units);
 }
 
-void add_head(Page& page, const std::string& command, const Head& head, const Look& look) {
+void add_head(Page& page, const std::string& command, const Head& head, const Look& look,
+              const std::vector<Page::Item>& more) {
   page.title("Vatwright " + head.made_by.version + ", " + command);
   std::vector<Page::Item> items = {{"site", {head.site}}};
   if (!head.duty.empty()) items.push_back({"duty", {head.duty}});
   if (!head.target.empty()) items.push_back({"asked", head.target});
   if (head.feed_m3_s) items.push_back({"feed rate", {show(*head.feed_m3_s, Shown::feed, look.units)}});
   if (head.stamp) items.push_back({"stamp", {*head.stamp}});
+  items.insert(items.end(), more.begin(), more.end());
   page.items(items);
 }
 

@@ -23,7 +23,9 @@ std::string words_of(const std::vector<Interval>& windows, const Look& look);
 /// A column head with the unit below it.
 std::string with_unit(const std::string& name, Shown shown, const Look& look);
 
-void add_head(Page& page, const std::string& command, const Head& head, const Look& look);
+/// What was asked, of what; `more` belongs to the command.
+void add_head(Page& page, const std::string& command, const Head& head, const Look& look,
+              const std::vector<Page::Item>& more = {});
 /// Assumed values, what was not asked, cautions, each once.
 void add_tail(Page& page, const Head& head, const std::vector<Caution>& more = {});
 /// Texts of cautions with the tags they belong to; equal texts once.

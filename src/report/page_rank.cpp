@@ -54,9 +54,9 @@ Table main_table(const RankAnswer& answer, const Look& look) {
   table.columns = {{"", Align::right},
                    {"hookup", Align::left, true},
                    {"verdict"},
-                   {"X\n%", Align::right},
-                   {with_unit("ceiling", Shown::feed, look), Align::right}};
-  if (answer.by == By::yield) table.columns.push_back({"yield\n%", Align::right});
+                   {"X\n%", Align::point},
+                   {with_unit("ceiling", Shown::feed, look), Align::point}};
+  if (answer.by == By::yield) table.columns.push_back({"yield\n%", Align::point});
   const Ranking& ranking = answer.ranking;
   for (std::size_t i = 0; i < ranking.top.size(); ++i)
     table.rows.push_back(row_of(answer, std::to_string(i + 1), ranking.top[i], verdict_of(answer, i), look));
@@ -120,10 +120,10 @@ void add_stair(Page& page, const RankAnswer& answer, const Look& look) {
   const Shown shown = shown_of(answer.by);
   Table table;
   table.columns = {
-      {"vessels", Align::right},
+      {"vessels", Align::point},
       {"the best with so many", Align::left, true},
-      {with_unit(shown == Shown::feed ? "ceiling" : std::string(text_of(answer.by)), shown, look), Align::right},
-      {"gain", Align::right}};
+      {with_unit(shown == Shown::feed ? "ceiling" : std::string(text_of(answer.by)), shown, look), Align::point},
+      {"gain", Align::point}};
   for (std::size_t i = 0; i < stair.size(); ++i) {
     const auto more = i == 0 ? std::nullopt : gain(stair[i - 1], stair[i], answer.by);
     table.rows.push_back({std::to_string(stair[i].vessel_count), stair[i].best.value_or("-"),
@@ -161,8 +161,8 @@ void add_cases(Page& page, const RankAnswer& answer, const Look& look) {
 
 std::string to_page(const RankAnswer& answer, const Look& look) {
   Page page{look};
-  add_head(page, "rank", answer.head, look);
-  page.items({{"order", {order_words(answer)}}, {"space", {space_words(answer.ranking)}}});
+  add_head(page, "rank", answer.head, look,
+           {{"order", {order_words(answer)}}, {"space", {space_words(answer.ranking)}}});
   page.blank();
   if (answer.ranking.top.empty())
     page.paragraph("No hookup: no vessel is offered.");

@@ -14,10 +14,10 @@ Table main_table(const ScreenAnswer& answer, const Look& look) {
   table.columns = {{"vessel", Align::left, true},
                    {"kind"},
                    {"verdict"},
-                   {"X\n%", Align::right},
-                   {with_unit("hottest", Shown::temperature, look), Align::right},
-                   {with_unit("floor", Shown::feed, look), Align::right},
-                   {with_unit("ceiling", Shown::feed, look), Align::right},
+                   {"X\n%", Align::point},
+                   {with_unit("hottest", Shown::temperature, look), Align::point},
+                   {with_unit("floor", Shown::feed, look), Align::point},
+                   {with_unit("ceiling", Shown::feed, look), Align::point},
                    {"what ends it\nabove", Align::left, true}};
   for (std::size_t i = 0; i < answer.vessels.size(); ++i) {
     const Rating& vessel = answer.vessels[i];

@@ -60,6 +60,18 @@ TEST_CASE("figures stand flush right, texts flush left, nothing trails", "[repor
         "T       81.25  w\n");
 }
 
+TEST_CASE("decimal points meet", "[report][layout]") {
+  Page page{Look{}};
+  page.table({{{"flow", Align::point}}, {{"9"}, {"81.25"}, {"-"}, {"1.2e-05"}}});
+  CHECK(page.text() ==
+        "    flow\n"
+        "--------\n"
+        " 9\n"
+        "81.25\n"
+        "       -\n"
+        " 1.2e-05\n");
+}
+
 TEST_CASE("bold is there only in colour, and only around whole lines", "[report][layout]") {
   Look look;
   look.colour = true;

@@ -18,7 +18,8 @@ std::string to_ascii(std::string_view text);
 /// Lines of at most `width` columns, broken at spaces, words too long for a line inside; at least one line.
 std::vector<std::string> wrap(std::string_view text, int width);
 
-enum class Align { left, right };
+/// point: figures whose decimal points stand below each other.
+enum class Align { left, right, point };
 struct Column {
   std::string head;  ///< lines of the head joined by '\n': a name, then a unit
   Align align = Align::left;
