@@ -96,8 +96,8 @@ double released_heat(const Chemistry& chemistry, std::span<const double> xi_in, 
 double adiabatic_temperature(const Chemistry& chemistry, std::span<const double> xi_in, double T_in_K,
                              std::span<const double> xi, double added_J_m3) {
   const double nowhere = std::numeric_limits<double>::quiet_NaN();
-  // f(T) = sensible(xi_in, T_in, T) - released(xi_in, xi, T) - added; its slope is the heat capacity at xi where the heats
-  // of reaction move with the heat capacities.
+  // f(T) = sensible(xi_in, T_in, T) - released(xi_in, xi, T) - added; its slope is the heat capacity at xi where the
+  // heats of reaction move with the heat capacities.
   double T = T_in_K;
   for (int i = 0; i < 60; ++i) {
     const double excess =

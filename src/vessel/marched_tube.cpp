@@ -16,7 +16,8 @@ struct Stretch {
   std::vector<bool> exhausted;
 };
 
-/// Marches the balances of a tube through every place where something runs out or comes back, and keeps what it marched.
+/// Marches the balances of a tube through every place where something runs out or comes back, and keeps what it
+/// marched.
 class TubeMarch {
  public:
   explicit TubeMarch(TubeBalance balance) : balance_(std::move(balance)), y_(balance_.at_inlet()) {}
@@ -92,15 +93,25 @@ class TubeMarch {
       }
   }
 
+  /// What is made faster than it could be used comes back before the next step.
+  std::vector<bool> still_exhausted() {
+    std::vector<bool> exhausted = balance_.exhausted();
+    for (std::size_t i : balance_.can_run_out())
+      if (exhausted[i] && balance_.wanting(i, y_) < 0) exhausted[i] = false;
+    balance_.set_exhausted(exhausted);
+    return exhausted;
+  }
+
   void step_to(double s) {
-    const std::vector<bool> exhausted = balance_.exhausted();
+    const std::vector<bool> exhausted = still_exhausted();
     const auto f = [&](double, std::span<const double> y, std::span<double> dy) { balance_(y, dy); };
     struct Watch {
       TubeBalance* balance;
       std::size_t species;
       bool is_exhausted;
       double operator()(double, std::span<const double> y) const {
-        return is_exhausted ? balance->wanting(species, y) : balance->left(species, y);
+        // neither made nor used counts as wanting, so that being made is a crossing
+        return is_exhausted ? balance->wanting(species, y) + 1e-300 : balance->left(species, y);
       }
     };
     std::vector<Watch> watches;
@@ -140,21 +151,24 @@ class TubeMarch {
   bool used_up_ = false;
 };
 
-/// A tube with several reactions, or a gas that loses pressure. Without that loss one march in V/v, made in standing stages,
-/// serves all feed rates; with it each rate is marched by itself.
+/// A tube with several reactions, or a gas that loses pressure. Without that loss one march in V/v, made in standing
+/// stages, serves all feed rates; with it each rate is marched by itself.
 class MarchedTube final : public Solver {
  public:
   explicit MarchedTube(const Setup& setup)
       : setup_(setup),
-        with_pressure_(setup.is_gas && loss_per_length(setup, 1, setup.arrives.xi_mol_m3, setup.inlet_K, setup.inlet_Pa)),
+        with_pressure_(setup.is_gas &&
+                       loss_per_length(setup, 1, setup.arrives.xi_mol_m3, setup.inlet_K, setup.inlet_Pa)),
         tell_rate_(setup.chemistry.kinetics) {
     if (!with_pressure_) shared_.emplace(TubeBalance(setup, false, 1));
   }
 
   Outcome<VesselOutcome> at(double feed_m3_s, Detail detail) override {
     const double length = length_of(setup_.vessel.kind), t = setup_.volume_m3 / feed_m3_s;
-    const double loss = with_pressure_ ? 0 : loss_per_length(setup_, feed_m3_s, setup_.arrives.xi_mol_m3, setup_.inlet_K,
-                                                             setup_.inlet_Pa).value_or(0);
+    const double loss =
+        with_pressure_
+            ? 0
+            : loss_per_length(setup_, feed_m3_s, setup_.arrives.xi_mol_m3, setup_.inlet_K, setup_.inlet_Pa).value_or(0);
     if (setup_.inlet_Pa - loss * length <= 0) return pressure_used_up(setup_.inlet_Pa / (loss * length), length);
     std::optional<TubeMarch> own;
     if (with_pressure_) own.emplace(TubeBalance(setup_, true, feed_m3_s));
@@ -171,8 +185,10 @@ class MarchedTube final : public Solver {
       march.read(z * end, y);
       const TubeBalance& balance = march.balance();
       const double P = with_pressure_ ? balance.pressure(y) : setup_.inlet_Pa - loss * length * z;
-      return Stream{feed_m3_s, {y.begin(), y.begin() + static_cast<std::ptrdiff_t>(setup_.capacity.size())},
-                    balance.temperature(y), P};
+      return Stream{feed_m3_s,
+                    {y.begin(), y.begin() + static_cast<std::ptrdiff_t>(setup_.capacity.size())},
+                    balance.temperature(y),
+                    P};
     };
     VesselOutcome outcome = tell({setup_, feed_m3_s, stream_at, places(march, end), tell_rate_}, detail);
     if (detail != Detail::map) outcome.residual = march.residual(end);

@@ -10,12 +10,13 @@ namespace {
 
 /// One steady state with what is needed to judge it.
 struct Found {
-  double xi = 0, distance_out = 0;  // distance from the inlet, signed by xi, to full digits
+  double xi = 0, distance_out = 0;  // distance from the inlet, signed as xi, to full digits
+  double left = 0;                  // distance from the end of the way, to full digits
   bool stable = false, at_end = false;
 };
 
-/// All states of a tank with one reaction: those along the way that the reaction goes, and the inlet itself where the rate there
-/// is zero.
+/// All states of a tank with one reaction: those along the way that the reaction goes, and the inlet itself where the
+/// rate there is zero.
 class OneReactionTank final : public Solver {
  public:
   explicit OneReactionTank(const Setup& setup) : setup_(setup), tell_rate_(setup.chemistry.kinetics) {
@@ -24,8 +25,7 @@ class OneReactionTank final : public Solver {
 
   Outcome<VesselOutcome> at(double feed_m3_s, Detail detail) override {
     if (moves_with_feed()) build(setup_.agitator_W / feed_m3_s);
-    if (path_->no_value() > 0)
-      return cannot_tell("a rate has no finite value where a species that slows it is absent");
+    if (path_->no_value() > 0) return cannot_tell("a rate has no finite value where a species that slows it is absent");
     const double tau = setup_.volume_m3 / feed_m3_s;
     bool confined = false;
     std::vector<Found> found;
@@ -83,11 +83,11 @@ class OneReactionTank final : public Solver {
     if (idle_inlet_) {
       // stable unless the reaction starts by itself: the slope of the rate against -1/tau
       const bool starts = curve_ && curve_->log_time(-y_most + 1) < std::log(tau);
-      found.push_back({xi_in, 0, !starts, false});
+      found.push_back({xi_in, 0, 0, !starts, false});
     }
     for (const auto& state : along.states)
       found.push_back({state.at_end ? curve_->way().xi_end() : curve_->way().xi(state.place.d, state.place.s),
-                       curve_->way().sign() * state.place.d, state.stable, state.at_end});
+                       curve_->way().sign() * state.place.d, state.place.s, state.stable, state.at_end});
     std::ranges::sort(found, {}, &Found::distance_out);
     return std::nullopt;
   }
@@ -159,17 +159,22 @@ class OneReactionTank final : public Solver {
     }
     const double d = std::abs(state.distance_out);
     if (d == 0) return 0;
-    const double made = tau * (curve_ ? curve_->way().rate(d, distance_left(state)) : 0);
-    return std::abs(made - d) / (made + d + std::abs(xi_in));
+    const double made = tau * (curve_ ? curve_->way().rate(d, state.left) : 0);
+    // near equilibrium what is made and unmade is far more than the difference: both are terms of the balance
+    const bool cancels = curve_ && curve_->way().kind() == EndKind::equilibrium && state.left > 0;
+    const double both_ways = cancels ? made * curve_->way().length() / state.left : made;
+    return std::abs(made - d) / (both_ways + d + std::abs(xi_in));
   }
-  double distance_left(const Found& state) { return std::abs(curve_->way().xi_end() - state.xi); }
 
   Outcome<VesselOutcome> outcome_of(const std::vector<Found>& found, const Arrival& arrival, double feed_m3_s,
                                     Detail detail) {
     VesselOutcome outcome;
     for (std::size_t i = 0; i < found.size(); ++i)
-      outcome.states.push_back({{found[i].xi}, conversion(found[i].xi), path_->temperature(found[i].xi),
-                                found[i].stable, i == arrival.state});
+      outcome.states.push_back({{found[i].xi},
+                                conversion(found[i].xi),
+                                path_->temperature(found[i].xi),
+                                found[i].stable,
+                                i == arrival.state});
     outcome.start_peak_K = arrival.peak_K;
     outcome.residual = residual_of(found[arrival.state], setup_.volume_m3 / feed_m3_s);
     tell_of_tank(setup_, feed_m3_s, outcome, detail);

@@ -13,6 +13,7 @@ namespace {
 class OneReactionTube final : public Solver {
  public:
   explicit OneReactionTube(const Setup& setup) : setup_(setup), path_(setup, 0), tell_rate_(setup.chemistry.kinetics) {
+    if (path_.rate(path_.inlet(), 0) == 0) return;  // nothing happens, even where a seed would start it
     for (double sign : {1.0, -1.0})
       if (!track_)
         if (auto way = Way::find(path_, sign)) track_.emplace(*way);
@@ -49,7 +50,8 @@ class OneReactionTube final : public Solver {
     if (share == 1) {  // only what runs out inside gets there
       read(std::numeric_limits<double>::max());
       const auto end = track_->end_time();
-      return end && way.kind() == EndKind::depleted && runs_out() ? std::optional(setup_.volume_m3 / *end) : std::nullopt;
+      return end && way.kind() == EndKind::depleted && runs_out() ? std::optional(setup_.volume_m3 / *end)
+                                                                  : std::nullopt;
     }
     const double s = (X_end - X) / (X_end - X_in) * way.length();
     const auto t = track_->time_to({share * way.length(), s});
@@ -83,8 +85,8 @@ class OneReactionTube final : public Solver {
     return slower < 0.99 * slow;
   }
 
-  /// |integral of d xi/R - V/v|, as the extent that it is at the outlet, over the extent made. By Gauss and Kronrod's rule in
-  /// -ln(s), rates reckoned anew.
+  /// |integral of d xi/R - V/v|, as the extent that it is at the outlet, over the extent made. By Gauss and Kronrod's
+  /// rule in -ln(s), rates reckoned anew.
   double residual(const TubeTrack::Reading& out, double t) {
     if (!track_ || out.place.d <= 0) return 0;
     Way& way = track_->way();
@@ -94,13 +96,18 @@ class OneReactionTube final : public Solver {
       const double s = L * std::exp(-u), d = -L * std::expm1(-u);
       return s / way.rate(d, s);
     };
-    const double u_sound = way.kind() == EndKind::equilibrium ? std::min(u_out, 25.0) : u_out;
+    const bool cancels =
+        way.kind() == EndKind::equilibrium;  // its rate loses digits as e^u, which the extent does not see
+    const double u_sound = cancels ? std::min(u_out, 30.0) : u_out;
     double total = 0, at = 0;
     while (at < u_sound) {
       const double next = std::min(u_sound, at + 2);
-      const auto piece = integrate(slowness, at, next, {.rel_tol = 1e-11, .abs_tol = 1e-12 * t});
-      if (const auto* sum = answer(piece)) total += sum->value;
-      else return 1;
+      const double rel_tol = cancels ? std::clamp(1e-14 * std::exp(next), 1e-11, 0.1) : 1e-11;
+      const auto piece = integrate(slowness, at, next, {.rel_tol = rel_tol, .abs_tol = 1e-12 * t});
+      if (const auto* sum = answer(piece))
+        total += sum->value;
+      else
+        return 1;
       at = next;
     }
     if (out.through || u_sound < u_out) return std::max(0.0, total - t) / t;  // the end was reached in less than V/v

@@ -13,8 +13,9 @@ enum class EndKind {
   confined      ///< the model says nothing beyond (a measured table, no temperature)
 };
 
-/// A composition on the line of the one reaction, c(xi) = c(anchor) + nu (xi - xi(anchor)). Two anchors, at the inlet and at the
-/// end, keep the amounts exact to rounding where they are small: a reactant nearly gone, a seed of a product.
+/// A composition on the line of the one reaction, c(xi) = c(anchor) + nu (xi - xi(anchor)). Two anchors, at the inlet
+/// and at the end, keep the amounts exact to rounding where they are small: a reactant nearly gone, a seed of a
+/// product.
 struct Anchor {
   double xi = 0;
   std::vector<double> c;
@@ -43,8 +44,8 @@ class RatePath {
   [[nodiscard]] Anchor at(const Anchor& from, double offset) const;
 
   [[nodiscard]] bool reversible() const { return reversible_; }
-  /// The rate falls (or stays) all the way forward, known without looking: held liquid, one way, orders of reactants >= 0, of
-  /// products <= 0, no adsorption.
+  /// The rate falls (or stays) all the way forward, known without looking: held liquid, one way, orders of reactants >=
+  /// 0, of products <= 0, no adsorption.
   [[nodiscard]] bool falls() const { return falls_; }
   [[nodiscard]] const Setup& setup() const { return setup_; }
   [[nodiscard]] double nu(std::size_t i) const { return nu_[i]; }

@@ -32,10 +32,14 @@ struct CapacityOf {
   }
   Outcome<double> operator()(const PackedTube& tube) const {
     switch (per) {
-      case Per::fluid: return tube.voidage;
-      case Per::bed: return 1.0;
-      case Per::catalyst: return tube.bulk_density_kg_m3;
-      case Per::unsaid: break;
+      case Per::fluid:
+        return tube.voidage;
+      case Per::bed:
+        return 1.0;
+      case Per::catalyst:
+        return tube.bulk_density_kg_m3;
+      case Per::unsaid:
+        break;
     }
     return cannot_tell("what its rate counts per (fluid, bed, catalyst) must be said for a packed tube");
   }
@@ -46,8 +50,7 @@ std::optional<NoAnswer> add_capacities(Setup& setup) {
     const Reaction& reaction = setup.chemistry.kinetics.reaction(j);
     auto capacity = std::visit(CapacityOf{per_of(reaction), setup.operation}, setup.vessel.kind);
     const double* value = answer(capacity);
-    if (value == nullptr)
-      return cannot_tell("reaction " + reaction.name + ": " + std::get<NoAnswer>(capacity).why);
+    if (value == nullptr) return cannot_tell("reaction " + reaction.name + ": " + std::get<NoAnswer>(capacity).why);
     setup.capacity.push_back(*value);
     if (const auto& law = std::get_if<RateLaw>(&reaction.forward); law && reaction.reverse)
       if (per_of(reaction) != reaction.reverse->per && reaction.reverse->per != Per::unsaid)
@@ -72,8 +75,8 @@ void add_sizes(Setup& setup) {
   setup.is_gas = setup.chemistry.feed.phase == Phase::gas;
   setup.is_held = setup.operation.thermal == Thermal::hold;
   setup.inlet_K = setup.is_held ? setup.operation.hold_K : setup.arrives.temperature_K;
-  setup.volume_m3 = tank != nullptr ? fluid_volume(*tank, setup.is_gas ? 1 : setup.operation.fill)
-                                    : inner_volume(setup.vessel.kind);
+  setup.volume_m3 =
+      tank != nullptr ? fluid_volume(*tank, setup.is_gas ? 1 : setup.operation.fill) : inner_volume(setup.vessel.kind);
   setup.agitator_W = tank != nullptr ? tank->agitator_W : 0;
   setup.inlet_Pa = setup.arrives.pressure_Pa;
   if (const auto asked = setup.operation.pressure_Pa) {

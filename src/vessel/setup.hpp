@@ -15,13 +15,13 @@ struct Setup {
   const Chemistry& chemistry;
   const Operation& operation;
   const Start& start;
-  Stream arrives;                     ///< as it arrives
+  Stream arrives;  ///< as it arrives
   bool is_tank = false, is_gas = false, is_held = true;
-  double inlet_K = 0;                 ///< held: the hold temperature
-  double inlet_Pa = 0;                ///< after a let-down
+  double inlet_K = 0;   ///< held: the hold temperature
+  double inlet_Pa = 0;  ///< after a let-down
   std::optional<double> let_down_above_Pa;
-  double volume_m3 = 0;               ///< that the coordinate counts: working fluid, inside of tubes, bed
-  std::vector<double> capacity;       ///< per reaction, fluid volume, bed volume or catalyst mass per m3 of `volume_m3`
+  double volume_m3 = 0;          ///< that the coordinate counts: working fluid, inside of tubes, bed
+  std::vector<double> capacity;  ///< per reaction, fluid volume, bed volume or catalyst mass per m3 of `volume_m3`
   double agitator_W = 0;
   HeatKnowledge heat;
 

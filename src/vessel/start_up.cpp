@@ -79,7 +79,8 @@ class Transient {
     const double X = 0;  // tables never come here: they are held and start on the line of their extents
     evaluator_(C_, T, X, r_);
     for (std::size_t j = 0; j < r_.size(); ++j) r_[j] *= setup_.capacity[j];
-    // A reactant of an order below 1 that runs out: its rate fades over the last millionth, so that the march can go on.
+    // A reactant of an order below 1 that runs out: its rate fades over the last millionth, so that the march can go
+    // on.
     for (const BrokenOrder& b : broken_) {
       const double c = std::max(0.0, C_[b.species]), last = 1e-6 * scale();
       const double nu = setup_.chemistry.kinetics.nu(static_cast<int>(b.species), static_cast<int>(b.reaction));
@@ -117,7 +118,8 @@ class Transient {
   bool moves_ = false;
 };
 
-/// Extents (and for a gas how many m3 of mixed feed fill 1 m3) by least squares; empty where the reactions are not independent.
+/// Extents (and for a gas also how many m3 of mixed feed fill 1 m3) by least squares; empty where the reactions are not
+/// independent.
 std::vector<double> extents_of(const Setup& setup, std::span<const double> C) {
   const Kinetics& kinetics = setup.chemistry.kinetics;
   const auto R = static_cast<std::size_t>(kinetics.reactions());
@@ -174,8 +176,7 @@ Outcome<StartRun> run_start_up(const Setup& setup, const StartState& start, doub
   const auto f = [&](double, std::span<const double> at, std::span<double> dy) { transient(at, dy); };
   const MarchOptions options{.rel_tol = 1e-8, .abs_tol = 1e-11, .scale = scale};
   const auto track = march(f, y, 0, space_times, options);
-  if (const auto* no = std::get_if<NoAnswer>(&track))
-    return unsolved("the start-up could not be followed: " + no->why);
+  if (const auto* no = std::get_if<NoAnswer>(&track)) return unsolved("the start-up could not be followed: " + no->why);
   const Track& path = std::get<Track>(track);
   StartRun run;
   run.peak_K = start.temperature_K;

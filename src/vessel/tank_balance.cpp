@@ -3,6 +3,8 @@
 #include <algorithm>
 #include <cmath>
 
+#include "least_squares.hpp"
+
 namespace vatwright {
 
 TankBalance::TankBalance(const Setup& setup, double feed_m3_s)
@@ -14,100 +16,147 @@ TankBalance::TankBalance(const Setup& setup, double feed_m3_s)
       tau_(setup.volume_m3 / feed_m3_s),
       added_(setup.agitator_W / feed_m3_s),
       moves_(!setup.is_held && setup.heat_known()),
-      c_(n_), C_(n_), r_(R_), r_plus_(R_), dr_dc_(n_ * R_), dr_dT_(R_) {
+      nu_(n_ * R_),
+      c_in_(n_),
+      c_(n_),
+      C_(n_),
+      r_(R_),
+      r_plus_(R_),
+      dr_dc_(n_ * R_),
+      dr_dT_(R_) {
   c_scale_ = 0;
   for (std::size_t i = 0; i < n_; ++i)
-    for (std::size_t j = 0; j < R_; ++j)
-      if (setup.chemistry.kinetics.nu(static_cast<int>(i), static_cast<int>(j)) != 0)
-        c_scale_ = std::max(c_scale_, setup.chemistry.feed.c_mol_m3[i]);
+    for (std::size_t j = 0; j < R_; ++j) {
+      nu_[i * R_ + j] = setup.chemistry.kinetics.nu(static_cast<int>(i), static_cast<int>(j));
+      if (nu(i, j) != 0) c_scale_ = std::max(c_scale_, setup.chemistry.feed.c_mol_m3[i]);
+    }
   if (!(c_scale_ > 0)) c_scale_ = 1;
   gone_ = 1e-12 * c_scale_;
+  setup.chemistry.kinetics.amounts(setup.chemistry.feed.c_mol_m3, setup.arrives.xi_mol_m3, c_in_);
+  for (double& c : c_in_) c = c < 1e-15 * c_scale_ ? 0 : c;  // rounding of what is gone
 }
 
-double TankBalance::temperature(std::span<const double> xi) const {
-  if (!moves_) return setup_.inlet_K;
-  return adiabatic_temperature(setup_.chemistry, setup_.arrives.xi_mol_m3, setup_.inlet_K, xi, added_);
+double TankBalance::dH(std::size_t j, double T) const {
+  return setup_.chemistry.kinetics.reaction(static_cast<int>(j)).heat->at(T);
 }
 
-void TankBalance::amounts(std::span<const double> xi, std::span<double> c) const {
-  setup_.chemistry.kinetics.amounts(setup_.chemistry.feed.c_mol_m3, xi, c);
+std::vector<double> TankBalance::contents(std::span<const double> xi) const {
+  std::vector<double> y(n_);
+  setup_.chemistry.kinetics.amounts(setup_.chemistry.feed.c_mol_m3, xi, y);
+  for (double& c : y) c = std::max(c, 0.0);
+  if (moves_)
+    y.push_back(adiabatic_temperature(setup_.chemistry, setup_.arrives.xi_mol_m3, setup_.inlet_K, xi, added_));
+  return y;
 }
 
-void TankBalance::rates(std::span<const double> c, double T, double X, std::span<double> r) {
+std::vector<double> TankBalance::extents(std::span<const double> y) {
+  std::vector<double> change(n_);
+  for (std::size_t i = 0; i < n_; ++i) change[i] = y[i] - setup_.chemistry.feed.c_mol_m3[i];
+  auto xi = least_squares(nu_, change, R_);
+  if (!xi.empty()) return xi;
+  rates(y, temperature(y), r_);
+  xi = setup_.arrives.xi_mol_m3;
+  for (std::size_t j = 0; j < R_; ++j) xi[j] += tau_ * r_[j];
+  return xi;
+}
+
+void TankBalance::rates(std::span<const double> y, double T, std::span<double> r) {
+  const auto c = y.first(n_);
   setup_.chemistry.concentrations_of_amounts(c, T, setup_.inlet_Pa, C_);
-  evaluator_(C_, T, X, r);
+  evaluator_(C_, T, 0, r);
   for (std::size_t j = 0; j < R_; ++j) r[j] *= setup_.capacity[j];
   for (const BrokenOrder& b : broken_) {
-    const double nu = setup_.chemistry.kinetics.nu(static_cast<int>(b.species), static_cast<int>(b.reaction));
     const double left = std::max(0.0, c[b.species]);
-    if (nu * r[b.reaction] < 0) r[b.reaction] *= left / (left + gone_);
+    if (nu(b.species, b.reaction) * r[b.reaction] < 0) r[b.reaction] *= left / (left + gone_);
   }
 }
 
-bool TankBalance::operator()(std::span<const double> xi, std::span<double> G) {
-  const double T = temperature(xi);
+bool TankBalance::operator()(std::span<const double> y, std::span<double> F) {
+  const double T = temperature(y);
   if (!(T > 1)) return false;
-  amounts(xi, c_);
-  rates(c_, T, setup_.chemistry.kinetics.conversion(xi), r_);
-  for (std::size_t j = 0; j < R_; ++j) {
-    G[j] = xi[j] - setup_.arrives.xi_mol_m3[j] - tau_ * r_[j];
-    if (!std::isfinite(G[j])) return false;
-  }
-  return true;
-}
-
-bool TankBalance::jacobian(std::span<const double> xi, std::span<double> J) {
-  const double T = temperature(xi);
-  if (!(T > 1)) return false;
-  const double X = setup_.chemistry.kinetics.conversion(xi);
-  amounts(xi, c_);
-  rates(c_, T, X, r_);
+  rates(y, T, r_);
   for (std::size_t i = 0; i < n_; ++i) {
-    const double kept = c_[i], h = std::max(1e-7 * std::abs(kept), 1e-3 * gone_);
-    c_[i] = kept + h;
-    rates(c_, T, X, r_plus_);
-    c_[i] = kept;
-    for (std::size_t j = 0; j < R_; ++j) dr_dc_[i * R_ + j] = (r_plus_[j] - r_[j]) / h;
+    F[i] = y[i] - c_in_[i];
+    for (std::size_t j = 0; j < R_; ++j) F[i] -= tau_ * nu(i, j) * r_[j];
   }
   if (moves_) {
-    const double h = 1e-6 * T;
-    rates(c_, T + h, X, r_plus_);
-    for (std::size_t j = 0; j < R_; ++j) dr_dT_[j] = (r_plus_[j] - r_[j]) / h;
+    double heat = sensible_heat(setup_.chemistry, setup_.arrives.xi_mol_m3, setup_.inlet_K, T) - added_;
+    for (std::size_t j = 0; j < R_; ++j) heat += tau_ * r_[j] * dH(j, T);
+    F[n_] = heat / heat_capacity(setup_.chemistry, setup_.arrives.xi_mol_m3, T);
   }
-  const double capacity = moves_ ? heat_capacity(setup_.chemistry, xi, T) : 1;
-  for (std::size_t j = 0; j < R_; ++j)
-    for (std::size_t k = 0; k < R_; ++k) {
-      double dr = 0;
-      for (std::size_t i = 0; i < n_; ++i)
-        dr += dr_dc_[i * R_ + j] * setup_.chemistry.kinetics.nu(static_cast<int>(i), static_cast<int>(k));
-      if (moves_) dr -= dr_dT_[j] * setup_.chemistry.kinetics.reaction(static_cast<int>(k)).heat->at(T) / capacity;
-      J[j * R_ + k] = (j == k ? 1 : 0) - tau_ * dr;
+  return std::ranges::all_of(F, [](double f) { return std::isfinite(f); });
+}
+
+/// dr_j/dc_i and dr_j/dT at y; r_ is left at y.
+void TankBalance::differences(std::span<const double> y, double T) {
+  rates(y, T, r_);
+  std::vector<double> c(y.begin(), y.end());
+  for (std::size_t i = 0; i < n_; ++i) {
+    const double h = c[i] > 0 ? 1e-7 * c[i] : 1e-9 * gone_;
+    c[i] = y[i] + h;
+    rates(c, T, r_plus_);
+    for (std::size_t j = 0; j < R_; ++j) dr_dc_[i * R_ + j] = (r_plus_[j] - r_[j]) / (c[i] - y[i]);
+    c[i] = y[i];
+  }
+  if (!moves_) return;
+  const double h = 1e-6 * T;
+  rates(y, T + h, r_plus_);
+  for (std::size_t j = 0; j < R_; ++j) dr_dT_[j] = (r_plus_[j] - r_[j]) / h;
+}
+
+bool TankBalance::jacobian(std::span<const double> y, std::span<double> J) {
+  const double T = temperature(y);
+  if (!(T > 1)) return false;
+  differences(y, T);
+  const std::size_t m = size();
+  for (std::size_t i = 0; i < n_; ++i) {
+    for (std::size_t k = 0; k < n_; ++k) {
+      double sum = i == k ? 1 : 0;
+      for (std::size_t j = 0; j < R_; ++j) sum -= tau_ * nu(i, j) * dr_dc_[k * R_ + j];
+      J[i * m + k] = sum;
     }
+    if (!moves_) continue;
+    J[i * m + n_] = 0;
+    for (std::size_t j = 0; j < R_; ++j) J[i * m + n_] -= tau_ * nu(i, j) * dr_dT_[j];
+  }
+  if (!moves_) return true;
+  const double capacity = heat_capacity(setup_.chemistry, setup_.arrives.xi_mol_m3, T), h = 1e-5 * T;
+  for (std::size_t k = 0; k < n_; ++k) {
+    double heat = 0;
+    for (std::size_t j = 0; j < R_; ++j) heat += tau_ * dr_dc_[k * R_ + j] * dH(j, T);
+    J[n_ * m + k] = heat / capacity;
+  }
+  double heat = capacity;
+  for (std::size_t j = 0; j < R_; ++j) heat += tau_ * (dr_dT_[j] * dH(j, T) + r_[j] * (dH(j, T + h) - dH(j, T)) / h);
+  J[n_ * m + n_] = heat / capacity;
   return true;
 }
 
-double TankBalance::allowed(std::span<const double> xi, std::span<const double> step) const {
+double TankBalance::allowed(std::span<const double> y, std::span<const double> step) const {
   double share = 1;
-  for (std::size_t i = 0; i < n_; ++i) {
-    double c = setup_.chemistry.feed.c_mol_m3[i], dc = 0;
-    for (std::size_t j = 0; j < R_; ++j) {
-      const double nu = setup_.chemistry.kinetics.nu(static_cast<int>(i), static_cast<int>(j));
-      c += nu * xi[j];
-      dc += nu * step[j];
-    }
-    if (dc < -0.01 * gone_ && c + share * dc < 0.01 * c) share = std::max(0.0, 0.99 * c / -dc);
-  }
+  for (std::size_t i = 0; i < n_; ++i)
+    if (step[i] < 0 && y[i] + share * step[i] < 0.01 * y[i]) share = 0.99 * y[i] / -step[i];
+  if (moves_ && std::abs(step[n_]) * share > 50) share = 50 / std::abs(step[n_]);
   return share;
 }
 
-double TankBalance::imbalance(std::span<const double> xi) {
-  std::vector<double> G(R_);
-  if (!(*this)(xi, G)) return 1;
-  double worst = 0;
+double TankBalance::imbalance(std::span<const double> y) {
+  std::vector<double> F(size());
+  if (!(*this)(y, F)) return 1;
+  const double T = temperature(y);
+  differences(y, T);
+  std::vector<double> both_ways(R_);  // forward and back together, from how each amount drives the rate
   for (std::size_t j = 0; j < R_; ++j) {
-    const double terms = std::abs(xi[j]) + std::abs(setup_.arrives.xi_mol_m3[j]) + std::abs(tau_ * r_[j]);
-    worst = std::max(worst, std::abs(G[j]) / std::max(terms, 1e-6 * c_scale_));
+    both_ways[j] = std::abs(r_[j]);
+    for (std::size_t i = 0; i < n_; ++i) both_ways[j] = std::max(both_ways[j], std::abs(dr_dc_[i * R_ + j]) * y[i]);
   }
+  double worst = 0;
+  for (std::size_t i = 0; i < n_; ++i) {
+    double terms = std::abs(y[i]) + c_in_[i];
+    for (std::size_t j = 0; j < R_; ++j) terms += tau_ * std::abs(nu(i, j)) * both_ways[j];
+    if (terms > 0) worst = std::max(worst, std::abs(F[i]) / terms);
+  }
+  if (moves_) worst = std::max(worst, std::abs(F[n_]) / T);
   return worst;
 }
 

@@ -4,32 +4,45 @@
 
 namespace vatwright {
 
-/// The steady balances of a tank with any number of reactions at one space time,
-///   G_j = xi_j - xi_in,j - tau m_j r_j(C(xi), T(xi)) = 0,   T held or from the extents (adiabatic, agitator counted).
-/// A reactant of an order below 1 fades out over the last 1e-12 of the scale, so that a state at depletion is a root too.
+/// The steady balances of a tank with any number of reactions, in what it holds, y = (c_1 .. c_n, T if it moves), so
+/// that a species nearly gone keeps its digits:
+///   F_i = c_i - c_in,i - tau sum_j nu_ij m_j r_j                               mol per m3 of mixed feed
+///   F_T = [sensible(T_in to T) - tau sum_j m_j r_j (-dH_j) - agitator/v]/cp    K
+/// c in mol per m3 of mixed feed, cp per m3 of mixed feed. dy/dt = -F/tau is the transient of a liquid. A reactant of
+/// an order below 1 fades out over the last 1e-12 of the scale, so that a state at depletion is a root too.
 class TankBalance {
  public:
   TankBalance(const Setup& setup, double feed_m3_s);
 
-  [[nodiscard]] std::size_t size() const { return R_; }
-  [[nodiscard]] double scale() const { return c_scale_; }
+  [[nodiscard]] std::size_t size() const { return n_ + (moves_ ? 1 : 0); }
+  [[nodiscard]] std::size_t species() const { return n_; }
+  [[nodiscard]] double scale(std::size_t row) const { return row < n_ ? c_scale_ : 100; }
   void set_tau(double tau) { tau_ = tau; }
   [[nodiscard]] double tau() const { return tau_; }
-  [[nodiscard]] double temperature(std::span<const double> xi) const;
-  /// G at xi; false: no value there.
-  bool operator()(std::span<const double> xi, std::span<double> G);
-  /// dG_j/dxi_k row by row, by differences in the amounts of each species, so that small ones keep their digits.
-  bool jacobian(std::span<const double> xi, std::span<double> J);
-  /// The longest share (at most 1) of a step that takes no species further than 99 % of the way to zero.
-  [[nodiscard]] double allowed(std::span<const double> xi, std::span<const double> step) const;
-  /// Largest |G_j| over the sum of the terms of that balance.
-  double imbalance(std::span<const double> xi);
-  void amounts(std::span<const double> xi, std::span<double> c) const;
+
+  /// y of extents with the temperature that belongs to them.
+  [[nodiscard]] std::vector<double> contents(std::span<const double> xi) const;
+  [[nodiscard]] double temperature(std::span<const double> y) const { return moves_ ? y[n_] : setup_.inlet_K; }
+  /// The extents that lead to y: by least squares, else (dependent reactions) from the rates.
+  [[nodiscard]] std::vector<double> extents(std::span<const double> y);
+
+  /// F at y; false: no value there.
+  bool operator()(std::span<const double> y, std::span<double> F);
+  /// dF/dy row by row.
+  bool jacobian(std::span<const double> y, std::span<double> J);
+  /// The longest share (at most 1) of a step that takes no amount further than 99 % of the way to zero, and T no
+  /// further than 50 K.
+  [[nodiscard]] double allowed(std::span<const double> y, std::span<const double> step) const;
+  /// Largest |F| over the sum of the terms of that balance; what is made and unmade by one reaction counts apart.
+  double imbalance(std::span<const double> y);
   [[nodiscard]] long calls() const { return evaluator_.calls(); }
   [[nodiscard]] long no_value() const { return evaluator_.no_value(); }
 
  private:
-  void rates(std::span<const double> c, double T, double X, std::span<double> r);
+  void rates(std::span<const double> y, double T, std::span<double> r);
+  void differences(std::span<const double> y, double T);
+  [[nodiscard]] double nu(std::size_t i, std::size_t j) const { return nu_[i * R_ + j]; }
+  [[nodiscard]] double dH(std::size_t j, double T) const;
 
   const Setup& setup_;
   RateEvaluator evaluator_;
@@ -37,7 +50,7 @@ class TankBalance {
   std::size_t R_ = 0, n_ = 0;
   double tau_ = 0, added_ = 0, c_scale_ = 1, gone_ = 0;
   bool moves_ = false;
-  std::vector<double> c_, C_, r_, r_plus_, dr_dc_, dr_dT_;
+  std::vector<double> nu_, c_in_, c_, C_, r_, r_plus_, dr_dc_, dr_dT_;
 };
 
 }  // namespace vatwright

@@ -85,22 +85,45 @@ std::vector<TankCurve::Fold> TankCurve::folds() const {
   return all;
 }
 
+/// Where ln h passes log_tau between two samples: inverse quadratic steps where they are safe, else halves (T. R.
+/// Chandrupatla, Adv. Eng. Software 28 (1997) 145, from memory).
 bool TankCurve::add_state(std::size_t i, double log_tau, Answer& answer) {
-  const auto miss = [&](double y) {
-    const double f = log_time(y);
-    return std::isfinite(f) ? f - log_tau : 1e300;
-  };
-  double y = 0;
-  if (f_[i] == log_tau) {
-    y = y_[i];
-  } else {
-    const auto root = find_root(miss, y_[i], y_[i + 1], {.rel_tol = 1e-16, .abs_tol = 2e-15});
-    const double* found = vatwright::answer(root);
-    if (found == nullptr) return false;
-    y = *found;
+  double a = y_[i + 1], b = y_[i], c = a;
+  double fa = std::min(f_[i + 1] - log_tau, 1e6), fb = std::min(f_[i] - log_tau, 1e6), fc = fa;
+  const double close = 4e-16 * std::max(1.0, std::abs(log_tau));
+  for (int calls = 0; calls < 200; ++calls) {
+    const double best = std::abs(fa) < std::abs(fb) ? a : b;
+    const double room = 2e-16 * std::max(1.0, std::abs(best));
+    if (std::min(std::abs(fa), std::abs(fb)) <= close || std::abs(b - a) <= 2 * room) {
+      answer.states.push_back({place_at(best, way_.length()), f_[i + 1] > f_[i], false});
+      return true;
+    }
+    double share = 0.5;
+    if (calls > 0) {
+      const double x = (a - b) / (c - b), q = (fa - fb) / (fc - fb);
+      if (q * q < x && (1 - q) * (1 - q) < 1 - x)
+        share = fa / (fb - fa) * fc / (fb - fc) + (c - a) / (b - a) * fa / (fc - fa) * fb / (fc - fb);
+    } else {
+      share = fa / (fa - fb);
+    }
+    const double least = room / std::abs(b - a);
+    share = std::clamp(share, least, 1 - least);
+    const double y = a + share * (b - a);
+    const double f = std::min(log_time(y) - log_tau, 1e6);
+    if (std::isnan(f)) return false;
+    if ((f > 0) == (fa > 0)) {
+      c = a;
+      fc = fa;
+    } else {
+      c = b;
+      fc = fb;
+      b = a;
+      fb = fa;
+    }
+    a = y;
+    fa = f;
   }
-  answer.states.push_back({place_at(y, way_.length()), f_[i + 1] > f_[i], false});
-  return true;
+  return false;
 }
 
 TankCurve::Answer TankCurve::states(double tau) {

@@ -8,87 +8,96 @@
 namespace vatwright {
 namespace {
 
-double norm(std::span<const double> G) {
-  double sum = 0;
-  for (double g : G) sum += g * g;
-  return std::sqrt(sum);
-}
-
 class Settling {
  public:
-  Settling(TankBalance& balance, std::vector<double> xi)
-      : balance_(balance), xi_(std::move(xi)), G_(xi_.size()), step_(xi_.size()), trial_(xi_.size()), G_trial_(xi_.size()),
-        J_(xi_.size() * xi_.size()) {}
+  Settling(TankBalance& balance, std::vector<double> y)
+      : balance_(balance),
+        y_(std::move(y)),
+        F_(y_.size()),
+        step_(y_.size()),
+        trial_(y_.size()),
+        F_trial_(y_.size()),
+        J_(y_.size() * y_.size()) {}
 
   std::optional<std::vector<double>> run() {
-    if (!balance_(xi_, G_)) return std::nullopt;
+    if (!balance_(y_, F_)) return std::nullopt;
     double inverse_h = 0;  // 0: Newton; above: a step of the transient
-    for (int i = 0; i < 400; ++i) {
-      if (norm(G_) <= 1e-14 * balance_.scale()) break;
-      if (!direction(inverse_h)) {
-        inverse_h = inverse_h == 0 ? 1 : 4 * inverse_h;
-        if (inverse_h > 1e12) return std::nullopt;
-        continue;
-      }
-      const double share = balance_.allowed(xi_, step_);
-      const double length = norm(step_);
-      if (share * length <= 1e-15 * balance_.scale() && inverse_h == 0) break;
-      if (inverse_h > 0 ? advance(share) : search(share)) {
+    for (int i = 0; i < 300; ++i) {
+      const bool stepped = direction(inverse_h) && (inverse_h > 0 ? advance() : search());
+      if (settled_) break;
+      if (stepped)
         inverse_h = inverse_h > 1e-3 ? inverse_h / 3 : 0;
-      } else {
-        if (norm(G_) <= 1e-11 * balance_.scale()) break;  // rounding
+      else
         inverse_h = inverse_h == 0 ? 1 : 4 * inverse_h;
-        if (inverse_h > 1e12) return std::nullopt;
-      }
+      if (inverse_h > 1e14) break;
     }
-    if (balance_.imbalance(xi_) <= 1e-9) return xi_;
+    if (balance_.imbalance(y_) <= 1e-10) return y_;
     return std::nullopt;
   }
 
  private:
+  double norm(std::span<const double> F) const {
+    double sum = 0;
+    for (std::size_t i = 0; i < F.size(); ++i) sum += F[i] * F[i] / (balance_.scale(i) * balance_.scale(i));
+    return std::sqrt(sum);
+  }
   bool direction(double inverse_h) {
-    if (!balance_.jacobian(xi_, J_)) return false;
-    for (std::size_t j = 0; j < xi_.size(); ++j) {
-      J_[j * xi_.size() + j] += inverse_h;
-      step_[j] = -G_[j];
+    if (!balance_.jacobian(y_, J_)) return false;
+    for (std::size_t j = 0; j < y_.size(); ++j) {
+      J_[j * y_.size() + j] += inverse_h;
+      step_[j] = -F_[j];
     }
     return solve_linear(J_, step_);
   }
+  /// Every amount moves by rounding alone.
+  bool is_rounding() const {
+    for (std::size_t i = 0; i < y_.size(); ++i)
+      if (std::abs(step_[i]) > 3e-15 * std::abs(y_[i]) && std::abs(step_[i]) > 1e-30 * balance_.scale(i)) return false;
+    return true;
+  }
   bool try_share(double share) {
-    for (std::size_t j = 0; j < xi_.size(); ++j) trial_[j] = xi_[j] + share * step_[j];
-    return balance_(trial_, G_trial_);
+    for (std::size_t j = 0; j < y_.size(); ++j) trial_[j] = y_[j] + share * step_[j];
+    return balance_(trial_, F_trial_);
   }
   void take() {
-    xi_ = trial_;
-    G_ = G_trial_;
+    y_ = trial_;
+    F_ = F_trial_;
   }
-  bool search(double share) {
+  bool search() {
+    if (is_rounding()) {
+      settled_ = true;
+      return true;
+    }
+    double share = balance_.allowed(y_, step_);
     for (int i = 0; i < 12; ++i, share /= 2)
-      if (try_share(share) && norm(G_trial_) < (1 - 1e-4 * share) * norm(G_)) {
+      if (try_share(share) && norm(F_trial_) < (1 - 1e-4 * share) * norm(F_)) {
         take();
         return true;
       }
+    if (balance_.imbalance(y_) <= 1e-12) settled_ = true;  // as near as rounding lets it
     return false;
   }
-  bool advance(double share) {
+  bool advance() {
+    const double share = balance_.allowed(y_, step_);
     if (share < 0.5 || !try_share(share)) return false;  // too long a step of the transient
     take();
     return true;
   }
 
   TankBalance& balance_;
-  std::vector<double> xi_, G_, step_, trial_, G_trial_, J_;
+  std::vector<double> y_, F_, step_, trial_, F_trial_, J_;
+  bool settled_ = false;
 };
 
 }  // namespace
 
-std::optional<std::vector<double>> settle(TankBalance& balance, std::vector<double> xi) {
-  return Settling(balance, std::move(xi)).run();
+std::optional<std::vector<double>> settle(TankBalance& balance, std::vector<double> y) {
+  return Settling(balance, std::move(y)).run();
 }
 
-bool is_stable(TankBalance& balance, std::span<const double> xi) {
+bool is_stable(TankBalance& balance, std::span<const double> y) {
   std::vector<double> J(balance.size() * balance.size());
-  if (!balance.jacobian(xi, J)) return false;
+  if (!balance.jacobian(y, J)) return false;
   const auto all = eigenvalues(J, static_cast<int>(balance.size()));
   return !all.empty() && std::ranges::all_of(all, [](const auto& l) { return l.real() > 0; });
 }

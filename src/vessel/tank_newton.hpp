@@ -5,12 +5,11 @@
 
 namespace vatwright {
 
-/// A root of the balances from a start: Newton's method with steps cut so that no amount passes zero and the balances close
-/// better each time; where that stalls, steps of the transient (implicit Euler, growing). nullopt: none found.
-std::optional<std::vector<double>> settle(TankBalance& balance, std::vector<double> xi);
+/// A root of the balances from a start: Newton's method with steps cut so that no amount passes zero and the balances
+/// close better each time; where that stalls, steps of the transient (implicit Euler, growing). nullopt: none found.
+std::optional<std::vector<double>> settle(TankBalance& balance, std::vector<double> y);
 
-/// Whether the transient balances return to the state: every eigenvalue of -dG/dxi has a real part below zero (the other
-/// modes, wash-out of what is off the extents and of heat, decay with the space time).
-bool is_stable(TankBalance& balance, std::span<const double> xi);
+/// Whether the transient balances return to the state: every eigenvalue of -dF/dy has a real part below zero.
+bool is_stable(TankBalance& balance, std::span<const double> y);
 
 }  // namespace vatwright

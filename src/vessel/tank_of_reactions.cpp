@@ -10,40 +10,43 @@ namespace vatwright {
 namespace {
 
 using Extents = std::vector<double>;
+using Contents = std::vector<double>;  // amounts and temperature, see TankBalance
 
-/// A tank with several reactions: every state found from a stated set of starts (the inlet, the start's fill, full extents of
-/// each reaction and of all in turn, the branches that come from very short and from very long space times), and
-/// where the start-up itself comes to rest. Which other states there are is not certain.
+/// A tank with several reactions: every state found from a stated set of starts (the inlet, the start's fill, full
+/// extents of each reaction and of all in turn, the branches that come from very short and from very long space times),
+/// and where the start-up itself comes to rest. Which other states there are is not certain.
 class TankOfReactions final : public Solver {
  public:
   explicit TankOfReactions(const Setup& setup) : setup_(setup), start_(start_state(setup)) {}
 
   Outcome<VesselOutcome> at(double feed_m3_s, Detail detail) override {
     TankBalance balance(setup_, feed_m3_s);
-    std::vector<Extents> found = find_states(balance);
+    std::vector<Contents> found = find_states(balance);
     auto outcome = judge(balance, found, feed_m3_s, detail);
     calls_ += balance.calls();
-    if (balance.no_value() > 0) return cannot_tell("a rate has no finite value where a species that slows it is absent");
+    if (balance.no_value() > 0)
+      return cannot_tell("a rate has no finite value where a species that slows it is absent");
     return outcome;
   }
   std::optional<double> feed_at_conversion(double) override { return std::nullopt; }
   [[nodiscard]] long rate_calls() const override { return calls_; }
 
  private:
-  static void add(std::vector<Extents>& found, const std::optional<Extents>& one, double scale) {
+  static void add(const TankBalance& balance, std::vector<Contents>& found, const std::optional<Contents>& one) {
     if (!one) return;
-    for (const Extents& other : found) {
+    for (const Contents& other : found) {
       double apart = 0;
-      for (std::size_t j = 0; j < other.size(); ++j) apart = std::max(apart, std::abs(other[j] - (*one)[j]));
-      if (apart <= 1e-7 * scale) return;
+      for (std::size_t i = 0; i < other.size(); ++i)
+        apart = std::max(apart, std::abs(other[i] - (*one)[i]) / balance.scale(i));
+      if (apart <= 1e-7) return;
     }
     found.push_back(*one);
   }
 
   /// From an extent, one reaction run to a share of what its reactants allow.
-  Extents run_on(const TankBalance& balance, Extents xi, std::size_t j, double share) const {
+  Extents run_on(Extents xi, std::size_t j, double share) const {
     std::vector<double> c(static_cast<std::size_t>(setup_.chemistry.kinetics.species()));
-    balance.amounts(xi, c);
+    setup_.chemistry.kinetics.amounts(setup_.chemistry.feed.c_mol_m3, xi, c);
     double most = std::numeric_limits<double>::infinity();
     for (std::size_t i = 0; i < c.size(); ++i)
       if (const double nu = setup_.chemistry.kinetics.nu(static_cast<int>(i), static_cast<int>(j)); nu < 0)
@@ -52,17 +55,17 @@ class TankOfReactions final : public Solver {
     return xi;
   }
 
-  std::vector<Extents> starts(const TankBalance& balance) const {
+  std::vector<Extents> starts() const {
     const Extents inlet = setup_.arrives.xi_mol_m3;
     std::vector<Extents> all{inlet};
     if (start_.on_extents) all.push_back(start_.xi_all);
-    const std::size_t R = balance.size();
+    const std::size_t R = setup_.capacity.size();
     for (double share : {0.5, 0.97}) {
       Extents forward = inlet, backward = inlet;
       for (std::size_t j = 0; j < R; ++j) {
-        all.push_back(run_on(balance, inlet, j, share));
-        forward = run_on(balance, forward, j, share);
-        backward = run_on(balance, backward, R - 1 - j, share);
+        all.push_back(run_on(inlet, j, share));
+        forward = run_on(forward, j, share);
+        backward = run_on(backward, R - 1 - j, share);
       }
       all.push_back(std::move(forward));
       all.push_back(std::move(backward));
@@ -71,9 +74,9 @@ class TankOfReactions final : public Solver {
   }
 
   /// Follows the state that is at hand at tau times ratio^steps back to tau.
-  static std::optional<Extents> follow(TankBalance& balance, Extents xi, double ratio, int steps) {
+  static std::optional<Contents> follow(TankBalance& balance, Contents y, double ratio, int steps) {
     const double tau = balance.tau();
-    std::optional<Extents> at = std::move(xi);
+    std::optional<Contents> at = std::move(y);
     for (int k = steps; k >= 0 && at; --k) {
       balance.set_tau(tau * std::pow(ratio, k));
       at = settle(balance, *at);
@@ -82,27 +85,27 @@ class TankOfReactions final : public Solver {
     return at;
   }
 
-  std::vector<Extents> find_states(TankBalance& balance) {
-    std::vector<Extents> found;
-    for (const Extents& xi : starts(balance)) add(found, settle(balance, xi), balance.scale());
-    add(found, follow(balance, setup_.arrives.xi_mol_m3, 0.4, 10), balance.scale());
+  std::vector<Contents> find_states(TankBalance& balance) {
+    std::vector<Contents> found;
+    for (const Extents& xi : starts()) add(balance, found, settle(balance, balance.contents(xi)));
+    add(balance, found, follow(balance, balance.contents(setup_.arrives.xi_mol_m3), 0.4, 10));
     if (!found.empty()) {
-      const auto furthest = std::ranges::max(found, {}, [&](const Extents& xi) { return balance.temperature(xi); });
-      add(found, follow(balance, furthest, 4, 3), balance.scale());
+      const auto hottest = std::ranges::max(found, {}, [&](const Contents& y) { return balance.temperature(y); });
+      add(balance, found, follow(balance, hottest, 4, 3));
     }
     return found;
   }
 
   /// The state that a start-up has come to; -1: none of them.
-  int nearest(const TankBalance& balance, const std::vector<Extents>& found, const StartRun& run) const {
+  int nearest(const TankBalance& balance, const std::vector<Contents>& found, const StartRun& run) const {
     int best = -1;
     double least = 1e-3;
     std::vector<double> C(run.C.size());
     for (std::size_t s = 0; s < found.size(); ++s) {
       const double T = balance.temperature(found[s]);
-      setup_.chemistry.concentrations(found[s], T, setup_.inlet_Pa, C);
-      double apart = std::abs(T - run.temperature_K) / T, total = 0;
-      for (double c : C) total = std::max(total, c);
+      setup_.chemistry.concentrations_of_amounts(std::span(found[s]).first(C.size()), T, setup_.inlet_Pa, C);
+      double apart = std::abs(T - run.temperature_K) / T;
+      const double total = std::ranges::max(C);
       for (std::size_t i = 0; i < C.size(); ++i) apart = std::max(apart, std::abs(C[i] - run.C[i]) / total);
       if (apart < least) {
         least = apart;
@@ -113,7 +116,7 @@ class TankOfReactions final : public Solver {
   }
 
   /// Follows the start-up until it rests at a state (which may be one not found before).
-  Outcome<StartRun> come_to_rest(TankBalance& balance, std::vector<Extents>& found, double feed_m3_s, int& reached) {
+  Outcome<StartRun> come_to_rest(TankBalance& balance, std::vector<Contents>& found, double feed_m3_s, int& reached) {
     StartState from = start_;
     double peak = from.temperature_K;
     for (double stretch : {30.0, 70.0, 200.0}) {
@@ -122,7 +125,7 @@ class TankOfReactions final : public Solver {
       StartRun& end = std::get<StartRun>(run);
       peak = end.peak_K = std::max(peak, end.peak_K);
       if (end.drift < 1e-5) {
-        if (!end.xi.empty()) add(found, settle(balance, end.xi), balance.scale());
+        if (!end.xi.empty()) add(balance, found, settle(balance, balance.contents(end.xi)));
         reached = nearest(balance, found, end);
         if (reached >= 0) return run;
       }
@@ -134,7 +137,7 @@ class TankOfReactions final : public Solver {
     return never;
   }
 
-  Outcome<VesselOutcome> judge(TankBalance& balance, std::vector<Extents>& found, double feed_m3_s, Detail detail) {
+  Outcome<VesselOutcome> judge(TankBalance& balance, std::vector<Contents>& found, double feed_m3_s, Detail detail) {
     VesselOutcome outcome;
     outcome.states_complete = false;
     outcome.start_peak_K = setup_.inlet_K;
@@ -149,10 +152,12 @@ class TankOfReactions final : public Solver {
       outcome.start_peak_K = std::get<StartRun>(run).peak_K;
     }
     if (found.empty()) return unsolved("no steady state found from any of the starts");
-    for (std::size_t s = 0; s < found.size(); ++s)
-      outcome.states.push_back({found[s], setup_.chemistry.kinetics.conversion(found[s]),
-                                balance.temperature(found[s]), is_stable(balance, found[s]),
+    for (std::size_t s = 0; s < found.size(); ++s) {
+      Extents xi = balance.extents(found[s]);
+      const double X = setup_.chemistry.kinetics.conversion(xi);
+      outcome.states.push_back({std::move(xi), X, balance.temperature(found[s]), is_stable(balance, found[s]),
                                 static_cast<int>(s) == reached});
+    }
     if (reached < 0) {
       outcome.cycle = true;
       outcome.isothermal = setup_.is_held;

@@ -104,7 +104,8 @@ double TubeBalance::used(std::size_t species) const {
   return sum;
 }
 
-/// Reactions that use up what is exhausted are cut to what is made of it; a cut may cut what another one makes, hence the rounds.
+/// Reactions that use up what is exhausted are cut to what is made of it; a cut may cut what another one makes, hence
+/// the rounds.
 void TubeBalance::share_out() {
   for (int round = 0; round < 4; ++round) {
     for (std::size_t i : can_run_out_) {

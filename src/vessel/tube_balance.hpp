@@ -9,8 +9,8 @@ namespace vatwright {
 ///   d(P/P_in)^2/ds = -2 P/P_in^2 L loss(xi, T, P)     where the pressure acts
 /// s is V/v (f = 1) where nothing but the space time matters, else the fraction of the length (f = V/v).
 ///
-/// A reactant of an order below 1 that has run out is `exhausted`: the reactions that use it up are scaled down together to what
-/// others make of it, until they make more than could be used.
+/// A reactant of an order below 1 that has run out is `exhausted`: the reactions that use it up are scaled down
+/// together to what others make of it, until they make more than could be used.
 class TubeBalance {
  public:
   TubeBalance(const Setup& setup, bool with_pressure, double feed_m3_s);
@@ -46,7 +46,7 @@ class TubeBalance {
   RateEvaluator evaluator_;
   std::vector<BrokenOrder> broken_;
   std::vector<std::size_t> can_run_out_;
-  std::vector<bool> exhausted_;   // per species
+  std::vector<bool> exhausted_;  // per species
   std::size_t R_ = 0;
   bool with_pressure_ = false, linear_ = true;
   double factor_ = 1, feed_m3_s_ = 0, length_m_ = 0, c_scale_ = 1, gone_ = 0;

@@ -120,8 +120,7 @@ std::optional<double> loss_per_length(const Setup& setup, double feed_m3_s, std:
   const auto mass = setup.chemistry.feed_mass();
   const auto viscosity = setup.chemistry.feed.viscosity_Pa_s;
   if (!mass || !viscosity) return std::nullopt;
-  return pressure_gradient(setup.vessel.kind,
-                           {feed_m3_s * *mass, *setup.chemistry.density(xi, T_K, P_Pa), *viscosity});
+  return pressure_gradient(setup.vessel.kind, {feed_m3_s * *mass, *setup.chemistry.density(xi, T_K, P_Pa), *viscosity});
 }
 
 NoAnswer pressure_used_up(double z, double length_m) {

@@ -18,7 +18,8 @@ struct Cosines {
   Cosines() {
     for (int j = 0; j <= n; ++j)
       for (int k = 0; k <= n; ++k)
-        at[static_cast<std::size_t>(j)][static_cast<std::size_t>(k)] = std::cos(std::numbers::pi * (j * k % (2 * n)) / n);
+        at[static_cast<std::size_t>(j)][static_cast<std::size_t>(k)] =
+            std::cos(std::numbers::pi * (j * k % (2 * n)) / n);
   }
 };
 
@@ -63,7 +64,8 @@ bool TubeTrack::add_panel(double u0, double u1) {
   a[0] /= 2;
   a[degree] /= 2;
   const double last = std::max({std::abs(a[degree]), std::abs(a[degree - 1]), std::abs(a[degree - 2])});
-  const double cancelled = way_.kind() == EndKind::equilibrium ? 2e-14 * std::exp(u1) : 0;  // of the rate, near its zero
+  const double cancelled =
+      way_.kind() == EndKind::equilibrium ? 2e-14 * std::exp(u1) : 0;  // of the rate, near its zero
   if (last > largest * (1e-12 + cancelled) && u1 - u0 > narrowest * std::max(1.0, u1)) return false;
 
   std::array<double, degree + 2> P{};  // the integral from u0

@@ -8,9 +8,9 @@ namespace vatwright {
 
 /// Space time along a way of one reaction, t = V/v = integral of d xi / R, kept as it grows: it serves every feed rate.
 ///   u = -ln(s/L), s what is left of the way:  dt/du = s/R(s)
-/// In panels of u, each a Chebyshev series of degree 16 through as many places (C. W. Clenshaw and A. R. Curtis, Numer. Math. 2
-/// (1960) 197, from memory), halved until its last terms are below 1e-12 of the largest value. A first order reaction has
-/// a constant dt/du, a power law an exponential: one panel goes a long way.
+/// In panels of u, each a Chebyshev series of degree 16 through as many places (C. W. Clenshaw and A. R. Curtis, Numer.
+/// Math. 2 (1960) 197, from memory), halved until its last terms are below 1e-12 of the largest value. A first order
+/// reaction has a constant dt/du, a power law an exponential: one panel goes a long way.
 class TubeTrack {
  public:
   explicit TubeTrack(Way way) : way_(std::move(way)), kinks_(way_.path().kinks(way_.sign())) {}

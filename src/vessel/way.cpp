@@ -18,8 +18,8 @@ Place place_at(double y, double length) {
 const std::vector<double>& graded_places() {
   static const std::vector<double> places = [] {
     std::vector<double> half;
-    for (int i = 1; i <= 15; ++i) half.push_back(0.4 * i);              // to 6
-    for (double y = 7; y < 14.5; y += 1) half.push_back(y);             // to 14
+    for (int i = 1; i <= 15; ++i) half.push_back(0.4 * i);   // to 6
+    for (double y = 7; y < 14.5; y += 1) half.push_back(y);  // to 14
     for (double y = 17; y < y_most - 2; y += 3.2) half.push_back(y);
     half.push_back(y_most);
     std::vector<double> all;

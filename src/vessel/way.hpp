@@ -6,8 +6,8 @@
 namespace vatwright {
 
 /// The way from the inlet in the direction that the reaction goes: from the inlet to the first zero of the rate, to
-/// depletion, or to where the model ends. A place on it is told by its distances from both ends, d + s = length, so that
-/// neither loses digits.
+/// depletion, or to where the model ends. A place on it is told by its distances from both ends, d + s = length, so
+/// that neither loses digits.
 class Way {
  public:
   /// nullopt: the rate does not go that way at all.

@@ -14,8 +14,8 @@ struct Chemistry {
   Feed feed;
   Kinetics kinetics;
 
-  /// True concentrations C_i (mol/m3 of fluid) at extents xi, T and P. Liquid: c_feed + nu xi, whatever T and P. Ideal gas:
-  /// c_i/sum(c) * P/(R T).   C: one per species.
+  /// True concentrations C_i (mol/m3 of fluid) at extents xi, T and P. Liquid: c_feed + nu xi, whatever T and P. Ideal
+  /// gas: c_i/sum(c) * P/(R T).   C: one per species.
   void concentrations(std::span<const double> xi, double T_K, double P_Pa, std::span<double> C) const;
   /// The same from the amounts c_i (mol per m3 of mixed feed) themselves; c and C may be one span.
   void concentrations_of_amounts(std::span<const double> c, double T_K, double P_Pa, std::span<double> C) const;
@@ -27,8 +27,8 @@ struct Chemistry {
   [[nodiscard]] std::optional<double> feed_mass() const;
 };
 
-/// Whether heat can be reckoned with for this product: `not_asked` where no reaction has a heat; `unknown` where some have and
-/// some have not, or a heat capacity is missing (why says which); else `known`.
+/// Whether heat can be reckoned with for this product: `not_asked` where no reaction has a heat; `unknown` where some
+/// have and some have not, or a heat capacity is missing (why says which); else `known`.
 struct HeatKnowledge {
   enum class State { not_asked, unknown, known };
   State state = State::not_asked;
@@ -40,16 +40,16 @@ HeatKnowledge heat_knowledge(const Chemistry& chemistry);
 /// extents. Precondition: known.
 bool heat_is_constant(const Chemistry& chemistry);
 
-/// Heat capacity of what 1 m3 of mixed feed has become, J/K: rho cp where the mixture's is given (constant), else the sum of
-/// c_i cp_i(T). Precondition: known.
+/// Heat capacity of what 1 m3 of mixed feed has become, J/K: rho cp where the mixture's is given (constant), else the
+/// sum of c_i cp_i(T). Precondition: known.
 double heat_capacity(const Chemistry& chemistry, std::span<const double> xi, double T_K);
 /// Enthalpy that the composition at xi_in takes up from T_in to T, J per m3 of mixed feed.
 double sensible_heat(const Chemistry& chemistry, std::span<const double> xi, double from_K, double to_K);
 /// Heat that the reactions release on the way from xi_in to xi at temperature T, J per m3 of mixed feed (+ = released).
 double released_heat(const Chemistry& chemistry, std::span<const double> xi_in, std::span<const double> xi, double T_K);
-/// The temperature at xi of what entered at (xi_in, T_in) and took up `added` (J per m3 of mixed feed, agitator) and gave
-/// off nothing: sensible_heat(xi_in, T_in, T) = released_heat(xi_in, xi, T) + added. Explicit where cp and dH are constant, else by
-/// Newton's method on the enthalpy. NaN where no temperature above 0 K does.
+/// The temperature at xi of what entered at (xi_in, T_in) and took up `added` (J per m3 of mixed feed, agitator) and
+/// gave off nothing: sensible_heat(xi_in, T_in, T) = released_heat(xi_in, xi, T) + added. Explicit where cp and dH are
+/// constant, else by Newton's method on the enthalpy. NaN where no temperature above 0 K does.
 double adiabatic_temperature(const Chemistry& chemistry, std::span<const double> xi_in, double T_in_K,
                              std::span<const double> xi, double added_J_m3 = 0);
 

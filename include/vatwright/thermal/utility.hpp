@@ -10,19 +10,19 @@ namespace vatwright {
 struct Utility {
   std::string name;
   double supply_K = 0;
-  std::optional<double> flow_m3_s;    ///< the most one vessel can draw
-  std::optional<double> total_m3_s;   ///< the most all vessels of a hookup can draw together
-  double density_kg_m3 = 997;         ///< left out: water
+  std::optional<double> flow_m3_s;   ///< the most one vessel can draw
+  std::optional<double> total_m3_s;  ///< the most all vessels of a hookup can draw together
+  double density_kg_m3 = 997;        ///< left out: water
   double heat_capacity_J_kg_K = 4181;
-  bool condensing = false;            ///< stays at its supply temperature whatever is drawn
+  bool condensing = false;  ///< stays at its supply temperature whatever is drawn
 };
 
 enum class Passage { uniform, co_current, counter_current };
 
 struct Jacket {
   std::vector<std::string> utilities;
-  std::optional<double> area_m2;            ///< of a tank, wetted at the most working fill
-  double U_W_m2_K = 0;                      ///< clean
+  std::optional<double> area_m2;  ///< of a tank, wetted at the most working fill
+  double U_W_m2_K = 0;            ///< clean
   double fouling_m2_K_W = 0;
   Passage passage = Passage::uniform;
   /// 1/(1/U + fouling); 0 for U = 0.

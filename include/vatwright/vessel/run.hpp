@@ -15,27 +15,27 @@ enum class Thermal { hold, adiabatic, jacketed };
 /// How one vessel is run in a duty, after all overrides.
 struct Operation {
   Thermal thermal = Thermal::hold;
-  double hold_K = 0;                        ///< for hold
-  std::optional<double> pressure_Pa;        ///< given for this vessel; it is a let-down on a later vessel
-  double fill = 1;                          ///< of a tank with liquid, fraction of the brimful volume
-  double catalyst_kg_m3 = 0;                ///< loading of a stirred tank, per m3 of working fluid
-  std::optional<std::string> utility;       ///< asked for by name
+  double hold_K = 0;                   ///< for hold
+  std::optional<double> pressure_Pa;   ///< given for this vessel; it is a let-down on a later vessel
+  double fill = 1;                     ///< of a tank with liquid, fraction of the brimful volume
+  double catalyst_kg_m3 = 0;           ///< loading of a stirred tank, per m3 of working fluid
+  std::optional<std::string> utility;  ///< asked for by name
 };
 
 /// How a tank is brought on line; decides among steady states.
 struct Start {
   enum class Filled { feed, product, solvent };
   Filled filled_with = Filled::feed;
-  std::optional<double> temperature_K;      ///< left out: the feed's; a held tank starts at its hold temperature
+  std::optional<double> temperature_K;  ///< left out: the feed's; a held tank starts at its hold temperature
 };
 
 /// One steady state of a stirred tank.
 struct SteadyState {
   std::vector<double> xi_mol_m3;
-  double conversion = 0;     ///< of conversion_of, cumulative from the mixed feed
+  double conversion = 0;  ///< of conversion_of, cumulative from the mixed feed
   double temperature_K = 0;
-  bool stable = false;       ///< eigenvalues of the transient balances (held: at constant T)
-  bool reached = false;      ///< the start ends here
+  bool stable = false;   ///< eigenvalues of the transient balances (held: at constant T)
+  bool reached = false;  ///< the start ends here
 };
 
 /// Along a tube, arrays of equal length.
@@ -46,16 +46,16 @@ struct Profile {
 
 /// Heat that a vessel needs to stay as it is run (held), + = must be removed.
 struct HeatNeed {
-  double cooling_W = 0;            ///< of the whole vessel, agitator counted (tank: warming of the feed too)
-  double preheat_W = 0;            ///< held tubes: to bring what arrives to the hold temperature, + = heating; tanks 0
-  double most_flux_W_m2 = 0;       ///< tubes: greatest cooling flux along it (>= 0)
-  double least_flux_W_m2 = 0;      ///< tubes: greatest heating flux along it as a negative number (<= 0)
+  double cooling_W = 0;        ///< of the whole vessel, agitator counted (tank: warming of the feed too)
+  double preheat_W = 0;        ///< held tubes: to bring what arrives to the hold temperature, + = heating; tanks 0
+  double most_flux_W_m2 = 0;   ///< tubes: greatest cooling flux along it (>= 0)
+  double least_flux_W_m2 = 0;  ///< tubes: greatest heating flux along it as a negative number (<= 0)
 };
 
 /// The place where the fluid is nearest to boiling; absent: cannot be told (why) or not asked.
 struct BubbleMargin {
-  double temperature_K = 0;        ///< hottest, at that place
-  double bubble_K = 0;             ///< bubble point there
+  double temperature_K = 0;  ///< hottest, at that place
+  double bubble_K = 0;       ///< bubble point there
 };
 
 /// Everything one vessel does with one inlet at one feed rate.
@@ -65,29 +65,31 @@ struct VesselOutcome {
   double coldest_K = 0, hottest_K = 0;     ///< inside (a tube's inlet included; what arrives at a tank not)
   double lowest_Pa = 0, highest_Pa = 0;    ///< inside
   std::optional<double> pressure_drop_Pa;  ///< tubes; absent where viscosity (gas: or a molar mass) is missing
-  std::optional<double> let_down_above_Pa; ///< a let-down was asked to more than what arrives: that much (ruled: does not pass)
-  std::optional<double> start_peak_K;      ///< tanks: the hottest while it comes on line
-  std::vector<SteadyState> states;         ///< tanks, rising conversion
-  bool states_complete = true;             ///< tanks: certain in the range searched
-  bool cycle = false;                      ///< tanks: the start ends in a cycle; there is no outlet to speak of
-  std::optional<HeatNeed> heat;            ///< absent where heat is not asked or not known
-  std::vector<Stream> inside;              ///< states to check limits at: tank: its contents; tube: places along it, rising
-  std::optional<Profile> profile;          ///< tubes, where Detail::profile was asked
-  double residual = 0;                     ///< ruling 37, reckoned apart from the solver
-  bool isothermal = true;                  ///< decides the bound on the residual: 1e-9 or 1e-6
+  std::optional<double>
+      let_down_above_Pa;  ///< a let-down was asked to more than what arrives: that much (ruled: does not pass)
+  std::optional<double> start_peak_K;  ///< tanks: the hottest while it comes on line
+  std::vector<SteadyState> states;     ///< tanks, rising conversion
+  bool states_complete = true;         ///< tanks: certain in the range searched
+  bool cycle = false;                  ///< tanks: the start ends in a cycle; there is no outlet to speak of
+  std::optional<HeatNeed> heat;        ///< absent where heat is not asked or not known
+  std::vector<Stream> inside;          ///< states to check limits at: tank: its contents; tube: places along it, rising
+  std::optional<Profile> profile;      ///< tubes, where Detail::profile was asked
+  double residual = 0;                 ///< ruling 37, reckoned apart from the solver
+  bool isothermal = true;              ///< decides the bound on the residual: 1e-9 or 1e-6
 };
 
 enum class Detail {
-  map,      ///< outlet, conversion, states only: what hookups and windows need in their inner loops
-  full,     ///< all but the profile
-  profile   ///< all
+  map,     ///< outlet, conversion, states only: what hookups and windows need in their inner loops
+  full,    ///< all but the profile
+  profile  ///< all
 };
 
 /// One vessel with one inlet, to be rated at any number of feed rates: work that serves all rates (the track of a
 /// tube, the rate curve of a tank) is done once and kept.
 class VesselRun {
  public:
-  /// arrives: extents, temperature and pressure of what arrives (its feed_m3_s is not read). All referenced objects outlive it.
+  /// arrives: extents, temperature and pressure of what arrives (its feed_m3_s is not read). All referenced objects
+  /// outlive it.
   VesselRun(const Vessel& vessel, const Chemistry& chemistry, const Operation& operation, const Start& start,
             const Stream& arrives);
   ~VesselRun();
@@ -98,8 +100,9 @@ class VesselRun {
   /// NoAnswer: cannot_tell (per unsaid, rate table left, heat missing, ..), does_not_pass (pressure used up), unsolved.
   [[nodiscard]] Outcome<VesselOutcome> at(double feed_m3_s, Detail detail);
 
-  /// The feed rate at which the outlet's conversion passes X on the reached branch, read off the kept track at the price of
-  /// one rating; nullopt where no single track serves (several reactions, gas with pressure drop) or X is not passed.
+  /// The feed rate at which the outlet's conversion passes X on the reached branch, read off the kept track at the
+  /// price of one rating; nullopt where no single track serves (several reactions, gas with pressure drop) or X is not
+  /// passed.
   [[nodiscard]] std::optional<double> feed_at_conversion(double X);
 
   /// Evaluations of the rates so far.
