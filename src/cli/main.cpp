@@ -4,7 +4,7 @@
 #include <cstdlib>
 #include <ostream>
 
-#include "descriptor.hpp"
+#include "vatwright/cli/descriptor.hpp"
 #include "vatwright/cli/run.hpp"
 
 namespace {
