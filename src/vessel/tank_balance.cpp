@@ -132,12 +132,8 @@ bool TankBalance::jacobian(std::span<const double> y, std::span<double> J) {
   return true;
 }
 
-double TankBalance::allowed(std::span<const double> y, std::span<const double> step) const {
-  double share = 1;
-  for (std::size_t i = 0; i < n_; ++i)
-    if (step[i] < 0 && y[i] + share * step[i] < 0.01 * y[i]) share = 0.99 * y[i] / -step[i];
-  if (moves_ && std::abs(step[n_]) * share > 50) share = 50 / std::abs(step[n_]);
-  return share;
+double TankBalance::allowed(std::span<const double> step) const {
+  return moves_ && std::abs(step[n_]) > 50 ? 50 / std::abs(step[n_]) : 1;
 }
 
 double TankBalance::imbalance(std::span<const double> y) {

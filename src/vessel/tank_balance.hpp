@@ -30,9 +30,8 @@ class TankBalance {
   bool operator()(std::span<const double> y, std::span<double> F);
   /// dF/dy row by row.
   bool jacobian(std::span<const double> y, std::span<double> J);
-  /// The longest share (at most 1) of a step that takes no amount further than 99 % of the way to zero, and T no
-  /// further than 50 K.
-  [[nodiscard]] double allowed(std::span<const double> y, std::span<const double> step) const;
+  /// The longest share (at most 1) of a step that takes T no further than 50 K.
+  [[nodiscard]] double allowed(std::span<const double> step) const;
   /// Largest |F| over the sum of the terms of that balance; what is made and unmade by one reaction counts apart.
   double imbalance(std::span<const double> y);
   [[nodiscard]] long calls() const { return evaluator_.calls(); }

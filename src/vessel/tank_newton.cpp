@@ -56,7 +56,10 @@ class Settling {
     return true;
   }
   bool try_share(double share) {
-    for (std::size_t j = 0; j < y_.size(); ++j) trial_[j] = y_[j] + share * step_[j];
+    for (std::size_t j = 0; j < y_.size(); ++j) {
+      trial_[j] = y_[j] + share * step_[j];
+      if (j < balance_.species()) trial_[j] = std::max(trial_[j], 0.01 * y_[j]);  // towards zero, never past it
+    }
     return balance_(trial_, F_trial_);
   }
   void take() {
@@ -68,7 +71,7 @@ class Settling {
       settled_ = true;
       return true;
     }
-    double share = balance_.allowed(y_, step_);
+    double share = balance_.allowed(step_);
     for (int i = 0; i < 12; ++i, share /= 2)
       if (try_share(share) && norm(F_trial_) < (1 - 1e-4 * share) * norm(F_)) {
         take();
@@ -78,8 +81,9 @@ class Settling {
     return false;
   }
   bool advance() {
-    const double share = balance_.allowed(y_, step_);
+    const double share = balance_.allowed(step_);
     if (share < 0.5 || !try_share(share)) return false;  // too long a step of the transient
+    if (balance_.imbalance(y_) <= 1e-14) settled_ = true;
     take();
     return true;
   }
