@@ -52,7 +52,8 @@ void read_expectation(Case& c, const std::string& line, int number) {
   std::istringstream in(line);
   Expectation e;
   e.line = number;
-  if (!(in >> e.pointer) || e.pointer[0] == '#') return;
+  e.pointer = next_word(in);
+  if (e.pointer.empty() || e.pointer[0] == '#') return;
   in >> std::ws;
   const bool quoted = in.peek() == '"';
   e.value = next_word(in);
@@ -92,14 +93,27 @@ struct Folder {
   }
 };
 
+/// The member of an object, or the element of an array: by its place, or by its tag or name.
+const json* step(const json& at, const std::string& word) {
+  if (at.is_object()) return at.contains(word) ? &at.at(word) : nullptr;
+  if (!at.is_array()) return nullptr;
+  for (const auto& element : at)
+    for (const char* key : {"tag", "name"})
+      if (element.is_object() && element.value(key, json()) == word) return &element;
+  const bool place = !word.empty() && word.find_first_not_of("0123456789") == std::string::npos;
+  return place && std::stoul(word) < at.size() ? &at.at(std::stoul(word)) : nullptr;
+}
+
 /// What stands at the pointer; nullopt where there is nothing.
 std::optional<json> find(const json& answer, const std::string& pointer) {
-  constexpr std::string_view size = "/size";
-  const bool counts = pointer.size() > size.size() && pointer.ends_with(size);
-  const json::json_pointer at("/" + (counts ? pointer.substr(0, pointer.size() - size.size()) : pointer));
-  if (!answer.contains(at)) return std::nullopt;
-  if (!counts) return answer.at(at);
-  return answer.at(at).is_array() ? std::optional<json>(answer.at(at).size()) : std::nullopt;
+  const json* at = &answer;
+  std::istringstream words(pointer);
+  for (std::string word; std::getline(words, word, '/');) {
+    if (word == "size" && at->is_array()) return json(at->size());
+    at = step(*at, word);
+    if (at == nullptr) return std::nullopt;
+  }
+  return *at;
 }
 
 bool agrees(const Expectation& e, const json& got) {

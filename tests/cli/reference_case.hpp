@@ -7,7 +7,8 @@ namespace vatwright::reference {
 
 /// One line of `=== expect`: where in the answer, what stands there, how near.
 ///   pointer   value   [tolerance relative|absolute]
-/// value is JSON; a pointer that ends in /size counts the elements of an array.
+/// pointer: members and elements parted by strokes; an element by its place, or by its tag or name; in quotes where
+/// there is a space in it. value is JSON; a pointer that ends in /size counts the elements of an array.
 struct Expectation {
   int line = 0;
   std::string pointer, value;
