@@ -117,23 +117,36 @@ class Search {
   struct End {
     Sample in, out;
   };
-  /// The end between a sample inside and one outside: a crossing of zero, or a jump.
+  /// The end between a sample inside and one outside: a crossing of zero, or a jump. A margin that rests on zero (a
+  /// hold temperature that equals the rating) is followed to the edge of what still holds.
   End refine(Sample in, Sample out) {
-    const double shift = in.m > 0 ? 0 : 2 * holds_within;  // a margin that rests on zero: the edge of what still holds
-    const auto f = [&](double x) {
-      if (x == in.x) return in.m + shift;
-      if (x == out.x) return out.m + shift;
+    const double shift = in.m > 0 ? 0 : 2 * holds_within;
+    const auto narrow = [&](double x) {
       const Sample s = sample(x);
       if ((s.x - in.x) * (s.x - out.x) < 0) (s.inside && s.m + shift >= 0 ? in : out) = s;
       return s.m + shift;
     };
-    (void)find_root(f, std::min(in.x, out.x), std::max(in.x, out.x), {.rel_tol = 0, .abs_tol = end_width / 4});
-    while (std::abs(out.x - in.x) > end_width) {
-      const Sample s = sample(in.x + (out.x - in.x) / 2);
-      if (s.x == in.x || s.x == out.x) break;
-      (s.inside ? in : out) = s;
+    const auto f = [&](double x) { return x == in.x ? in.m + shift : x == out.x ? out.m + shift : narrow(x); };
+    const auto root =
+        find_root(f, std::min(in.x, out.x), std::max(in.x, out.x), {.rel_tol = 0, .abs_tol = end_width / 4});
+    if (const double* x = answer(root)) {  // it may have come from one side only: close in from both
+      narrow(*x - end_width / 4);
+      narrow(*x + end_width / 4);
+    }
+    for (double width = std::abs(out.x - in.x); width > end_width; width = std::abs(out.x - in.x)) {
+      const double middle = in.x + (out.x - in.x) / 2;
+      if (middle == in.x || middle == out.x) break;
+      narrow(middle);
     }
     return {in, out};
+  }
+
+  /// The end between two neighbours. A sample that happens to sit on the zero itself, with room behind it, is an end,
+  /// not a margin that rests there.
+  End end_at(std::size_t in, std::size_t out) {
+    const std::size_t behind = in > out ? in + 1 : in - 1;  // wraps below 0, so both ends fail the next line
+    const bool on_zero = samples_[in].m <= 0 && behind < samples_.size() && samples_[behind].m > 0;
+    return on_zero ? refine(samples_[behind], samples_[in]) : refine(samples_[in], samples_[out]);
   }
 
   std::optional<std::string> name_of(const End& end) {
@@ -166,11 +179,11 @@ class Search {
       if (samples_[i].inside && !before) {
         windows_.intervals.emplace_back();
         lower.reset(), upper.reset();
-        if (i > 0) lower = refine(samples_[i], samples_[i - 1]);
+        if (i > 0) lower = end_at(i, i - 1);
         if (lower) windows_.intervals.back().lo = lower->in.feed_m3_s;
       }
       if (!samples_[i].inside && before) {
-        upper = refine(samples_[i - 1], samples_[i]);
+        upper = end_at(i - 1, i);
         windows_.intervals.back().hi = upper->in.feed_m3_s;
       }
     }
