@@ -4,6 +4,7 @@
 #include "tube_balance.hpp"
 #include "tube_outcome.hpp"
 #include "vatwright/numeric/march.hpp"
+#include "vatwright/numeric/matrix.hpp"
 #include "vatwright/numeric/quadrature.hpp"
 #include "vatwright/vessel/pressure_drop.hpp"
 
@@ -19,6 +20,8 @@ struct Stretch {
 /// Marches the balances of a tube through every place where something runs out or comes back, and keeps what it
 /// marched.
 class TubeMarch {
+  using Rates = std::vector<double>;
+
  public:
   explicit TubeMarch(TubeBalance balance) : balance_(std::move(balance)), y_(balance_.at_inlet()) {}
 
@@ -44,26 +47,36 @@ class TubeMarch {
     at->track.read(std::clamp(s, at->track.begin(), at->track.end()), y);
   }
 
-  /// Largest |change of an extent - integral of its rate along the kept track| up to s, over the largest change.
+  /// Largest imbalance of an extent up to s over the largest sum of terms: step by step the change that is kept against
+  /// the integral of the rates along the track. Where reactions are much faster than the step, a slip of the track
+  /// shows many times over in them; it is told as the shift of the state that closes the balance, (I - h J) shift =
+  /// slip.
   double residual(double s) {
-    const std::size_t R = balance_.size() - (balance_.with_pressure() ? 1 : 0);
-    std::vector<double> sum(R), there(balance_.size()), dy(balance_.size());
+    Rates total(extents()), from(balance_.size()), to(balance_.size());
     const auto kept = balance_.exhausted();
     for (const Stretch& stretch : stretches_) {
       balance_.set_exhausted(stretch.exhausted);
       const auto& nodes = stretch.track.nodes();
-      for (std::size_t k = 0; k + 1 < nodes.size() && nodes[k] < s; ++k)
-        add_step(stretch.track, nodes[k], std::min(nodes[k + 1], s), sum, there, dy);
+      for (std::size_t k = 0; k + 1 < nodes.size() && nodes[k] < s; ++k) {
+        const double a = nodes[k], b = std::min(nodes[k + 1], s);
+        Rates slip(balance_.size());
+        add_integral(stretch.track, a, b, gauss(stretch.track, a, b), 30, slip);
+        stretch.track.read(a, from);
+        stretch.track.read(b, to);
+        for (std::size_t i = 0; i < slip.size(); ++i) slip[i] = to[i] - from[i] - slip[i];
+        close_by_shift(to, b - a, slip);
+        for (std::size_t j = 0; j < total.size(); ++j) total[j] += slip[j];
+      }
     }
     balance_.set_exhausted(kept);
-    read(s, there);
+    read(s, to);
     const auto start = balance_.at_inlet();
-    double worst = 0, scale = 0;
-    for (std::size_t j = 0; j < R; ++j) {
-      worst = std::max(worst, std::abs(there[j] - start[j] - sum[j]));
-      scale = std::max({scale, std::abs(sum[j]), std::abs(there[j] - start[j])});
+    double worst = 0, terms = 0;
+    for (std::size_t j = 0; j < total.size(); ++j) {
+      worst = std::max(worst, std::abs(total[j]));
+      terms = std::max(terms, std::abs(start[j]) + std::abs(to[j]) + std::abs(to[j] - start[j]));
     }
-    return scale > 0 ? worst / scale : 0;
+    return terms > 0 ? worst / terms : 0;
   }
 
   [[nodiscard]] double reached() const { return s_; }
@@ -78,12 +91,12 @@ class TubeMarch {
   TubeBalance& balance() { return balance_; }
 
  private:
-  /// Five-point Gauss rule on one step, all extents at once.
-  void add_step(const Track& track, double a, double b, std::vector<double>& sum, std::vector<double>& there,
-                std::vector<double>& dy) {
+  /// Five-point Gauss rule on [a, b], all extents at once.
+  Rates gauss(const Track& track, double a, double b) {
     static constexpr double x[] = {0, 0.5384693101056831, 0.9061798459386640};
     static constexpr double w[] = {0.5688888888888889, 0.4786286704993665, 0.2369268850561891};
     const double middle = (a + b) / 2, half = (b - a) / 2;
+    Rates sum(y_.size()), there(y_.size()), dy(y_.size());
     for (int k = 0; k < 3; ++k)
       for (double sign : {-1.0, 1.0}) {
         if (k == 0 && sign < 0) continue;
@@ -91,6 +104,35 @@ class TubeMarch {
         balance_(there, dy);
         for (std::size_t j = 0; j < sum.size(); ++j) sum[j] += half * w[k] * dy[j];
       }
+    return sum;
+  }
+  /// Halved until both halves say the same: a rate may end like a root where something runs out.
+  void add_integral(const Track& track, double a, double b, const Rates& whole, int depth, Rates& sum) {
+    const double middle = (a + b) / 2;
+    const Rates left = gauss(track, a, middle), right = gauss(track, middle, b);
+    double apart = 0;
+    for (std::size_t j = 0; j < sum.size(); ++j)
+      apart = std::max(apart, std::abs(left[j] + right[j] - whole[j]) / balance_.scale()[j]);
+    if (apart <= 1e-13 || depth == 0) {
+      for (std::size_t j = 0; j < sum.size(); ++j) sum[j] += left[j] + right[j];
+      return;
+    }
+    add_integral(track, a, middle, left, depth - 1, sum);
+    add_integral(track, middle, b, right, depth - 1, sum);
+  }
+
+  [[nodiscard]] std::size_t extents() const { return balance_.size() - (balance_.with_pressure() ? 1 : 0); }
+
+  void close_by_shift(const Rates& y, double h, Rates& slip) {
+    double largest = 0;
+    for (std::size_t i = 0; i < slip.size(); ++i) largest = std::max(largest, std::abs(slip[i]) / balance_.scale()[i]);
+    if (largest <= 1e-12) return;
+    const std::size_t n = y.size();
+    Rates J(n * n), shift = slip;
+    balance_.jacobian(y, J);
+    for (std::size_t i = 0; i < n; ++i)
+      for (std::size_t k = 0; k < n; ++k) J[i * n + k] = (i == k ? 1 : 0) - h * J[i * n + k];
+    if (solve_linear(J, shift)) slip = shift;
   }
 
   /// What is made faster than it could be used comes back before the next step.
@@ -123,7 +165,9 @@ class TubeMarch {
 
     const auto scale = balance_.scale();
     const MarchOptions options{.rel_tol = 1e-11, .abs_tol = 1e-13, .scale = scale};
-    auto track = march(f, y_, s_, s, options, events);
+    const auto by_amounts = [&](double, std::span<const double> y, std::span<double> J) { balance_.jacobian(y, J); };
+    const Jacobian jacobian(by_amounts);
+    auto track = march(f, y_, s_, s, options, events, &jacobian);
     if (const auto* no = std::get_if<NoAnswer>(&track)) {
       failed_ = unsolved("the balances along the tube could not be followed: " + no->why);
       return;
@@ -140,6 +184,7 @@ class TubeMarch {
     }
     auto next = exhausted;
     next[watches[which].species] = !watches[which].is_exhausted;
+    if (!watches[which].is_exhausted) balance_.finish(watches[which].species, y_);
     balance_.set_exhausted(std::move(next));
   }
 

@@ -32,7 +32,7 @@ TubeBalance::TubeBalance(const Setup& setup, bool with_pressure, double feed_m3_
       feed_m3_s_(feed_m3_s),
       length_m_(length_of(setup.vessel.kind)),
       c_scale_(scale_of(setup.chemistry)),
-      gone_(1e-12 * c_scale_),
+      gone_(1e-10 * c_scale_),
       C_(static_cast<std::size_t>(setup.chemistry.kinetics.species())),
       r_(R_),
       dT_(R_) {
@@ -81,11 +81,15 @@ double TubeBalance::left(std::size_t species, std::span<const double> y) const {
 }
 
 /// Rates with what can run out never below what counts as gone: those just above zero.
-void TubeBalance::rates_just_above(std::span<const double> y, double T) {
+void TubeBalance::rates_just_above(std::span<const double> y, double T, std::optional<std::size_t> raised) {
   setup_.chemistry.kinetics.amounts(setup_.chemistry.feed.c_mol_m3, y.first(R_), C_);
-  for (std::size_t i : can_run_out_) C_[i] = std::max(C_[i], gone_);
-  const double X = setup_.chemistry.kinetics.conversion(y.first(R_));
-  setup_.chemistry.concentrations_of_amounts(C_, T, pressure(y), C_);
+  for (std::size_t i : can_run_out_) C_[i] = std::max(C_[i], raised == i ? 4 * gone_ : gone_);
+  rates_of_amounts(T, setup_.chemistry.kinetics.conversion(y.first(R_)), pressure(y));
+}
+
+/// From amounts in C_, which become concentrations.
+void TubeBalance::rates_of_amounts(double T, double X, double P) {
+  setup_.chemistry.concentrations_of_amounts(C_, T, P, C_);
   evaluator_(C_, T, X, r_);
   for (std::size_t j = 0; j < R_; ++j) r_[j] *= setup_.capacity[j];
 }
@@ -118,8 +122,24 @@ void TubeBalance::share_out() {
   }
 }
 
-double TubeBalance::wanting(std::size_t species, std::span<const double> y) {
+void TubeBalance::finish(std::size_t species, std::span<double> y) {
   rates_just_above(y, temperature(y));
+  std::size_t most = R_;
+  double rate = 0;
+  for (std::size_t j = 0; j < R_; ++j)
+    if (const double use = -setup_.chemistry.kinetics.nu(static_cast<int>(species), static_cast<int>(j)) * r_[j];
+        use > rate) {
+      rate = use;
+      most = j;
+    }
+  if (most == R_) return;
+  const double c = left(species, y) * c_scale_ + gone_;
+  y[most] -= c / setup_.chemistry.kinetics.nu(static_cast<int>(species), static_cast<int>(most));
+}
+
+double TubeBalance::wanting(std::size_t species, std::span<const double> y) {
+  // asked at four times what counts as gone: what comes back does not run out again at once
+  rates_just_above(y, temperature(y), species);
   const bool was = exhausted_[species];
   exhausted_[species] = false;  // the others stay cut
   share_out();
@@ -140,6 +160,45 @@ void TubeBalance::operator()(std::span<const double> y, std::span<double> dy) {
   const double P = pressure(y);
   const double loss = loss_per_length(setup_, feed_m3_s_, y.first(R_), T, P).value_or(0);
   dy[R_] = -2 * P / (setup_.inlet_Pa * setup_.inlet_Pa) * length_m_ * loss;
+}
+
+/// By differences in the amount of each species, in proportion to it, so that what is nearly gone is felt at its own
+/// size.
+void TubeBalance::jacobian(std::span<const double> y, std::span<double> J) {
+  const Kinetics& kinetics = setup_.chemistry.kinetics;
+  const double T = std::max(1.0, temperature(y)), X = kinetics.conversion(y.first(R_)), P = pressure(y);
+  const std::size_t m = size(), n = C_.size();
+  std::vector<double> c(n), r(R_), dr(R_);
+  kinetics.amounts(setup_.chemistry.feed.c_mol_m3, y.first(R_), c);
+  const auto rates = [&](double T_K, double P_Pa) {
+    C_ = c;
+    for (std::size_t i : can_run_out_) C_[i] = std::max(C_[i], gone_);
+    rates_of_amounts(T_K, X, P_Pa);
+    share_out();
+  };
+  std::ranges::fill(J, 0.0);
+  rates(T, P);
+  r = r_;
+  for (std::size_t i = 0; i < n; ++i) {
+    const double kept = c[i], h = std::max(1e-7 * std::abs(kept), 1e-6 * gone_);
+    c[i] = kept + h;
+    rates(T, P);
+    for (std::size_t j = 0; j < R_; ++j)
+      for (std::size_t k = 0; k < R_; ++k)
+        J[j * m + k] += factor_ * (r_[j] - r[j]) / h * kinetics.nu(static_cast<int>(i), static_cast<int>(k));
+    c[i] = kept;
+  }
+  if (!setup_.is_held && setup_.heat_known()) {
+    const double h = 1e-6 * T, capacity = heat_capacity(setup_.chemistry, y.first(R_), T);
+    rates(T + h, P);
+    for (std::size_t j = 0; j < R_; ++j)
+      for (std::size_t k = 0; k < R_; ++k)
+        J[j * m + k] -= factor_ * (r_[j] - r[j]) / h * kinetics.reaction(static_cast<int>(k)).heat->at(T) / capacity;
+  }
+  if (!with_pressure_) return;
+  const double w = std::max(y[R_], 0.01 * no_pressure);  // P = P_in sqrt(w)
+  rates(T, P * std::sqrt(1 + 1e-6));
+  for (std::size_t j = 0; j < R_; ++j) J[j * m + R_] = factor_ * (r_[j] - r[j]) / (1e-6 * w);
 }
 
 }  // namespace vatwright

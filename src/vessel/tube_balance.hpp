@@ -19,6 +19,8 @@ class TubeBalance {
   [[nodiscard]] std::vector<double> at_inlet() const;
   [[nodiscard]] std::vector<double> scale() const;
   void operator()(std::span<const double> y, std::span<double> dy);
+  /// d(dy/ds)/dy row by row; the row of the pressure, which is never stiff, is left zero.
+  void jacobian(std::span<const double> y, std::span<double> J);
   [[nodiscard]] double temperature(std::span<const double> y) const;
   [[nodiscard]] double pressure(std::span<const double> y) const;
 
@@ -28,6 +30,8 @@ class TubeBalance {
   void set_exhausted(std::vector<bool> exhausted) { exhausted_ = std::move(exhausted); }
   /// What is left of a species over what counts as gone; crosses zero where it runs out.
   [[nodiscard]] double left(std::size_t species, std::span<const double> y) const;
+  /// Takes the last trace of a species that runs out, by the reaction that uses most of it.
+  void finish(std::size_t species, std::span<double> y);
   /// Use that an exhausted species could have, less what is made of it; crosses zero where it comes back.
   [[nodiscard]] double wanting(std::size_t species, std::span<const double> y);
   /// Below this the pressure counts as used up, as (P/P_in)^2.
@@ -37,7 +41,8 @@ class TubeBalance {
   [[nodiscard]] bool with_pressure() const { return with_pressure_; }
 
  private:
-  void rates_just_above(std::span<const double> y, double T);
+  void rates_just_above(std::span<const double> y, double T, std::optional<std::size_t> raised = {});
+  void rates_of_amounts(double T, double X, double P);
   void share_out();
   [[nodiscard]] double made(std::size_t species) const;
   [[nodiscard]] double used(std::size_t species) const;

@@ -101,7 +101,9 @@ bool TubeTrack::extend() {
       break;
     }
   }
+  bool at_once = true;
   while (!add_panel(u0, u1)) {
+    at_once = false;
     if (way_.kind() == EndKind::equilibrium && u0 > 25) {  // the rest is the rounding of the rate
       ended_ = true;
       return false;
@@ -112,7 +114,7 @@ bool TubeTrack::extend() {
     }
     u1 = u0 + (u1 - u0) / 2;
   }
-  width_ = std::min(2 * (u1 - u0), 2.5);
+  width_ = std::min((at_once ? 2 : 1) * (u1 - u0), 2.0);
   return true;
 }
 
