@@ -41,16 +41,6 @@ void Scope::warning(Place at, std::string_view key, std::string found, std::stri
   diagnostics->warning(at, subject, name(key), std::move(found), std::move(expected));
 }
 
-std::string quoted(std::string_view text) {
-  constexpr std::size_t most = 60;
-  std::string shown = "\"";
-  for (const char c : text.substr(0, most)) shown += static_cast<unsigned char>(c) < 0x20 ? '?' : c;
-  // not in the middle of a letter of several bytes
-  if (text.size() > most)
-    while (shown.size() > 1 && (static_cast<unsigned char>(text[shown.size() - 1]) & 0xC0) == 0x80) shown.pop_back();
-  return shown + (text.size() > most ? "..\"" : "\"");
-}
-
 std::string found_text(const Node& node) {
   struct {
     std::string operator()(const std::string& s) const { return quoted(s); }

@@ -88,7 +88,7 @@ struct SpreadReader {
     const bool free = value.temperature || value.gauge || m.key.rfind("orders.", 0) == 0;
     if (!per_cent && !free && value.si > 0 && width >= value.si)
       return fault(found + ", which reaches zero", "expected a half-width below the value, or a share such as \"15 %\"");
-    scope.spreads->push_back({scope.trail.empty() ? m.key : scope.trail + "." + m.key, per_cent, width});
+    scope.collected->spreads.push_back({scope.trail.empty() ? m.key : scope.trail + "." + m.key, per_cent, width});
   }
 };
 

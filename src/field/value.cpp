@@ -26,8 +26,35 @@ std::string expected_text(const std::string& what) {
   return what.rfind("expected", 0) == 0 ? what : "expected " + what;
 }
 
+/// A word on units that are easily meant otherwise: the gallon, and plain bar where a gauge reads.
+void warn_of_unit(const std::string& text, const Node& node, const Measure& m, const Scope& scope, std::string_view key) {
+  const auto read = parse_quantity(text);
+  const Quantity* q = std::get_if<Quantity>(&read);
+  if (!q) return;
+  if (q->unit == "gal")
+    scope.warning(node.place, key, "found " + quoted(text) + ", read as US gallons: " + show(q->si, Shown::volume),
+                  "an imperial gallon is 1.20 of it");
+  if (!m.absolute || !q->plain_bar || scope.collected->bar_told) return;
+  constexpr double atmosphere_Pa = 101325;
+  const std::string gauge = show_number(q->si - atmosphere_Pa, Shown::pressure, Units::trade);
+  scope.warning(node.place, key,
+                "found " + quoted(text) + ", read as absolute: " + show_number(q->si, Shown::pressure, Units::trade) +
+                    " bar absolute = " + gauge + " barg",
+                "write barg where a gauge reads it");
+  scope.collected->bar_told = true;
+}
+
+bool below_vacuum(double x, const Measure& m) {
+  return m.dimension == dim::pressure && x < 0 && m.range.lo == 0;
+}
+
 std::optional<double> judged(double x, const Node& node, const Measure& m, const Scope& scope, std::string_view key) {
   if (std::isfinite(x) && m.range.has(x)) return x;
+  if (below_vacuum(x, m)) {
+    scope.error(node.place, key, found_text(node) + ", below full vacuum",
+                m.absolute ? "expected -1.01325 barg or more" : "expected " + m.text());
+    return std::nullopt;
+  }
   const std::string such = bare_dimension(m.dimension) ? "" : ", such as " + m.example();
   scope.error(node.place, key, found_text(node),
               "expected " + m.text() + (std::isfinite(x) ? "" : ", finite") + such + per_cent_hint(x, m));
@@ -63,7 +90,10 @@ std::string Measure::example() const {
 std::optional<double> read_figure(const Node& node, const Measure& m, const Scope& scope, std::string_view key) {
   if (const std::string* text = node.text()) {
     const auto read = to_si(*text, m.dimension, m.sense);
-    if (const double* x = std::get_if<double>(&read)) return judged(*x, node, m, scope, key);
+    if (const double* x = std::get_if<double>(&read)) {
+      warn_of_unit(*text, node, m, scope, key);
+      return judged(*x, node, m, scope, key);
+    }
     const auto& fault = std::get<QuantityFault>(read);
     scope.error(node.place, key, fault.found, expected_text(fault.expected));
     return std::nullopt;

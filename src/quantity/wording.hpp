@@ -2,11 +2,9 @@
 #include <string>
 #include <string_view>
 
-namespace vatwright {
+#include "vatwright/quantity/wording.hpp"
 
-/// The text in quotes, as a message shows it: at most about 60 characters, on one line, valid UTF-8 whatever the bytes;
-/// control characters and bytes that are no UTF-8 are shown as "?".
-std::string quoted(std::string_view text);
+namespace vatwright {
 
 /// At most four significant digits, no trailing zeros: "26.85", "1.23e-05". Not for NaN or infinity.
 std::string brief(double value);

@@ -27,11 +27,11 @@ Operation operation_of(const Duty& duty, const Vessel& vessel) {
   const auto at = duty.operation_of.find(vessel.tag);
   const OperationChoice own = at == duty.operation_of.end() ? OperationChoice{} : at->second;
   Operation operation;
-  operation.thermal = duty.thermal;
+  operation.thermal = own.thermal.value_or(duty.thermal);
   operation.hold_K = own.temperature_K.value_or(duty.hold_K);
   operation.pressure_Pa = own.pressure_Pa;
   operation.fill = working_fill(duty, vessel, own);
-  operation.catalyst_kg_m3 = duty.catalyst_kg_m3;
+  operation.catalyst_kg_m3 = own.catalyst_kg_m3.value_or(duty.catalyst_kg_m3);
   operation.utility = own.utility ? own.utility : duty.operation.utility;
   return operation;
 }

@@ -47,7 +47,8 @@ bool read_common(const Member& member, const Table& table, const std::vector<std
 template <class D>
 std::vector<std::string> keys_of(const Fields<D>& fields) {
   std::vector<std::string> keys;
-  for (const Field<D>& field : fields) keys.push_back(field.key);
+  for (const Field<D>& field : fields)
+    if (!field.form.empty()) keys.push_back(field.key);   // without a form: a usual wrong name, told when met
   return keys;
 }
 
@@ -80,7 +81,8 @@ bool read_table_node(const Fields<D>& fields, const Node& node, const Scope& sco
 template <class D>
 std::vector<KeyDoc> docs_of(const Fields<D>& fields) {
   std::vector<KeyDoc> docs;
-  for (const Field<D>& f : fields) docs.push_back({f.key, f.form, f.left_out, f.doc});
+  for (const Field<D>& f : fields)
+    if (!f.form.empty()) docs.push_back({f.key, f.form, f.left_out, f.doc});
   return docs;
 }
 

@@ -6,14 +6,22 @@
 #include "vatwright/error/diagnostic.hpp"
 #include "vatwright/field/given.hpp"
 #include "vatwright/field/node.hpp"
+#include "vatwright/quantity/wording.hpp"
 
 namespace vatwright {
 
+/// What is gathered beside the values while files are read.
+struct Collected {
+  std::vector<FoundSpread> spreads;
+  bool bar_told = false;   ///< that plain "bar" is absolute is said once
+};
+
 /// Where the reader is: what a message names (subject "K-201", path "jacket"), the full path for spreads
-/// ("vessel.K-201.jacket"), and where faults and spreads are collected. Both outlive it.
+/// ("vessel.K-201.jacket"), and where faults and spreads are
+/// collected. Both outlive it.
 struct Scope {
   Diagnostics* diagnostics = nullptr;
-  std::vector<FoundSpread>* spreads = nullptr;
+  Collected* collected = nullptr;
   std::string subject, path, trail;
   bool top = false;   ///< the top of a file: its tables are subjects of their own
   Place place;        ///< of the table
@@ -29,8 +37,6 @@ struct Scope {
   void warning(Place at, std::string_view key, std::string found, std::string expected = {}) const;
 };
 
-/// `"text"`; control characters are shown as `?`, and what is longer than 60 characters is cut.
-std::string quoted(std::string_view text);
 /// What a value is, for messages: `found "abc"`, `found 6.3`, `found a list`, `found a table`.
 std::string found_text(const Node& node);
 /// "A", "A and B", "A, B and C" (the joining word given).

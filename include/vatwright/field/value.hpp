@@ -30,6 +30,7 @@ struct Measure {
   Dimension dimension;
   Range range = anything;
   Sense sense = Sense::plain;
+  bool absolute = false;   ///< a pressure that may be meant as gauge: a plain "bar" is worth a word
   /// "a volume above zero".
   [[nodiscard]] std::string text() const;
   /// A figure that would do, as it is written in a file: `"6.3 m3"` or `0.5`.
@@ -60,7 +61,7 @@ std::optional<ByName<Raw>> read_raws_by_name(const Node& node, const Scope& scop
 
 /// Words that every table takes besides its own.
 bool is_common_key(std::string_view key);
-/// Reads the table `spread` of `table` (its siblings are looked up there) and adds what it finds to scope.spreads.
+/// Reads the table `spread` of `table` (its siblings are looked up there) and adds what it finds to scope.collected.
 void read_spread(const Node& node, const Table& table, const std::vector<std::string>& known, const Scope& scope);
 
 }  // namespace vatwright

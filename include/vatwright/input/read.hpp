@@ -15,8 +15,15 @@ struct ReadResult {
   std::optional<Site> site;                  ///< inventory alone (check without a duty)
   std::string inventory_sha256, duty_sha256; ///< hex; duty empty where none
   std::vector<std::string> understood;       ///< sentences for `check`, in words and trade units
-  bool unwritable = false;
 };
+
+/// A file's name as the user gave it and its bytes, or why they could not be had, in words.
+struct FileText {
+  std::string name, text, fault;
+};
+/// Reads the texts of two files; see read_files.
+ReadResult read_texts(const FileText& inventory, const std::optional<FileText>& duty,
+                      const std::optional<std::string>& feed_rate = {});
 
 /// Reads an inventory and, where given, a duty (paths), checks all of both and tells every fault at once. Files of any bytes
 /// are answered; a duty whose mode or thermal is not computed yet is refused in plain words.

@@ -35,6 +35,8 @@ struct Spread {
 struct OperationChoice {
   std::optional<double> temperature_K, pressure_Pa, fill;
   std::optional<std::string> utility;
+  std::optional<Thermal> thermal;
+  std::optional<double> catalyst_kg_m3;
 };
 
 struct Duty {
