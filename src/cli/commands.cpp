@@ -8,7 +8,7 @@ const std::vector<Command>& all_commands() {
       {"check",
        "read the files and show what was understood",
        Needs::inventory,
-       {"--json", "--feed-rate", "--units", "--quiet", "--stamp"},
+       {"--json", "--feed-rate", "--units", "--threads", "--quiet", "--stamp"},
        run_check},
       {"screen",
        "rate every vessel by itself",

@@ -1,7 +1,9 @@
 #include "options.hpp"
 
 #include <charconv>
+#include <filesystem>
 #include <sstream>
+#include <system_error>
 #include <utility>
 
 #include "vatwright/error/diagnostic.hpp"
@@ -52,6 +54,22 @@ std::vector<Status> statuses(const std::string& words, std::vector<std::string>&
   return offer;
 }
 
+/// Whether both names are one file that is there.
+bool same_file(const std::string& a, const std::string& b) {
+  std::error_code none;
+  return std::filesystem::equivalent(a, b, none);
+}
+
+void check_csv(const Settings& settings, std::vector<std::string>& faults) {
+  if (!settings.csv) return;
+  const std::string& csv = *settings.csv;
+  if (csv.empty()) faults.push_back("--csv: found an empty name; expected a file, or - for standard output");
+  if (settings.json && csv == "-")
+    faults.push_back("--json and --csv - both want standard output; give --csv a file, or leave one of them out");
+  if (same_file(csv, settings.inventory) || (settings.duty && same_file(csv, *settings.duty)))
+    faults.push_back("--csv: \"" + csv + "\" is a file that is read; expected another one to write to");
+}
+
 }  // namespace
 
 Settings settings_of(const Words& words, std::vector<std::string>& faults) {
@@ -76,10 +94,7 @@ Settings settings_of(const Words& words, std::vector<std::string>& faults) {
   settings.quiet = words.quiet;
   settings.require_fit = words.require_fit;
   settings.exact = words.exact;
-  if (settings.csv && settings.csv->empty())
-    faults.push_back("--csv: found an empty name; expected a file, or - for standard output");
-  if (settings.json && settings.csv == "-")
-    faults.push_back("--json and --csv - both want standard output; give --csv a file, or leave one of them out");
+  check_csv(settings, faults);
   return settings;
 }
 

@@ -113,15 +113,21 @@ void add_limit_rows(Table& table, const Rating& rating, const Look& look) {
   for (const Limit& limit : rating.limits) {
     const Shown shown = shown_of(limit).value;
     table.rows.push_back({rating.tag.empty() ? "whole" : rating.tag, std::string(limit.name),
-                          figure_with_unit(limit.value, shown, look), figure_with_unit(limit.bound, shown, look),
-                          margin_text(limit, look), words_of(limit.state)});
+                          figure(limit.value, shown, look), figure(limit.bound, shown, look),
+                          limit.value || limit.bound ? unit_of(shown, look.units) : "", margin_text(limit, look),
+                          words_of(limit.state)});
   }
 }
 
 void add_limits(Page& page, const HookupRating& rating, const Look& look) {
   Table table;
-  table.columns = {{"vessel", Align::left, true}, {"limit", Align::left, true}, {"value", Align::point},
-                   {"bound", Align::point},       {"margin", Align::point},     {"state"}};
+  table.columns = {{"vessel", Align::left, true},
+                   {"limit", Align::left, true},
+                   {"value", Align::right},
+                   {"bound", Align::right},
+                   {"unit"},
+                   {"margin", Align::right},
+                   {"state"}};
   for (const Rating& vessel : rating.vessels) add_limit_rows(table, vessel, look);
   add_limit_rows(table, rating.whole, look);
   if (table.rows.empty()) return;

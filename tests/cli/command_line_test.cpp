@@ -65,6 +65,8 @@ TEST_CASE("values", "[cli]") {
   refuses(screen({"--json", "--csv", "-"}),
           "--json and --csv - both want standard output; give --csv a file, or leave one of them out");
   refuses(screen({"--csv", ""}), "--csv: found an empty name; expected a file, or - for standard output");
+  refuses(screen({"--csv", fixture("easy.toml")}),
+          "--csv: \"" + fixture("easy.toml") + "\" is a file that is read; expected another one to write to");
   const Arguments rank = {"rank", fixture("bay.toml"), fixture("easy.toml")};
   const auto with = [&rank](const Arguments& more) {
     Arguments all = rank;

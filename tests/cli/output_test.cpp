@@ -76,7 +76,8 @@ TEST_CASE("only idle vessels are offered unless asked; examine takes any", "[cli
   const auto tags = [](const Arguments& more) {
     Arguments arguments = with({"screen", fixture("bay.toml"), fixture("easy.toml"), "--json"}, more);
     std::vector<std::string> found;
-    for (const Json& vessel : Json::parse(run_program(arguments).out)["vessels"]) found.push_back(vessel["tag"]);
+    const Json json = Json::parse(run_program(arguments).out);
+    for (const Json& vessel : json["vessels"]) found.push_back(vessel["tag"]);
     return found;
   };
   CHECK(tags({}) == std::vector<std::string>{"K-1", "K-2", "P-1"});
