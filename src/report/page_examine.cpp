@@ -1,4 +1,5 @@
 #include <algorithm>
+#include <cmath>
 
 #include "page_parts.hpp"
 #include "vatwright/report/page.hpp"
@@ -156,8 +157,22 @@ void add_states(Page& page, const HookupRating& rating, const Look& look) {
   page.table(table);
 }
 
+/// Indices of a few places spread evenly along the length, both ends among them.
+std::vector<std::size_t> places_along(const std::vector<double>& length_m) {
+  constexpr int steps = 7;
+  std::vector<std::size_t> places;
+  for (int i = 0; i <= steps; ++i) {
+    const double wanted = length_m.front() + (length_m.back() - length_m.front()) * i / steps;
+    const auto nearest = std::min_element(length_m.begin(), length_m.end(), [wanted](double a, double b) {
+      return std::abs(a - wanted) < std::abs(b - wanted);
+    });
+    const auto place = static_cast<std::size_t>(nearest - length_m.begin());
+    if (places.empty() || places.back() != place) places.push_back(place);
+  }
+  return places;
+}
+
 void add_profile(Page& page, const Rating& vessel, const Look& look) {
-  constexpr std::size_t rows = 8;
   const Profile& profile = *vessel.profile;
   Table table;
   table.columns = {{with_unit("from inlet", Shown::length, look), Align::point},
@@ -165,16 +180,12 @@ void add_profile(Page& page, const Rating& vessel, const Look& look) {
                    {with_unit("temperature", Shown::temperature, look), Align::point},
                    {with_unit("pressure", Shown::pressure, look), Align::point},
                    {with_unit("medium", Shown::temperature, look), Align::point}};
-  const std::size_t n = profile.length_m.size();
-  const std::size_t shown = std::min(rows, n);
-  for (std::size_t i = 0; i < shown; ++i) {
-    const std::size_t at = shown == 1 ? 0 : i * (n - 1) / (shown - 1);
+  for (std::size_t at : places_along(profile.length_m))
     table.rows.push_back({figure(profile.length_m[at], Shown::length, look),
                           figure(profile.conversion[at], Shown::percent, look),
                           figure(profile.temperature_K[at], Shown::temperature, look),
                           figure(profile.pressure_Pa[at], Shown::pressure, look),
                           figure(profile.medium_K[at], Shown::temperature, look)});
-  }
   page.heading("Along " + vessel.tag);
   page.table(table);
 }

@@ -40,7 +40,7 @@ std::string tally(const ScreenAnswer& answer) {
   if (answer.vessels.empty()) return "No vessel is offered.";
   std::string text = "Of " + number_word(fit + not_fit + unknown) +
                      (answer.vessels.size() == 1 ? " vessel " : " vessels ") + number_word(fit) +
-                     (fit == 1 ? " fits" : " fit");
+                     (fit <= 1 ? " fits" : " fit");
   if (not_fit != 0) text += ", " + number_word(not_fit) + (not_fit == 1 ? " does not" : " do not");
   if (unknown != 0) text += ", of " + number_word(unknown) + " it cannot be told";
   return text + (answer.cases.empty() ? "." : ", over the base and all cases.");
