@@ -105,8 +105,10 @@ Duty build_duty(const DutyDraft& draft, const Site& site, const std::string& fol
                                 "found a measured table of rates beside other reactions", "expected one reaction");
   if (reactions.size() == equations.size()) check_conversion_of(draft, reactions, feed, builder);
   const int of = feed.index_of(duty.conversion_of);
+  std::vector<bool> fed;
+  for (const double c : feed.c_mol_m3) fed.push_back(c > 0);
   chemistry.kinetics = Kinetics(std::move(reactions), static_cast<int>(feed.species.size()), of,
-                                of < 0 ? 0.0 : feed.c_mol_m3[static_cast<std::size_t>(of)]);
+                                of < 0 ? 0.0 : feed.c_mol_m3[static_cast<std::size_t>(of)], std::move(fed));
   build_operation(draft, site, built.said_pressure, duty, builder);
   if (continuous(draft)) duty.target = build_target(draft, duty, built.sum_of_rates_m3_s, amounts, builder);
   return duty;

@@ -8,7 +8,7 @@
 
 namespace vatwright {
 
-Kinetics::Kinetics(std::vector<Reaction> reactions, int species, int of, double c_of_feed_mol_m3)
+Kinetics::Kinetics(std::vector<Reaction> reactions, int species, int of, double c_of_feed_mol_m3, std::vector<bool> fed)
     : reactions_(std::move(reactions)), species_(species), of_(of), c_of_feed_(c_of_feed_mol_m3) {
   VATWRIGHT_EXPECTS(species >= 0 && of < species);
   const std::size_t width = reactions_.size();
@@ -19,6 +19,10 @@ Kinetics::Kinetics(std::vector<Reaction> reactions, int species, int of, double 
       nu_[static_cast<std::size_t>(part.species) * width + j] += part.value;
     }
   independent_ = rank_of(nu_, species_, static_cast<int>(width));
+  if (fed.empty() || of < 0) return;
+  std::vector<std::optional<double>> needed;
+  for (int i = 0; i < species; ++i) needed.push_back(moles_needed(*this, fed, i));
+  needed_ = std::move(needed), fed_ = std::move(fed);
 }
 
 double Kinetics::nu(int species, int reaction) const {

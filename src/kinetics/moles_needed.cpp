@@ -10,6 +10,7 @@ std::optional<double> moles_needed(const Kinetics& kinetics, const std::vector<b
   VATWRIGHT_EXPECTS(kinetics.of() >= 0 && species >= 0 && species < kinetics.species());
   VATWRIGHT_EXPECTS(fed.size() == static_cast<std::size_t>(kinetics.species()));
   if (species == kinetics.of()) return std::nullopt;
+  if (kinetics.fed_ == fed) return kinetics.needed_[static_cast<std::size_t>(species)];
 
   // Columns: extents, then one surplus for each species that may not be used up because nobody feeds it.
   std::vector<int> kept;

@@ -59,7 +59,8 @@ std::string explain(double T_K, double boils_K) {
 Limit against_given(const LimitInput& input) {
   const double boils_K = input.product.boiling_K;
   const double T_K = input.outcome.hottest_K;
-  return explained(limit_of(limit_name::bubble_point, T_K, boils_K, Side::most, "K"), explain(T_K, boils_K));
+  return explained(limit_of(limit_name::bubble_point, T_K, boils_K, Side::most, "K"),
+                   [&] { return explain(T_K, boils_K); });
 }
 
 /// The place nearest to boiling; nullopt: nothing volatile anywhere.
@@ -73,7 +74,7 @@ std::optional<Limit> against_reckoned(const LimitInput& input) {
     const auto here = limit_of(limit_name::bubble_point, place.temperature_K, *boils_K, Side::most, "K");
     if (!worst || *here.margin < *worst->margin) worst = here;
   }
-  if (worst) worst = explained(*worst, explain(*worst->value, *worst->bound));
+  if (worst) worst = explained(*worst, [&] { return explain(*worst->value, *worst->bound); });
   return worst;
 }
 }  // namespace

@@ -29,9 +29,4 @@ Limit cannot_tell(std::string_view name, std::string why) {
   return {.name = name, .state = Limit::State::cannot_tell, .why = std::string(name) + ": " + std::move(why)};
 }
 
-Limit explained(Limit limit, const std::string& why) {
-  if (limit.state != Limit::State::holds) limit.why = std::string(limit.name) + ": " + why;
-  return limit;
-}
-
 }  // namespace vatwright

@@ -19,7 +19,12 @@ Limit tighter(Limit a, Limit b);
 Limit held(std::string_view name);
 Limit broken(std::string_view name, std::string why);
 Limit cannot_tell(std::string_view name, std::string why);
-/// `why` after the limit's name, where it is broken: "fill: 0.9 asked, at most 0.85".
-Limit explained(Limit limit, const std::string& why);
+/// `why` after the limit's name, where it is broken: "fill: 0.9 asked, at most 0.85". The words are made only then:
+/// windows judge thousands of trials.
+template <class Why>
+Limit explained(Limit limit, Why&& why) {
+  if (limit.state != Limit::State::holds) limit.why = std::string(limit.name).append(": ").append(why());
+  return limit;
+}
 
 }  // namespace vatwright

@@ -11,8 +11,10 @@ std::optional<Limit> check_fill(const LimitInput& input) {
   const auto [least, most] = tank->fill;
   return explained(tighter(limit_of(limit_name::fill, fill, most, Side::most, "1"),
                            limit_of(limit_name::fill, fill, least, Side::least, "1")),
-                   show(fill, Shown::number) + " asked, the vessel works between " + show(least, Shown::number) +
-                       " and " + show(most, Shown::number));
+                   [&] {
+                     return show(fill, Shown::number) + " asked, the vessel works between " +
+                            show(least, Shown::number) + " and " + show(most, Shown::number);
+                   });
 }
 
 }  // namespace vatwright

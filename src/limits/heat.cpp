@@ -92,7 +92,7 @@ std::optional<Limit> check_heat(const LimitInput& input, std::string_view name) 
     limit.search_margin = nothing_W - (way.signed_need ? *way.signed_need : way.need * area);
     limit.state = *limit.search_margin >= -holds_within ? Limit::State::holds : Limit::State::broken;
   }
-  return explained(limit, explain(input, way, b.unit, removal));
+  return explained(limit, [&] { return explain(input, way, b.unit, removal); });
 }
 
 }  // namespace vatwright

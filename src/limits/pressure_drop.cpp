@@ -15,16 +15,18 @@ std::optional<Limit> drop_inside(const LimitInput& input) {
                                                       : "the feed has no viscosity");
   }
   const double most = *input.vessel.pressure_drop_Pa;
-  return explained(limit_of(limit_name::pressure_drop, *drop, most, Side::most, "Pa"),
-                   show(*drop, Shown::pressure_drop) + " spent, at most " + show(most, Shown::pressure_drop));
+  return explained(limit_of(limit_name::pressure_drop, *drop, most, Side::most, "Pa"), [&] {
+    return show(*drop, Shown::pressure_drop) + " spent, at most " + show(most, Shown::pressure_drop);
+  });
 }
 
 /// A pressure asked for this vessel can not be above what arrives from the one before it.
 std::optional<Limit> let_down(const LimitInput& input) {
   if (!input.arrives_Pa || !input.operation.pressure_Pa) return std::nullopt;
   const double asked = *input.operation.pressure_Pa;
-  return explained(limit_of(limit_name::pressure_drop, asked, *input.arrives_Pa, Side::most, "Pa"),
-                   show(asked, Shown::pressure) + " asked, " + show(*input.arrives_Pa, Shown::pressure) + " arrives");
+  return explained(limit_of(limit_name::pressure_drop, asked, *input.arrives_Pa, Side::most, "Pa"), [&] {
+    return show(asked, Shown::pressure) + " asked, " + show(*input.arrives_Pa, Shown::pressure) + " arrives";
+  });
 }
 }  // namespace
 

@@ -10,8 +10,10 @@ std::optional<Limit> check_pressure_rating(const LimitInput& input) {
   const VesselOutcome& o = input.outcome;
   const auto limit = tighter(limit_of(limit_name::pressure_rating, o.highest_Pa, most, Side::most, "Pa"),
                              limit_of(limit_name::pressure_rating, o.lowest_Pa, least, Side::least, "Pa"));
-  return explained(limit, show(*limit.value, Shown::pressure) + " inside, rated for " + show(least, Shown::pressure) +
-                              " to " + show(most, Shown::pressure));
+  return explained(limit, [&] {
+    return show(*limit.value, Shown::pressure) + " inside, rated for " + show(least, Shown::pressure) + " to " +
+           show(most, Shown::pressure);
+  });
 }
 
 }  // namespace vatwright

@@ -16,8 +16,10 @@ std::optional<Limit> check_product_temperature(const LimitInput& input) {
   }
   if (!limit) return std::nullopt;
   const bool above = hottest && limit->bound == hottest && *limit->value > *hottest;
-  return explained(*limit, show(*limit->value, Shown::temperature) + " inside, the product is to stay " +
-                               (above ? "below " : "above ") + show(*limit->bound, Shown::temperature));
+  return explained(*limit, [&] {
+    return show(*limit->value, Shown::temperature) + " inside, the product is to stay " +
+           (above ? "below " : "above ") + show(*limit->bound, Shown::temperature);
+  });
 }
 
 }  // namespace vatwright

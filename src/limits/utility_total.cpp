@@ -12,9 +12,10 @@ Limit draw_against(const Draw& draw, double most_m3_s) {
   if (!draw.known)
     return cannot_tell(limit_name::utility_total, "the heat, and so the draw on " + name + ", is not known");
   if (!draw.draw_m3_s) return broken(limit_name::utility_total, "no flow of " + name + " carries the heat");
-  return explained(
-      limit_of(limit_name::utility_total, *draw.draw_m3_s, most_m3_s, Side::most, "m3/s"),
-      show(*draw.draw_m3_s, Shown::feed) + " of " + name + " needed, " + show(most_m3_s, Shown::feed) + " can be had");
+  return explained(limit_of(limit_name::utility_total, *draw.draw_m3_s, most_m3_s, Side::most, "m3/s"), [&] {
+    return show(*draw.draw_m3_s, Shown::feed) + " of " + name + " needed, " + show(most_m3_s, Shown::feed) +
+           " can be had";
+  });
 }
 
 /// Broken before untold before the least room.

@@ -67,15 +67,36 @@ Scale scale_of(Shown shown) {
   return {"", ""};
 }
 
-double in_unit(double si, Shown shown, const std::string& unit) {
-  if (unit.empty()) return si;
-  const auto read = read_compound(unit);
-  const auto* compound = std::get_if<Compound>(&read);
-  if (compound == nullptr) return si;  // not reached: a test reads every unit of this table
-  const long double value = static_cast<long double>(si) / compound->factor;
-  if (shown != Shown::temperature || compound->whole == nullptr) return static_cast<double>(value);
+/// Factor and zero of every unit of the table, read once.
+struct Measured {
+  long double factor = 1, zero = 0;
+};
+Measured measure_of(Shown shown, Units units) {
+  using Table = std::array<std::array<Measured, 2>, static_cast<std::size_t>(Shown::number) + 1>;
+  static const Table table = [] {
+    Table made{};
+    for (std::size_t s = 0; s < made.size(); ++s)
+      for (std::size_t u = 0; u < 2; ++u) {
+        const Scale scale = scale_of(static_cast<Shown>(s));
+        const std::string unit = u == 0 ? scale.trade : scale.field;
+        if (unit.empty()) continue;
+        const auto read = read_compound(unit);
+        const auto* compound = std::get_if<Compound>(&read);  // a test reads every unit of this table
+        if (compound == nullptr) continue;
+        made[s][u].factor = compound->factor;
+        if (compound->whole != nullptr) made[s][u].zero = compound->whole->zero;
+      }
+    return made;
+  }();
+  return table[static_cast<std::size_t>(shown)][units == Units::field ? 1 : 0];
+}
+
+double in_unit(double si, Shown shown, Units units) {
+  const Measured unit = measure_of(shown, units);
+  const long double value = static_cast<long double>(si) / unit.factor;
+  if (shown != Shown::temperature) return static_cast<double>(value);
   // thousandths of a degree: next to 0 degC more figures would show the rounding of the subtraction
-  return static_cast<double>(std::round((value - compound->whole->zero) * 1000) / 1000);
+  return static_cast<double>(std::round((value - unit.zero) * 1000) / 1000);
 }
 
 }  // namespace
@@ -85,9 +106,7 @@ std::string unit_of(Shown shown, Units units) {
   return units == Units::field ? scale.field : scale.trade;
 }
 
-std::string show_number(double si, Shown shown, Units units) {
-  return brief(in_unit(si, shown, unit_of(shown, units)));
-}
+std::string show_number(double si, Shown shown, Units units) { return brief(in_unit(si, shown, units)); }
 
 std::string show(double si, Shown shown, Units units) {
   const std::string unit = unit_of(shown, units);
