@@ -53,6 +53,17 @@ void add_cases(RankAnswer& answer, const Problems& problems, const RankOptions& 
     answer.over_today = judge_over_cases(problems, *options.today, answer.ranking.today->rating.whole);
 }
 
+void tell_unsolved_of(const Context& context, const RankAnswer& answer, const std::string& of_case) {
+  if (!answer.ranking.unsolved) return;
+  bool told = false;
+  for (const Ranked& ranked : answer.ranking.top) {
+    tell_unsolved(context, ranked.rating.text + of_case, ranked.rating.whole);
+    told = told || ranked.rating.whole.unsolved;
+  }
+  if (!told)
+    context.err << "rank" << of_case << ": some hookups, none of those shown, could not be solved; examine tells why\n";
+}
+
 }  // namespace
 
 Exit run_rank(const Context& context) {
@@ -77,7 +88,8 @@ Exit run_rank(const Context& context) {
   }
   RankAnswer answer = rank_problem(problems.base, options, made_by(*read), context, "hookups rated");
   add_cases(answer, problems, options, made_by(*read), context);
-  for (const Ranked& ranked : answer.ranking.top) tell_unsolved(context, ranked.rating.text, ranked.rating.whole);
+  tell_unsolved_of(context, answer, "");
+  for (const auto& [name, of_case] : answer.cases) tell_unsolved_of(context, of_case, " (" + name + ")");
 
   const bool written =
       write_answer(context, {[&] { return to_json(answer); }, [&] { return to_page(answer, look_of(context)); },

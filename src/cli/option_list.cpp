@@ -19,7 +19,7 @@ const std::vector<Option>& all_options() {
       {"--offer", "LIST", "which vessels are offered: idle (if left out), mothballed, in-service, joined by commas",
        &Words::offer},
       {"--units", "UNITS", "trade (if left out) or field; JSON and CSV stay SI", &Words::units},
-      {"--threads", "N", "how many threads work, 1 if left out; the answer is the same", &Words::threads},
+      {"--threads", "N", "how many threads work, one a core if left out; the answer is the same", &Words::threads},
       {"--quiet", "", "no warnings and no progress on standard error", nullptr, &Words::quiet},
       {"--require-fit", "", "exit status 1 where nothing fits, or where it cannot be told", nullptr,
        &Words::require_fit},

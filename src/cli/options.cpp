@@ -1,15 +1,19 @@
 #include "options.hpp"
 
+#include <algorithm>
 #include <charconv>
 #include <filesystem>
 #include <sstream>
 #include <system_error>
+#include <thread>
 #include <utility>
 
 #include "vatwright/error/diagnostic.hpp"
 
 namespace vatwright {
 namespace {
+
+constexpr int most_threads = 256;
 
 template <class T>
 using Choices = std::vector<std::pair<std::string, T>>;
@@ -54,6 +58,11 @@ std::vector<Status> statuses(const std::string& words, std::vector<std::string>&
   return offer;
 }
 
+int all_cores() {
+  const auto cores = static_cast<int>(std::thread::hardware_concurrency());  // 0: not known
+  return std::clamp(cores, 1, most_threads);
+}
+
 /// Whether both names are one file that is there.
 bool same_file(const std::string& a, const std::string& b) {
   std::error_code none;
@@ -87,7 +96,9 @@ Settings settings_of(const Words& words, std::vector<std::string>& faults) {
   settings.units = choice("--units", words.units, all_units, faults).value_or(Units::trade);
   settings.by = choice("--by", words.by, all_orders, faults).value_or(By::fit);
   settings.offer = statuses(words.offer, faults);
-  settings.threads = whole_number("--threads", words.threads, 1, 256, faults);
+  settings.threads = given("--threads", words.threads)
+                         ? whole_number("--threads", words.threads, 1, most_threads, faults)
+                         : all_cores();
   settings.most = whole_number("--most", words.most, 1, 8, faults);
   settings.top = whole_number("--top", words.top, 1, 1'000'000, faults);
   settings.json = words.json;

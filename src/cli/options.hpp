@@ -13,7 +13,7 @@ namespace vatwright {
 /// What the command line says, as texts: filled by the parser, checked by `settings_of`.
 struct Words {
   std::string inventory, duty;
-  std::string csv, feed_rate, units = "trade", threads = "1", stamp, offer = "idle";
+  std::string csv, feed_rate, units = "trade", threads, stamp, offer = "idle";
   std::string hookup, most = "3", top = "10", by = "fit", today;
   bool json = false, quiet = false, require_fit = false, exact = false;
   std::set<std::string> given;  ///< options that were given, "--csv"
