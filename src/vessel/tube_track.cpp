@@ -35,6 +35,21 @@ double chebyshev_sum(const std::array<double, n>& a, double z) {
   return a[0] + z * b1 - b2;
 }
 
+/// The same with its slope, d/dz, in one pass.
+struct Sloped {
+  double value = 0, slope = 0;
+};
+template <std::size_t n>
+Sloped sloped_chebyshev_sum(const std::array<double, n>& a, double z) {
+  double b1 = 0, b2 = 0, d1 = 0, d2 = 0;
+  for (std::size_t k = n; k-- > 1;) {
+    const double b = a[k] + 2 * z * b1 - b2, d = 2 * b1 + 2 * z * d1 - d2;
+    b2 = b1, b1 = b;
+    d2 = d1, d1 = d;
+  }
+  return {a[0] + z * b1 - b2, b1 + z * d1 - d2};
+}
+
 }  // namespace
 
 Place TubeTrack::place_of(double u) const {
@@ -126,13 +141,14 @@ double TubeTrack::solve(const Panel& panel, double t) {
   if (wanted <= 0) return 0;
   double lo = 0, hi = 2, w = 2 * wanted / whole;
   for (int i = 0; i < 100; ++i) {
-    const double excess = value(panel, w) - wanted;
+    const Sloped q = sloped_chebyshev_sum(panel.Q, w - 1);
+    const double excess = w * q.value - wanted, slope = q.value + w * q.slope;
     (excess > 0 ? hi : lo) = w;
-    const double h = std::max(1e-7 * w, 1e-300);
-    const double slope = (value(panel, std::min(2.0, w + h)) - value(panel, w - h)) / (std::min(2.0, w + h) - (w - h));
     double next = w - excess / slope;
-    if (!(next > lo && next < hi)) next = (lo + hi) / 2;
-    const bool settled = std::abs(next - w) <= 2e-16 * w;
+    const bool newton = next > lo && next < hi;
+    if (!newton) next = (lo + hi) / 2;
+    // Newton's error is squared in each step: one from within 1e-9 is exact to rounding
+    const bool settled = newton && std::abs(next - w) <= 1e-9 * w;
     w = next;
     if (settled || hi - lo <= 2e-16 * hi) break;
   }
