@@ -19,7 +19,10 @@ struct BoreOf {
 /// Fractions of the length, denser at the inlet where most happens.
 std::vector<double> standing_places(int intervals) {
   std::vector<double> all;
-  for (int k = 0; k <= intervals; ++k) all.push_back(std::pow(static_cast<double>(k) / intervals, 1.5));
+  for (int k = 0; k <= intervals; ++k) {
+    const double z = static_cast<double>(k) / intervals;
+    all.push_back(z * std::sqrt(z));
+  }
   return all;
 }
 
@@ -46,10 +49,12 @@ double flux_at(const SolvedTube& tube, const Stream& there) {
   return heat * std::visit(BoreOf{}, setup.vessel.kind) / 4;  // volume over surface
 }
 
-void add_fluxes(const SolvedTube& tube, const std::vector<double>& places, HeatNeed& heat) {
+/// inside: the streams at the places.
+void add_fluxes(const SolvedTube& tube, const std::vector<double>& places, const std::vector<Stream>& inside,
+                HeatNeed& heat) {
   const auto flux = [&](double z) { return flux_at(tube, tube.at(z)); };
   std::vector<double> at_places;
-  for (double z : places) at_places.push_back(flux(z));
+  for (const Stream& there : inside) at_places.push_back(flux_at(tube, there));
   for (std::size_t i = 0; i < places.size(); ++i) {
     double most = at_places[i], least = at_places[i];
     if (i > 0 && i + 1 < places.size()) {
@@ -63,13 +68,14 @@ void add_fluxes(const SolvedTube& tube, const std::vector<double>& places, HeatN
   }
 }
 
-HeatNeed heat_of(const SolvedTube& tube, const Stream& outlet, const std::vector<double>& places) {
+HeatNeed heat_of(const SolvedTube& tube, const Stream& outlet, const std::vector<double>& places,
+                 const std::vector<Stream>& inside) {
   const Setup& setup = tube.setup;
   const auto& xi_in = setup.arrives.xi_mol_m3;
   HeatNeed heat;
   heat.preheat_W = tube.feed_m3_s * sensible_heat(setup.chemistry, xi_in, setup.arrives.temperature_K, setup.inlet_K);
   heat.cooling_W = tube.feed_m3_s * released_heat(setup.chemistry, xi_in, outlet.xi_mol_m3, setup.inlet_K);
-  add_fluxes(tube, places, heat);
+  add_fluxes(tube, places, inside, heat);
   return heat;
 }
 
@@ -110,7 +116,7 @@ VesselOutcome tell(const SolvedTube& tube, Detail detail) {
     if (detail != Detail::map) outcome.inside.push_back(std::move(there));
   }
   if (detail == Detail::map) return outcome;
-  if (setup.is_held && setup.heat_known()) outcome.heat = heat_of(tube, outcome.outlet, places);
+  if (setup.is_held && setup.heat_known()) outcome.heat = heat_of(tube, outcome.outlet, places, outcome.inside);
   if (detail == Detail::profile) outcome.profile = profile_of(tube);
   return outcome;
 }
