@@ -5,11 +5,11 @@ import numpy as np
 from scipy.integrate import solve_ivp
 from scipy.optimize import brentq
 
-C_A, C_B, K, V, FEED = 2000.0, 2600.0, 4e-7, 0.4, 5e-4
+C_A, C_B, K, V, FEED = 2000.0, 2600.0, 3.5e-3 / 2000**0.5, 0.4, 5e-4
 
 
 def reach(tau):
-    return solve_ivp(lambda t, x: [K * (C_A - x[0]) * (C_B - x[0])], (0, tau), [0.0], method="DOP853", rtol=1e-9, atol=1e-9 * C_A).y[0, -1] / C_A
+    return solve_ivp(lambda t, x: [K * (C_A - x[0]) * (C_B - x[0]) ** 0.5], (0, tau), [0.0], method="DOP853", rtol=1e-9, atol=1e-9 * C_A).y[0, -1] / C_A
 
 
 def states(k_tau):
