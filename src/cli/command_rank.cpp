@@ -10,11 +10,11 @@
 namespace vatwright {
 namespace {
 
-RankAnswer rank_problem(const Problem& problem, RankOptions options, const MadeBy& made_by, const Context& context,
-                        const std::string& what) {
+RankedHookups rank_problem(const Problem& problem, RankOptions options, const MadeBy& made_by, const Context& context,
+                           const std::string& what) {
   Progress progress(context, what, 0);
   options.progress = [&progress](long long done, long long total) { progress.at(done, total); };
-  RankAnswer answer;
+  RankedHookups answer;
   answer.head = head_of(problem, made_by, context.settings.stamp);
   answer.by = options.by;
   answer.ranking = rank(problem, offered(problem.site, context.settings), options);
@@ -53,7 +53,7 @@ void add_cases(RankAnswer& answer, const Problems& problems, const RankOptions& 
     answer.over_today = judge_over_cases(problems, *options.today, answer.ranking.today->rating.whole);
 }
 
-void tell_unsolved_of(const Context& context, const RankAnswer& answer, const std::string& of_case) {
+void tell_unsolved_of(const Context& context, const RankedHookups& answer, const std::string& of_case) {
   if (!answer.ranking.unsolved) return;
   bool told = false;
   for (const Ranked& ranked : answer.ranking.top) {
@@ -86,7 +86,7 @@ Exit run_rank(const Context& context) {
     options.today = read_hookup("--today", *settings.today, problems.base.site, context.err);
     if (!options.today) return Exit::refused;
   }
-  RankAnswer answer = rank_problem(problems.base, options, made_by(*read), context, "hookups rated");
+  RankAnswer answer = alone(rank_problem(problems.base, options, made_by(*read), context, "hookups rated"));
   add_cases(answer, problems, options, made_by(*read), context);
   tell_unsolved_of(context, answer, "");
   for (const auto& [name, of_case] : answer.cases) tell_unsolved_of(context, of_case, " (" + name + ")");

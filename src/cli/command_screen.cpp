@@ -10,9 +10,9 @@
 namespace vatwright {
 namespace {
 
-ScreenAnswer screen(const Problem& problem, const MadeBy& made_by, const Context& context, Progress& progress) {
+Screened screen(const Problem& problem, const MadeBy& made_by, const Context& context, Progress& progress) {
   const std::vector<int> vessels = offered(problem.site, context.settings);
-  ScreenAnswer answer;
+  Screened answer;
   answer.head = head_of(problem, made_by, context.settings.stamp);
   answer.vessels.resize(vessels.size());
   for_each_index(vessels.size(), context.settings.threads, [&](std::size_t i) {
@@ -22,7 +22,7 @@ ScreenAnswer screen(const Problem& problem, const MadeBy& made_by, const Context
   return answer;
 }
 
-void tell_unsolved_of(const Context& context, const ScreenAnswer& answer, const std::string& of_case) {
+void tell_unsolved_of(const Context& context, const Screened& answer, const std::string& of_case) {
   for (const Rating& rating : answer.vessels) tell_unsolved(context, rating.tag + of_case, rating);
 }
 
@@ -34,7 +34,7 @@ Exit run_screen(const Context& context) {
   const Problems& problems = *read->problems;
   const auto vessels = static_cast<long long>(offered(problems.base.site, context.settings).size());
   Progress progress(context, "vessels rated", vessels * (1 + static_cast<long long>(problems.cases.size())));
-  ScreenAnswer answer = screen(problems.base, made_by(*read), context, progress);
+  ScreenAnswer answer{screen(problems.base, made_by(*read), context, progress), {}};
   for (const auto& [name, problem] : problems.cases)
     answer.cases.emplace_back(name, screen(problem, made_by(*read), context, progress));
   progress.end();

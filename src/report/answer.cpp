@@ -48,7 +48,7 @@ OverCases over(const Answer& answer, RatingOf rating_of) {
 template <class Answer>
 bool case_unsolved(const Answer& answer) {
   return std::any_of(answer.cases.begin(), answer.cases.end(),
-                     [](const auto& c) { return anything_unsolved(c.second); });
+                     [](const auto& c) { return anything_unsolved(alone(c.second)); });
 }
 
 }  // namespace
@@ -91,13 +91,13 @@ std::string_view text_of(By by) {
 }
 
 OverCases over_cases_of(const ScreenAnswer& answer, std::size_t i) {
-  return over(answer, [i](const ScreenAnswer& a) -> const Rating& { return a.vessels[i]; });
+  return over(answer, [i](const Screened& a) -> const Rating& { return a.vessels[i]; });
 }
 OverCases over_cases_of(const ExamineAnswer& answer) {
-  return over(answer, [](const ExamineAnswer& a) -> const Rating& { return a.rating.whole; });
+  return over(answer, [](const Examined& a) -> const Rating& { return a.rating.whole; });
 }
 OverCases over_cases_of(const ExamineAnswer& answer, std::size_t i) {
-  return over(answer, [i](const ExamineAnswer& a) -> const Rating& { return a.rating.vessels[i]; });
+  return over(answer, [i](const Examined& a) -> const Rating& { return a.rating.vessels[i]; });
 }
 
 bool anything_fits(const ScreenAnswer& answer) {

@@ -70,7 +70,7 @@ std::string answer_text(const std::string& schema, const Answer& answer) {
   Json& cases = json["cases"] = Json::object();
   for (const auto& [name, of_case] : answer.cases) {
     add_head(cases[name], of_case.head);
-    add_body(cases[name], of_case);
+    add_body(cases[name], alone(of_case));
   }
   return json_text(json);
 }

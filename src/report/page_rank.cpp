@@ -153,7 +153,7 @@ void add_today(Page& page, const RankAnswer& answer, const Look& look) {
 void add_cases(Page& page, const RankAnswer& answer, const Look& look) {
   for (const auto& [name, of_case] : answer.cases) {
     page.heading("Case " + name + ": its own best");
-    page.table(main_table(of_case, look));
+    page.table(main_table(alone(of_case), look));
   }
 }
 

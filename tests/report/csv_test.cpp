@@ -65,7 +65,7 @@ TEST_CASE("a screen is one row a vessel under the keys of the JSON answer", "[re
 }
 
 TEST_CASE("the header row is there without vessels too", "[report][csv]") {
-  const auto records = records_of(to_csv(ScreenAnswer{sample_head(), {}, {}}));
+  const auto records = records_of(to_csv(ScreenAnswer{{sample_head(), {}}, {}}));
   REQUIRE(records.size() == 1);
   CHECK(records[0].front() == "tag");
   CHECK(records_of(to_csv(RankAnswer{})).size() == 1);

@@ -82,7 +82,7 @@ Rating sample_unrated() {
   return packed;
 }
 
-ScreenAnswer sample_screen() { return {sample_head(), {sample_tank(), sample_tube(), sample_unrated()}, {}}; }
+ScreenAnswer sample_screen() { return {{sample_head(), {sample_tank(), sample_tube(), sample_unrated()}}, {}}; }
 
 ExamineAnswer sample_examine() {
   ExamineAnswer answer;

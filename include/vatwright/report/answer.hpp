@@ -34,34 +34,47 @@ struct Head {
 /// The head of an answer about one problem (the base, or one case).
 Head head_of(const Problem& problem, const MadeBy& made_by, const std::optional<std::string>& stamp);
 
-/// The same answer for each case of a duty, in the order of the file.
+/// The answers for each case of a duty, in the order of the file.
 template <class T>
 using ByCase = std::vector<std::pair<std::string, T>>;
 
-/// `screen`: every vessel by itself. Cases have the same vessels in the same order, and no cases of their own.
-struct ScreenAnswer {
+/// `screen`: every vessel by itself.
+struct Screened {
   Head head;
   std::vector<Rating> vessels;
-  ByCase<ScreenAnswer> cases;
+};
+/// The base, and every case with the same vessels in the same order.
+struct ScreenAnswer : Screened {
+  ByCase<Screened> cases;
 };
 
 /// `examine`: one hookup in depth.
-struct ExamineAnswer {
+struct Examined {
   Head head;
   HookupRating rating;
-  ByCase<ExamineAnswer> cases;
+};
+struct ExamineAnswer : Examined {
+  ByCase<Examined> cases;
 };
 
-/// `rank`: the best of all hookups. Over cases, the order is that of the base; the verdict of each place is the worst
-/// of base and cases (over_top, one for each place; empty without cases).
-struct RankAnswer {
+/// `rank`: the best of all hookups.
+struct RankedHookups {
   Head head;
   By by = By::fit;
   Ranking ranking;
+};
+/// Over cases, the order is that of the base; the verdict of each place is the worst of base and cases (over_top, one
+/// for each place; empty without cases).
+struct RankAnswer : RankedHookups {
   std::vector<OverCases> over_top;
   std::optional<OverCases> over_today;
-  ByCase<RankAnswer> cases;
+  ByCase<RankedHookups> cases;
 };
+
+/// One case as an answer of its own, without cases.
+inline ScreenAnswer alone(const Screened& of_case) { return {of_case, {}}; }
+inline ExamineAnswer alone(const Examined& of_case) { return {of_case, {}}; }
+inline RankAnswer alone(const RankedHookups& of_case) { return {of_case, {}, {}, {}}; }
 
 /// `check`: what was understood of the files.
 struct CheckAnswer {
