@@ -152,7 +152,12 @@ double TankBalance::imbalance(std::span<const double> y) {
     for (std::size_t j = 0; j < R_; ++j) terms += tau_ * std::abs(nu(i, j)) * both_ways[j];
     if (terms > 0) worst = std::max(worst, std::abs(F[i]) / terms);
   }
-  if (moves_) worst = std::max(worst, std::abs(F[n_]) / T);
+  if (moves_) {
+    const double capacity = heat_capacity(setup_.chemistry, setup_.arrives.xi_mol_m3, T);
+    double terms = T;
+    for (std::size_t j = 0; j < R_; ++j) terms += tau_ * both_ways[j] * std::abs(dH(j, T)) / capacity;
+    worst = std::max(worst, std::abs(F[n_]) / terms);
+  }
   return worst;
 }
 

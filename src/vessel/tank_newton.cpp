@@ -58,7 +58,9 @@ class Settling {
   bool try_share(double share) {
     for (std::size_t j = 0; j < y_.size(); ++j) {
       trial_[j] = y_[j] + share * step_[j];
-      if (j < balance_.species()) trial_[j] = std::max(trial_[j], 0.01 * y_[j]);  // towards zero, never past it
+      // towards zero, never past it; the dust of what neither enters nor is made goes at last
+      if (j < balance_.species() && trial_[j] < 0.01 * y_[j])
+        trial_[j] = y_[j] < 1e-25 * balance_.scale(j) ? 0 : 0.01 * y_[j];
     }
     return balance_(trial_, F_trial_);
   }
