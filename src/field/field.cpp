@@ -1,5 +1,7 @@
 #include "vatwright/field/field.hpp"
 
+#include <algorithm>
+
 namespace vatwright::field_detail {
 
 void unknown_key(const Member& member, const std::vector<std::string>& known, const Scope& scope) {
@@ -12,7 +14,10 @@ void unknown_key(const Member& member, const std::vector<std::string>& known, co
 }
 
 void missing_key(std::string_view key, std::string_view form, const Scope& scope) {
-  scope.error(scope.place, key, "missing", "expected " + std::string(form));
+  std::string words(form);   // forms are written for the page of keys, their examples in code marks
+  if (const auto at = words.find(", `"); at != words.npos) words.replace(at, 3, ", such as ");
+  words.erase(std::remove(words.begin(), words.end(), '`'), words.end());
+  scope.error(scope.place, key, "missing", "expected " + words);
 }
 
 bool read_common(const Member& member, const Table& table, const std::vector<std::string>& known, const Scope& scope,

@@ -70,10 +70,7 @@ class StreamMaker {
     int solvent = -1;
     for (std::size_t i = 0; i < feed_.species.size(); ++i) {
       const Species& s = feed_.species[i];
-      if (s.solvent) {
-        if (solvent >= 0) error(d_.place, "", "two species are the solvent", "expected solvent = true once");
-        solvent = static_cast<int>(i);
-      }
+      if (s.solvent && solvent < 0) solvent = static_cast<int>(i);
       if (feed_.c_mol_m3[i] <= 0) continue;
       all_known = all_known && mass_of(s) > 0;
       named += feed_.c_mol_m3[i] * mass_of(s);
@@ -113,7 +110,8 @@ class StreamMaker {
     if (d_.density.written)
       error(d_.density.place, "density", "found a density of a gas",
             "expected none: it follows from molar masses, temperature and pressure");
-    if (!d_.pressure.written) builder_.assume("feed.pressure", "1.01325 bar", "left out");
+    if (!d_.pressure.written)
+      builder_.assume((d_.name ? "feed." + *d_.name : "feed") + ".pressure", "1.01325 bar", "left out");
     if (!d_.fraction.written && !d_.concentration.written)
       error(d_.place, "fraction", "missing", "expected mole fractions, such as { A = 0.5, N2 = 0.5 }");
     if (!d_.fraction) return;
@@ -252,7 +250,9 @@ std::optional<double> read_feed_rate(const Raw& raw, const Feed& feed, const Bui
   const Scope scope = builder.about(subject);
   const Dimension found = raw.quantity.dimension;
   const auto refuse = [&](std::string expected) {
-    scope.error(raw.place, "feed_rate", "found " + quoted(raw.text), std::move(expected));
+    const std::string what = name_of(found);
+    scope.error(raw.place, "feed_rate", "found " + quoted(raw.text) + (what.empty() ? "" : ", " + what),
+                std::move(expected));
     return std::nullopt;
   };
   double v = raw.quantity.si;
@@ -300,6 +300,9 @@ BuiltFeed build_feed(const DutyDraft& draft, std::vector<Species> species, const
   std::vector<double> v;
   for (std::size_t k = 0; k < streams.size(); ++k) {
     const FeedDraft& f = (*draft.feeds)[k];
+    if (built.said_pressure && !f.pressure.written && phase == Phase::liquid)
+      builder.assume((f.name ? "feed." + *f.name : "feed") + ".pressure", "1.01325 bar",
+                     "left out; the mixed feed has the lowest pressure of its streams");
     if (!f.feed_rate.written)
       builder.about(subject_of(f))
           .error(f.place, "feed_rate", "missing", "expected the rate of each stream: they give the proportions");

@@ -28,7 +28,7 @@ void check_choice(const VesselOperationDraft& d, Thermal thermal, const Site& si
     for (const Utility& u : site.utilities) names.push_back(u.name), known = known || u.name == *d.utility;
     if (!known)
       scope.error(d.utility.place, "utility", "no utility " + quoted(*d.utility),
-                  "expected one of the site" + hint(*d.utility, names));
+                  "expected one of the site; " + hint(*d.utility, names));
   }
 }
 
@@ -99,7 +99,7 @@ void build_operation(const DutyDraft& draft, const Site& site, bool said_pressur
       const std::string subject = "operation, vessel " + named.name;
       if (!site.find(named.name)) {
         builder.about(subject).warning(named.name_place, "", "no vessel " + quoted(named.name),
-                                       "left unused" + hint(named.name, tags_of(site)));
+                                       "left unused; " + hint(named.name, tags_of(site)));
         continue;
       }
       check_choice(named.value, named.value.thermal.value.value_or(duty.thermal), site, builder.about(subject));

@@ -1,6 +1,7 @@
 #include "build_rate_law.hpp"
 
 #include <cmath>
+#include <tuple>
 
 #include "vatwright/quantity/show.hpp"
 
@@ -27,6 +28,11 @@ class LawMaker {
     if (law.basis == Basis::pressure && context_.feed.phase == Phase::liquid)
       error(d_.basis.place, "basis", "found \"pressure\" in a liquid",
             "expected \"concentration\"; partial pressures are for gases");
+    for (const auto& [written, place, key] : {std::tuple{d_.conversion.written, d_.conversion.place, "conversion"},
+                                              std::tuple{d_.consumption.written, d_.consumption.place, "consumption"},
+                                              std::tuple{d_.table.written, d_.table.place, "table"}})
+      if (written)
+        error(place, key, "found a measured table in a reverse rate", "expected k, as in [reaction.rate]");
     const bool known_of = read_of(law);
     read_adsorption(law);
     const bool has_k = d_.k.written, has_most = d_.most.written;
@@ -55,7 +61,7 @@ class LawMaker {
         std::vector<std::string> known = equation_.species();
         known.push_back("reaction");
         error(d_.of.place, "of", "found " + quoted(*d_.of) + ", not in the equation",
-              "expected reaction, or a species of the equation" + hint(*d_.of, known));
+              "expected reaction, or a species of the equation; " + hint(*d_.of, known));
         return false;
       }
       if (nu == 0) {
@@ -87,7 +93,7 @@ class LawMaker {
           orders.push_back({index(o.name), o.value});
         else
           good = false, error(o.name_place, "orders." + o.name, "no species " + quoted(o.name),
-                              "expected one that is fed or made" + hint(o.name, names_of(context_.feed)));
+                              "expected one that is fed or made; " + hint(o.name, names_of(context_.feed)));
       }
       return good ? std::optional(orders) : std::nullopt;
     }
@@ -138,7 +144,7 @@ class LawMaker {
             context_.amounts.read(h.value, dim::concentration, h.name, subject_, table_ + "half." + h.name);
         if (i < 0)
           error(h.name_place, "half." + h.name, "no species " + quoted(h.name),
-                "expected one that is fed or made" + hint(h.name, names_of(context_.feed)));
+                "expected one that is fed or made; " + hint(h.name, names_of(context_.feed)));
         else if (value && !(*value > 0))
           error(h.place, "half." + h.name, "found " + quoted(h.value.text), "expected a concentration above zero");
         else if (value)
@@ -160,10 +166,12 @@ class LawMaker {
     const Raw& raw = *given;
     std::optional<double> value;
     const Dimension wanted = context_.amounts.dimension(dimension);
-    const bool by_mass =
-        key == "most" && !species_of_.empty() && mass_for_moles(raw.quantity.dimension, wanted).value_or(0) == 1;
+    // a rate by mass is the rate of the species that the constant is of, else of the only reactant
+    const std::string by = !species_of_.empty() || consumed_.size() != 1 ? species_of_ : consumed_[0].species;
+    const bool by_mass = key == "most" && !by.empty() && (species_of_.empty() ? !d_.of.written : true) &&
+                         mass_for_moles(raw.quantity.dimension, wanted).value_or(0) == 1;
     if (raw.quantity.dimension == wanted || by_mass)
-      value = context_.amounts.read(raw, dimension, species_of_, subject_, table_ + key);
+      value = context_.amounts.read(raw, dimension, by_mass ? by : species_of_, subject_, table_ + key);
     else {
       const auto fault = std::get<QuantityFault>(fit(raw.quantity, raw.text, wanted));
       error(raw.place, key, fault.found,
@@ -244,7 +252,7 @@ class LawMaker {
       const int i = index(a.name);
       if (i < 0) {
         error(a.name_place, "adsorption." + a.name, "no species " + quoted(a.name),
-              "expected one that is fed or made" + hint(a.name, names_of(context_.feed)));
+              "expected one that is fed or made; " + hint(a.name, names_of(context_.feed)));
         continue;
       }
       const auto value = context_.amounts.read(a.value, inverse, a.name, subject_, table_ + "adsorption." + a.name);

@@ -69,8 +69,11 @@ class TableMaker {
 
   std::optional<RateTable> make() {
     table_.at_K = d_.at.value;
-    if (d_.k.written || d_.most.written || d_.orders.written)
-      error(d_.place, "", "found a measured table beside k, most or orders", "expected one of them");
+    refuse(d_.k, "k"), refuse(d_.most, "most"), refuse(d_.half, "half"), refuse(d_.orders, "orders");
+    refuse(d_.of, "of"), refuse(d_.activation_energy, "activation_energy"), refuse(d_.theta, "theta");
+    refuse(d_.adsorption, "adsorption"), refuse(d_.adsorption_power, "adsorption_power"), refuse(d_.basis, "basis");
+    if (d_.per && *d_.per != Per::fluid)
+      error(d_.per.place, "per", "found a measured table that does not count on the fluid", "expected per = \"fluid\"");
     if (d_.table.written && (d_.conversion.written || d_.consumption.written))
       error(d_.table.place, "table", "found a file beside conversion and consumption", "expected one of them");
     if (!(d_.table.written ? from_file() : from_keys())) return std::nullopt;
@@ -78,6 +81,11 @@ class TableMaker {
   }
 
  private:
+  template <class T>
+  void refuse(const Given<T>& given, const std::string& key) const {
+    if (given.written)
+      error(given.place, key, "found " + key + " beside a measured table", "expected the one or the other");
+  }
   void error(Place at, const std::string& key, std::string found, std::string expected) const {
     context_.builder.about(subject_).error(at, "rate" + (key.empty() ? "" : "." + key), std::move(found),
                                            std::move(expected));
@@ -104,6 +112,9 @@ class TableMaker {
     if (!d_.table) return false;
     place_ = d_.table.place;
     const std::string path = (*d_.table)[0] == '/' ? *d_.table : context_.folder + *d_.table;
+    if (is_device(path))
+      return error(place_, "table", quoted(*d_.table) + ": no file but a device or pipe", "expected a CSV file beside the duty"),
+             false;
     const Bytes bytes = read_bytes(path);
     if (!bytes.fault.empty())
       return error(place_, "table", quoted(*d_.table) + ": " + bytes.fault, "expected a CSV file beside the duty"),

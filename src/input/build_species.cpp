@@ -64,6 +64,18 @@ Species build_one(const std::string& name, const SpeciesDraft* d, AmountReader& 
   return s;
 }
 
+/// Of species that fill up there may be one.
+void meet_solvents(const ByName<SpeciesDraft>& species, std::vector<std::string>& names, const Builder& builder) {
+  std::string first;
+  for (const auto& s : species) {
+    if (!s.value.solvent.value.value_or(false)) continue;
+    meet(names, s.name);
+    if (first.empty()) first = s.name;
+    else builder.about("species " + s.name).error(s.value.solvent.place, "solvent", "found a second solvent",
+                                                  "expected solvent = true once; " + quoted(first) + " is one already");
+  }
+}
+
 }  // namespace
 
 std::vector<Species> build_species(const DutyDraft& draft, const std::vector<std::optional<Equation>>& equations,
@@ -76,9 +88,7 @@ std::vector<Species> build_species(const DutyDraft& draft, const std::vector<std
       if (f.fraction)
         for (const auto& x : *f.fraction) meet(names, x.name);
     }
-  if (draft.species)
-    for (const auto& s : *draft.species)
-      if (s.value.solvent.value.value_or(false)) meet(names, s.name);
+  if (draft.species) meet_solvents(*draft.species, names, builder);
   for (const auto& e : equations)
     if (e)
       for (const std::string& name : e->species()) meet(names, name);
@@ -89,7 +99,7 @@ std::vector<Species> build_species(const DutyDraft& draft, const std::vector<std
       if (std::find(names.begin(), names.end(), s.name) == names.end())
         builder.about("species " + s.name)
             .error(s.name_place, "", "no species " + quoted(s.name) + " is fed or made",
-                   "expected one that is" + hint(s.name, names));
+                   "expected one that is; " + hint(s.name, names));
   return species;
 }
 

@@ -35,7 +35,7 @@ class TargetMaker {
     std::vector<std::string> known;
     for (const Species& s : feed_.species) known.push_back(s.name);
     if (i < 0)
-      error(name.place, key, "no species " + quoted(*name), "expected one that is fed or made" + hint(*name, known));
+      error(name.place, key, "no species " + quoted(*name), "expected one that is fed or made; " + hint(*name, known));
     return i;
   }
 

@@ -1,5 +1,7 @@
 #include "cases.hpp"
 
+#include <algorithm>
+
 #include "vatwright/field/merge.hpp"
 #include "vatwright/field/scope.hpp"
 
@@ -30,13 +32,29 @@ void merge_by_name(Node& list, const Node& over, const char* first, const char* 
       if (item.table() && is_called(*item.table(), m.key, first, second)) found = item.table();
     if (!found)
       diagnostics.error(m.key_place, subject, what + "." + m.key, "no " + what + " " + quoted(m.key),
-                        "expected one of the files" + hint(m.key, known));
+                        "expected one of the files; " + hint(m.key, known));
     else if (!m.value.table())
       diagnostics.error(m.value.place, subject, what + "." + m.key, found_text(m.value),
                         "expected its keys, such as " + what + "." + m.key + ".temperature = ..");
     else
       merge_into(*found, *m.value.table());
   }
+}
+
+/// A case changes utilities that the inventory lists; it adds none.
+bool knows_utilities(const Node& over, const Node* base, const std::string& subject, Diagnostics& diagnostics) {
+  if (!over.table()) return true;
+  std::vector<std::string> known;
+  if (base && base->table())
+    for (const Member& m : base->table()->members) known.push_back(m.key);
+  bool all = true;
+  for (const Member& m : over.table()->members) {
+    if (std::find(known.begin(), known.end(), m.key) != known.end()) continue;
+    diagnostics.error(m.key_place, subject, "utility." + m.key, "no utility " + quoted(m.key),
+                      "expected one of the inventory; " + hint(m.key, known));
+    all = false;
+  }
+  return all;
 }
 
 }  // namespace
@@ -60,7 +78,9 @@ void apply_case(const Table& overrides, const std::string& name, Table& inventor
       merge_by_name(*base, m.value, "name", "equation", subject, "reaction", diagnostics);
     else if (by_name && m.key == "feed")
       merge_by_name(*base, m.value, "name", "name", subject, "feed", diagnostics);
-    else {
+    else if (m.key == "utility" && !knows_utilities(m.value, base, subject, diagnostics)) {
+      continue;
+    } else {
       Table one;
       one.members.push_back(m);
       merge_into(file, one);

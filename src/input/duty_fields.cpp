@@ -30,6 +30,13 @@ Field<DutyDraft> feed_field() {
           "the feed of a continuous duty; the rates of several streams give their proportions", read};
 }
 
+/// A table of the inventory that stands in a duty.
+Field<DutyDraft> of_other_file(std::string key) {
+  return {key, "", "", "", [key](const Node& n, const Scope& s, DutyDraft&) {
+            s.error(n.place, key, "found a table of an inventory in a duty", "expected it in the inventory, or in [case.NAME]");
+          }};
+}
+
 /// `[case.NAME]` is applied to the files before they are read, see cases.hpp.
 Field<DutyDraft> case_field() {
   return {"case", "a table for each name", "", "overrides of either file; the verdict is that of the worst case",
@@ -59,6 +66,7 @@ const Fields<DutyDraft>& duty_fields() {
       table("dose", &dose_fields, &D::dose, "dosed: what is fed to the charge"),
       table("cycle", &cycle_fields, &D::cycle, "batch and dosed: the rest of the vessel's day"),
       case_field(),
+      of_other_file("vessel"), of_other_file("utility"), of_other_file("site"),
   };
   return fields;
 }

@@ -55,6 +55,11 @@ std::string what_is(unsigned char byte, std::size_t at) {
 
 }  // namespace
 
+bool is_device(const std::string& path) {
+  struct stat status {};
+  return ::stat(path.c_str(), &status) == 0 && !S_ISREG(status.st_mode) && !S_ISDIR(status.st_mode);
+}
+
 Bytes read_bytes(const std::string& path) {
   struct stat status {};
   if (path.find('\0') != path.npos) return {"", "no such file"};

@@ -17,6 +17,9 @@ struct Bytes {
 };
 Bytes read_bytes(const std::string& path);
 
+/// Whether a path names something that is neither a file nor a folder: reading it might wait without end.
+bool is_device(const std::string& path);
+
 /// SHA-256 of bytes, 64 hexadecimal digits (FIPS 180-4, by libmd).
 std::string sha256_of(std::string_view bytes);
 

@@ -1,6 +1,7 @@
 #include "like.hpp"
 
 #include <map>
+#include <set>
 #include <string>
 #include <vector>
 
@@ -26,6 +27,7 @@ class Resolver {
 
   void run() {
     for (std::size_t i = 0; i < vessels_.items.size(); ++i) follow(i);
+    drop_circles();
   }
 
  private:
@@ -67,7 +69,15 @@ class Resolver {
       diagnostics_.error(like_place(i), tag(i), "like", "no vessel " + quoted(*like), hint(*like, tags_));
   }
 
+  /// A vessel whose likes go round and that has no kind of its own lacks all it needs: told once is enough.
+  void drop_circles() {
+    for (auto it = circles_.rbegin(); it != circles_.rend(); ++it)
+      if (!vessels_.items[*it].table()->find("kind"))
+        vessels_.items.erase(vessels_.items.begin() + static_cast<std::ptrdiff_t>(*it));
+  }
+
   void tell_circle(std::size_t i) {
+    circles_.insert(i);
     std::string round = tag(i);
     std::size_t at = i;
     for (int step = 0; step < 6; ++step) {
@@ -86,7 +96,7 @@ class Resolver {
     for (const std::string_view key : {"tag", "note", "source", "like"}) remove_key(whole, key);
     const std::string *kind = text_at(own, "kind"), *its = text_at(whole, "kind");
     if (kind && its && *kind != *its)
-      diagnostics_.error(own.find("kind")->place, tag(i), "kind",
+      return diagnostics_.error(own.find("kind")->place, tag(i), "kind",
                          "found " + quoted(*kind) + ", but " + tag(base) + " is a " + *its,
                          "expected the same kind where one vessel is like another");
     merge_into(whole, own);
@@ -97,6 +107,7 @@ class Resolver {
   Diagnostics& diagnostics_;
   std::map<std::string, std::size_t> by_tag_;
   std::vector<std::string> tags_;
+  std::set<std::size_t> circles_;
   std::vector<State> states_;
 };
 

@@ -45,7 +45,7 @@ std::string fault_of_tag(const std::string& tag) {
   if (tag == "then" || tag == "beside") return "found " + quoted(tag) + ", the word that joins vessels in a hookup";
   for (const char c : tag) {
     const auto u = static_cast<unsigned char>(c);
-    if (u <= 0x20 || u == 0x7f) return "found " + quoted(tag) + ", with a space in it";
+    if (u <= 0x20 || u == 0x7f) return "found " + quoted(tag) + (c == ' ' ? ", with a space in it" : ", with a control character in it");
     if (c == '[' || c == ']' || c == '"' || c == '\'')
       return "found " + quoted(tag) + ", with " + c + " in it, a mark of the hookup language";
   }

@@ -24,7 +24,7 @@ Field<D> figure(std::string key, Measure m, Given<double> D::* member, std::stri
   auto read = [key, m, member](const Node& n, const Scope& s, D& d) {
     field_detail::give(d.*member, n, read_figure(n, m, s, key));
   };
-  return {key, m.text() + ", " + m.example(), std::string(left_out), std::move(doc), read};
+  return {key, m.text() + ", `" + m.example() + "`", std::string(left_out), std::move(doc), read};
 }
 
 /// A figure whose dimension is judged later; form says what fits.
