@@ -58,10 +58,12 @@ TargetItem check_demand(const Duty& duty, const Demand& demand, const Stream& ou
   switch (demand.on) {
     case Demand::On::yield:
       item.text = "yield of " + name;
+      item.shown = Shown::percent;
       item.value = yield_of(duty, demand.species, outlet);
       break;
     case Demand::On::selectivity:
       item.text = "selectivity to " + name;
+      item.shown = Shown::percent;
       item.value = selectivity_of(duty, demand.species, outlet);
       break;
     case Demand::On::concentration:
@@ -82,6 +84,7 @@ std::vector<TargetItem> check_target(const Duty& duty, const Stream& outlet) {
   std::vector<TargetItem> items;
   if (duty.target.conversion) {
     TargetItem item{.text = "conversion of " + duty.conversion_of, .bound = *duty.target.conversion};
+    item.shown = Shown::percent;
     item.value = duty.chemistry.kinetics.conversion(outlet.xi_mol_m3);
     items.push_back(judged(std::move(item)));
   }

@@ -41,7 +41,7 @@ TEST_CASE("ceiling of a tube, first order: v = -V k/ln(1 - X)", "[rating]") {
   CHECK(*r.windows->ceiling_m3_s == Approx(-V * 2e-3 / std::log(0.05)).epsilon(1e-7));
   CHECK(r.verdict == Verdict::does_not_fit);
   REQUIRE(r.stands_in_the_way.size() == 1);
-  CHECK(r.stands_in_the_way[0].find(", wanted 0.95") != std::string::npos);
+  CHECK(r.stands_in_the_way[0].find(", wanted 95 %") != std::string::npos);
 }
 
 TEST_CASE("the feed line is the ceiling where the target would allow more", "[rating]") {
