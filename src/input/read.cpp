@@ -5,7 +5,6 @@
 #include "build_duty.hpp"
 #include "cases.hpp"
 #include "file.hpp"
-#include "key_depth.hpp"
 #include "like.hpp"
 #include "site.hpp"
 #include "toml.hpp"
@@ -20,14 +19,6 @@ std::optional<Table> tables_of(const FileText& file, Diagnostics& diagnostics) {
   const int source = diagnostics.add_source(file.name, file.text);
   const Place top{source, 1, 1};
   if (!file.fault.empty()) return diagnostics.error(top, "", "", file.fault), std::nullopt;
-  if (const auto odd = not_text(file.text))
-    return diagnostics.error({source, odd->line, odd->column}, "", "", "found " + odd->what,
-                             "expected a text in UTF-8"),
-           std::nullopt;
-  if (const auto deep = find_deep_key(file.text))
-    return diagnostics.error({source, deep->line, deep->column}, "", "",
-                             "found a key of more than " + std::to_string(most_key_parts) + " parts", "expected a few"),
-           std::nullopt;
   return parse_toml(file.text, source, diagnostics);
 }
 
