@@ -10,6 +10,7 @@ Exit run_check(const Context& context) {
   CheckAnswer answer;
   if (read->problems) {
     answer.head = head_of(read->problems->base, made_by(*read), context.settings.stamp);
+    answer.head.assumed = read->problems->base.assumed;  // nothing is rated, no window searched
   } else {
     answer.head.made_by = made_by(*read);
     answer.head.stamp = context.settings.stamp;

@@ -199,6 +199,9 @@ class Search {
 std::pair<double, double> search_range(double fluid_volume_m3) {
   return {1e-6 * fluid_volume_m3 / 3600, 1e8 * fluid_volume_m3 / 3600};
 }
+Assumed assumed_search() {
+  return {"windows", "1e-6 to 1e8 fluid volumes per hour", "the range of feed rates searched; an end that reaches it is left open"};
+}
 
 Windows find_windows(const std::function<Trial(double feed_m3_s)>& trial, double lo_m3_s, double hi_m3_s) {
   return Search(trial, lo_m3_s, hi_m3_s).run();

@@ -71,6 +71,7 @@ Head head_of(const Problem& problem, const MadeBy& made_by, const std::optional<
   for (const Demand& demand : duty.target.demands)
     if (demand.on == Demand::On::yield && !head.yield_asked) head.yield_asked = demand.bound;
   head.assumed = problem.assumed;
+  head.assumed.push_back(assumed_search());
   head.not_asked = not_asked(problem);
   head.cautions = cautions_of(problem);
   return head;

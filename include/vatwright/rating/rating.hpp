@@ -65,6 +65,8 @@ struct Rating {
 
 /// The range of feed rates searched for windows: 1e-6 to 1e8 times (fluid volume)/(1 h), m3/s.
 std::pair<double, double> search_range(double fluid_volume_m3);
+/// The same, as every answer that holds windows says it.
+Assumed assumed_search();
 
 /// Judgement of one trial feed rate: margins, + = inside, in the fixed order target first, then limits; a margin that
 /// cannot be told is absent (it does not narrow the window); `fails` where the rate can not be rated at all (then it is
