@@ -48,7 +48,9 @@ TEST_CASE("a byte order mark and line ends of other systems are read as if they 
 }
 
 TEST_CASE("what is no text in UTF-8 is told with its place", "[input][bytes]") {
-  CHECK(told(read_inventory_of(std::string("\xFF\xFE" "f\0o\0", 6))) ==
+  CHECK(told(read_inventory_of(std::string("\xFF\xFE"
+                                           "f\0o\0",
+                                           6))) ==
         "site.toml:1:1: found the mark of UTF-16 text; expected a text file in UTF-8");
   CHECK(told(read_inventory_of("format = 1\nnote = \"caf\xE9\"\n")) ==
         "site.toml:2:12: found byte 0xE9, which is not UTF-8; expected a text file in UTF-8");
@@ -71,7 +73,8 @@ TEST_CASE("nesting beyond all use is told, not followed", "[input][bytes]") {
   CHECK(told(read_inventory_of("x = " + times(100, "[") + times(100, "]") + "\n")).find("nested more than 64 deep") !=
         std::string::npos);
   const std::string key = "a" + times(150000, ".a");
-  for (const std::string& text : {key + " = 1\n", "[" + key + "]\n", "[[" + key + "]]\n", "x = { " + key + " = 1 }\n"}) {
+  for (const std::string& text :
+       {key + " = 1\n", "[" + key + "]\n", "[[" + key + "]]\n", "x = { " + key + " = 1 }\n"}) {
     const std::string first = told(read_inventory_of(text));
     CAPTURE(first);
     CHECK(first.find("a key of more than 40 parts joined by dots") != std::string::npos);
@@ -83,7 +86,8 @@ TEST_CASE("a huge line is told in a few columns", "[input][bytes]") {
   const std::string text = to_text(read_inventory_of("note = " + std::string(2000000, 'x') + "\n").diagnostics, false);
   CHECK(text.size() < 2000);
   CHECK_FALSE(text.empty());
-  const ReadResult much = read_inventory_of(right("right-inventory.toml") + "\nnote = \"" + std::string(2000000, 'x') + "\"\n");
+  const ReadResult much =
+      read_inventory_of(right("right-inventory.toml") + "\nnote = \"" + std::string(2000000, 'x') + "\"\n");
   CHECK(to_text(much.diagnostics, false).size() < 2000);
 }
 

@@ -1,5 +1,5 @@
-// The two big examples of the contract on files, and each of the other forms, as whole files: every line is read without a
-// fault, and says what it says there. Expected figures: unit conversions by hand.
+// The two big examples of the contract on files, and each of the other forms, as whole files: every line is read
+// without a fault, and says what it says there. Expected figures: unit conversions by hand.
 #include "read_text.hpp"
 #include "support/catch.hpp"
 
@@ -28,7 +28,7 @@ TEST_CASE("the inventory with every kind and key is read whole", "[input][contra
   CHECK(site.vessels[1].jacket->U_W_m2_K == 300);
   CHECK(*site.vessels[1].jacket->area_m2 == 14.2);
   CHECK(site.vessels[0].note == "spare since the resin line closed");
-  CHECK(site.vessels[1].note.empty());   // tag, note and source are not taken over
+  CHECK(site.vessels[1].note.empty());  // tag, note and source are not taken over
   const auto& p11 = std::get<Tube>(site.vessels[2].kind);
   CHECK(p11.bore_m == Approx(0.0525));
   CHECK(p11.roughness_m == Approx(4.6e-5));
@@ -40,9 +40,9 @@ TEST_CASE("the inventory with every kind and key is read whole", "[input][contra
 }
 
 TEST_CASE("the duty with every table is read whole", "[input][contract]") {
-  const ReadResult result = read_texts(
-      {"whole-inventory.toml", file_text("tests/input/fixtures/whole-inventory.toml"), ""},
-      FileText{"whole-duty.toml", file_text("tests/input/fixtures/whole-duty.toml"), ""});
+  const ReadResult result =
+      read_texts({"whole-inventory.toml", file_text("tests/input/fixtures/whole-inventory.toml"), ""},
+                 FileText{"whole-duty.toml", file_text("tests/input/fixtures/whole-duty.toml"), ""});
   CHECK(told(result).empty());
   REQUIRE(result.problems.has_value());
   const Duty& duty = result.problems->base.duty;
@@ -76,23 +76,22 @@ TEST_CASE("the duty with every table is read whole", "[input][contract]") {
 
 TEST_CASE("forms that stand in place of others are read", "[input][contract]") {
   const std::string inventory = file_text("tests/input/fixtures/whole-inventory.toml");
-  for (const char* name : {"form-production", "form-two-feeds", "form-gas", "form-reversible", "form-most", "form-reverse",
-                           "form-table"}) {
+  for (const char* name : {"form-production", "form-two-feeds", "form-gas", "form-reversible", "form-most",
+                           "form-reverse", "form-table"}) {
     CAPTURE(name);
     const std::string path = std::string("tests/input/fixtures/") + name + ".toml";
     REQUIRE_FALSE(file_text(path).empty());
-    const ReadResult result =
-        read_texts({"whole-inventory.toml", inventory, ""},
-                   FileText{std::string(VATWRIGHT_SOURCE_DIR) + "/" + path, file_text(path), ""});
+    const ReadResult result = read_texts({"whole-inventory.toml", inventory, ""},
+                                         FileText{std::string(VATWRIGHT_SOURCE_DIR) + "/" + path, file_text(path), ""});
     CHECK(told(result).empty());
     CHECK(result.problems.has_value());
   }
 }
 
 TEST_CASE("a duty worked in batches is read, and refused in plain words alone", "[input][contract]") {
-  const ReadResult result = read_texts(
-      {"whole-inventory.toml", file_text("tests/input/fixtures/whole-inventory.toml"), ""},
-      FileText{"form-dosed.toml", file_text("tests/input/fixtures/form-dosed.toml"), ""});
+  const ReadResult result =
+      read_texts({"whole-inventory.toml", file_text("tests/input/fixtures/whole-inventory.toml"), ""},
+                 FileText{"form-dosed.toml", file_text("tests/input/fixtures/form-dosed.toml"), ""});
   REQUIRE(result.diagnostics.sorted().size() == 1);
   CHECK(result.diagnostics.sorted()[0].found == "\"dosed\" is read and checked, but this version can not reckon it");
 }
