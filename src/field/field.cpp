@@ -14,7 +14,7 @@ void unknown_key(const Member& member, const std::vector<std::string>& known, co
 }
 
 void missing_key(std::string_view key, std::string_view form, const Scope& scope) {
-  std::string words(form);   // forms are written for the page of keys, their examples in code marks
+  std::string words(form);  // forms are written for the page of keys, their examples in code marks
   if (const auto at = words.find(", `"); at != words.npos) words.replace(at, 3, ", such as ");
   words.erase(std::remove(words.begin(), words.end(), '`'), words.end());
   scope.error(scope.place, key, "missing", "expected " + words);

@@ -26,8 +26,9 @@ std::optional<ByName<T>> each_species(const Node& node, const Scope& scope, std:
     const std::string name = std::string(key) + "." + member.key;
     if (is_common_key(member.key)) {
       scope.error(member.key_place, key, "found " + quoted(member.key) + " among the species",
-                  member.key == "spread" ? "expected it in the table above, as " + quoted(name + " = \"5 %\"") + " in spread"
-                                         : "expected it in the table above; no species may be called so");
+                  member.key == "spread"
+                      ? "expected it in the table above, as " + quoted(name + " = \"5 %\"") + " in spread"
+                      : "expected it in the table above; no species may be called so");
     } else if (auto value = read_one(member.value, name)) {
       values.push_back({member.key, member.key_place, std::move(*value), member.value.place});
     }

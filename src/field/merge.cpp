@@ -7,9 +7,12 @@ namespace vatwright {
 void merge_into(Table& base, const Table& over) {
   for (const Member& member : over.members) {
     Node* old = base.find(member.key);
-    if (!old) base.members.push_back(member);
-    else if (old->table() && member.value.table()) merge_into(*old->table(), *member.value.table());
-    else *old = member.value;
+    if (!old)
+      base.members.push_back(member);
+    else if (old->table() && member.value.table())
+      merge_into(*old->table(), *member.value.table());
+    else
+      *old = member.value;
   }
 }
 

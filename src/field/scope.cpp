@@ -16,8 +16,10 @@ Scope Scope::inside(std::string_view key, Place at) const {
   s.top = false;
   s.place = at;
   s.trail = dotted(trail, key);
-  if (top) s.subject = key, s.path.clear();
-  else s.path = dotted(path, key);
+  if (top)
+    s.subject = key, s.path.clear();
+  else
+    s.path = dotted(path, key);
   return s;
 }
 
@@ -45,7 +47,9 @@ std::string found_text(const Node& node) {
   struct {
     std::string operator()(const std::string& s) const { return quoted(s); }
     std::string operator()(std::int64_t i) const { return std::to_string(i); }
-    std::string operator()(double x) const { return x != x ? "nan" : x - x != 0 ? (x > 0 ? "inf" : "-inf") : shortest(x); }
+    std::string operator()(double x) const {
+      return x != x ? "nan" : x - x != 0 ? (x > 0 ? "inf" : "-inf") : shortest(x);
+    }
     std::string operator()(bool b) const { return b ? "true" : "false"; }
     std::string operator()(const Array&) const { return "a list"; }
     std::string operator()(const Table&) const { return "a table"; }

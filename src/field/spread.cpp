@@ -7,8 +7,8 @@ namespace {
 
 struct Sibling {
   const Node* node = nullptr;
-  std::string missing;              ///< the step that is not there
-  std::vector<std::string> known;   ///< what is there in its place
+  std::string missing;             ///< the step that is not there
+  std::vector<std::string> known;  ///< what is there in its place
 };
 
 /// Follows "k" or "concentration.A" from a table; a key may hold dots itself.
@@ -57,7 +57,8 @@ struct SpreadReader {
     if (!half) return;
     if (!value) {
       const bool list = sibling.node->array() || sibling.node->table();
-      if (list) scope.error(m.key_place, key, quoted(m.key) + " is no single figure", "expected the name of one figure");
+      if (list)
+        scope.error(m.key_place, key, quoted(m.key) + " is no single figure", "expected the name of one figure");
       return;
     }
     judge(m, key, *half, *value);
@@ -87,7 +88,8 @@ struct SpreadReader {
     if (!(width > 0)) return fault(found, "expected a half-width above zero");
     const bool free = value.temperature || value.gauge || m.key.rfind("orders.", 0) == 0;
     if (!per_cent && !free && value.si > 0 && width >= value.si)
-      return fault(found + ", which reaches zero", "expected a half-width below the value, or a share such as \"15 %\"");
+      return fault(found + ", which reaches zero",
+                   "expected a half-width below the value, or a share such as \"15 %\"");
     scope.collected->spreads.push_back({scope.trail.empty() ? m.key : scope.trail + "." + m.key, per_cent, width});
   }
 };

@@ -18,8 +18,8 @@ std::optional<double> number_of(const Node& node) {
 /// `0.95 or "95 %"` for 95 where a fraction is asked.
 std::string per_cent_hint(double x, const Measure& m) {
   if (!bare_dimension(m.dimension) || m.range.hi > 1 || x <= 1 || x > 100) return {};
-  return "; " + show_number(x / 100, Shown::number, Units::trade) + " or \"" + show_number(x, Shown::number, Units::trade) +
-         " %\" meant?";
+  return "; " + show_number(x / 100, Shown::number, Units::trade) + " or \"" +
+         show_number(x, Shown::number, Units::trade) + " %\" meant?";
 }
 
 std::string expected_text(const std::string& what) {
@@ -27,7 +27,8 @@ std::string expected_text(const std::string& what) {
 }
 
 /// A word on units that are easily meant otherwise: the gallon, and plain bar where a gauge reads.
-void warn_of_unit(const std::string& text, const Node& node, const Measure& m, const Scope& scope, std::string_view key) {
+void warn_of_unit(const std::string& text, const Node& node, const Measure& m, const Scope& scope,
+                  std::string_view key) {
   const auto read = parse_quantity(text);
   const Quantity* q = std::get_if<Quantity>(&read);
   if (!q) return;
@@ -44,9 +45,7 @@ void warn_of_unit(const std::string& text, const Node& node, const Measure& m, c
   scope.collected->bar_told = true;
 }
 
-bool below_vacuum(double x, const Measure& m) {
-  return m.dimension == dim::pressure && x < 0 && m.range.lo == 0;
-}
+bool below_vacuum(double x, const Measure& m) { return m.dimension == dim::pressure && x < 0 && m.range.lo == 0; }
 
 std::optional<double> judged(double x, const Node& node, const Measure& m, const Scope& scope, std::string_view key) {
   if (std::isfinite(x) && m.range.has(x)) return x;
@@ -73,7 +72,9 @@ std::string Range::text() const {
 }
 
 std::string Measure::text() const {
-  const std::string what = sense == Sense::difference ? "a temperature difference" : bare_dimension(dimension) ? "a number" : name_of(dimension);
+  const std::string what = sense == Sense::difference  ? "a temperature difference"
+                           : bare_dimension(dimension) ? "a number"
+                                                       : name_of(dimension);
   const std::string where = range.text();
   return where.empty() ? what : what + " " + where;
 }
@@ -142,7 +143,8 @@ std::optional<std::int64_t> read_whole(const Node& node, std::int64_t least, con
   constexpr std::int64_t most = 1'000'000'000;
   if (i && *i >= least && *i <= most) return *i;
   scope.error(node.place, key, found_text(node),
-              "expected a whole number, " + std::to_string(least) + " or more" + (i && *i > most ? ", below a thousand million" : ""));
+              "expected a whole number, " + std::to_string(least) + " or more" +
+                  (i && *i > most ? ", below a thousand million" : ""));
   return std::nullopt;
 }
 

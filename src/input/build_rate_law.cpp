@@ -31,8 +31,7 @@ class LawMaker {
     for (const auto& [written, place, key] : {std::tuple{d_.conversion.written, d_.conversion.place, "conversion"},
                                               std::tuple{d_.consumption.written, d_.consumption.place, "consumption"},
                                               std::tuple{d_.table.written, d_.table.place, "table"}})
-      if (written)
-        error(place, key, "found a measured table in a reverse rate", "expected k, as in [reaction.rate]");
+      if (written) error(place, key, "found a measured table in a reverse rate", "expected k, as in [reaction.rate]");
     const bool known_of = read_of(law);
     read_adsorption(law);
     const bool has_k = d_.k.written, has_most = d_.most.written;
@@ -131,8 +130,8 @@ class LawMaker {
 
   std::optional<std::variant<PowerLaw, Saturating>> make_saturating() {
     Saturating s;
-    for (const auto& [given, key] : {std::pair{d_.orders.written, "orders"}, std::pair{d_.basis.written, "basis"}})
-      if (given) error(d_.place, key, std::string("found ") + key + " beside most", "expected it with k only");
+    if (d_.orders.written) error(d_.orders.place, "orders", "found orders beside most", "expected them with k only");
+    if (d_.basis.written) error(d_.basis.place, "basis", "found basis beside most", "expected it with k only");
     if (!d_.half.written)
       error(d_.place, "half", "missing",
             "expected with most the concentrations that halve the rate, { S = \"60 mg/L\" }");

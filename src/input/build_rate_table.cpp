@@ -113,7 +113,8 @@ class TableMaker {
     place_ = d_.table.place;
     const std::string path = (*d_.table)[0] == '/' ? *d_.table : context_.folder + *d_.table;
     if (is_device(path))
-      return error(place_, "table", quoted(*d_.table) + ": no file but a device or pipe", "expected a CSV file beside the duty"),
+      return error(place_, "table", quoted(*d_.table) + ": no file but a device or pipe",
+                   "expected a CSV file beside the duty"),
              false;
     const Bytes bytes = read_bytes(path);
     if (!bytes.fault.empty())

@@ -70,9 +70,12 @@ void meet_solvents(const ByName<SpeciesDraft>& species, std::vector<std::string>
   for (const auto& s : species) {
     if (!s.value.solvent.value.value_or(false)) continue;
     meet(names, s.name);
-    if (first.empty()) first = s.name;
-    else builder.about("species " + s.name).error(s.value.solvent.place, "solvent", "found a second solvent",
-                                                  "expected solvent = true once; " + quoted(first) + " is one already");
+    if (first.empty())
+      first = s.name;
+    else
+      builder.about("species " + s.name)
+          .error(s.value.solvent.place, "solvent", "found a second solvent",
+                 "expected solvent = true once; " + quoted(first) + " is one already");
   }
 }
 

@@ -8,14 +8,19 @@ namespace vatwright {
 namespace {
 
 std::string kind_word(Kind kind) {
-  return std::string(kind == Kind::stirred_tank ? StirredTank::kind : kind == Kind::tube ? Tube::kind : PackedTube::kind);
+  return std::string(kind == Kind::stirred_tank ? StirredTank::kind
+                     : kind == Kind::tube       ? Tube::kind
+                                                : PackedTube::kind);
 }
 
 /// Judges one vessel.
 class VesselMaker {
  public:
   VesselMaker(const VesselDraft& draft, const std::vector<std::string>& utilities, const Builder& builder)
-      : d_(draft), utilities_(utilities), builder_(builder), scope_(builder.about(draft.tag.value.value_or("vessel"))) {}
+      : d_(draft),
+        utilities_(utilities),
+        builder_(builder),
+        scope_(builder.about(draft.tag.value.value_or("vessel"))) {}
 
   Vessel make() {
     Vessel v;
@@ -135,7 +140,8 @@ class VesselMaker {
     for (const std::string& name : *j.utilities) {
       bool known = false;
       for (const std::string& u : utilities_) known = known || u == name;
-      if (!known) scope_.error(j.utilities.place, "jacket.utilities", "no utility " + quoted(name), hint(name, utilities_));
+      if (!known)
+        scope_.error(j.utilities.place, "jacket.utilities", "no utility " + quoted(name), hint(name, utilities_));
     }
   }
 

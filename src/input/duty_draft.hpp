@@ -16,7 +16,7 @@ struct ProductionDraft : Common {
   Given<Raw> amount;
   Given<double> on_stream;
 };
-struct ShareDraft : Common {   ///< a yield or a selectivity
+struct ShareDraft : Common {  ///< a yield or a selectivity
   Given<std::string> species;
   Given<double> at_least;
 };
@@ -125,7 +125,7 @@ struct DutyDraft : Common {
   Given<Amounts> amounts;
   Given<TargetDraft> target;
   Given<std::vector<FeedDraft>> feeds;
-  bool one_feed = false;   ///< written as [feed], not [[feed]]
+  bool one_feed = false;  ///< written as [feed], not [[feed]]
   Given<ByName<SpeciesDraft>> species;
   Given<std::vector<ReactionDraft>> reactions;
   Given<OperationDraft> operation;

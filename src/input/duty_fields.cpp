@@ -13,7 +13,9 @@ std::string named_subject(const char* what, const char* key, const Table& table,
 std::string reaction_subject(const Table& table, std::size_t number) {
   return named_subject("reaction", table.find("name") ? "name" : "equation", table, number);
 }
-std::string stream_subject(const Table& table, std::size_t number) { return named_subject("feed", "name", table, number); }
+std::string stream_subject(const Table& table, std::size_t number) {
+  return named_subject("feed", "name", table, number);
+}
 
 /// `[feed]` or `[[feed]]`.
 Field<DutyDraft> feed_field() {
@@ -33,7 +35,8 @@ Field<DutyDraft> feed_field() {
 /// A table of the inventory that stands in a duty.
 Field<DutyDraft> of_other_file(std::string key) {
   return {key, "", "", "", [key](const Node& n, const Scope& s, DutyDraft&) {
-            s.error(n.place, key, "found a table of an inventory in a duty", "expected it in the inventory, or in [case.NAME]");
+            s.error(n.place, key, "found a table of an inventory in a duty",
+                    "expected it in the inventory, or in [case.NAME]");
           }};
 }
 
@@ -66,7 +69,9 @@ const Fields<DutyDraft>& duty_fields() {
       table("dose", &dose_fields, &D::dose, "dosed: what is fed to the charge"),
       table("cycle", &cycle_fields, &D::cycle, "batch and dosed: the rest of the vessel's day"),
       case_field(),
-      of_other_file("vessel"), of_other_file("utility"), of_other_file("site"),
+      of_other_file("vessel"),
+      of_other_file("utility"),
+      of_other_file("site"),
   };
   return fields;
 }
@@ -81,7 +86,8 @@ const Fields<TargetDraft>& target_fields() {
       table("yield", &share_fields, &D::yield, "a yield wanted"),
       table("selectivity", &share_fields, &D::selectivity, "a selectivity wanted"),
       list_of_tables(
-          "outlet", &outlet_fields, &D::outlet, +[](const Table& t, std::size_t) {
+          "outlet", &outlet_fields, &D::outlet,
+          +[](const Table& t, std::size_t) {
             const Node* species = t.find("species");
             return "target, outlet " + (species && species->text() ? *species->text() : std::string("demand"));
           },
@@ -128,8 +134,10 @@ const Fields<OperationDraft>& operation_fields() {
                                   {{"continuous", Mode::continuous}, {"batch", Mode::batch}, {"dosed", Mode::dosed}},
                                   &D::mode, "how the duty is worked", "continuous")};
     for (const Field<VesselOperationDraft>& f : vessel_operation_fields())
-      list.push_back({f.key, f.form, f.left_out, f.doc, [&f](const Node& n, const Scope& s, D& d) { f.read(n, s, d); }});
-    list.push_back(tables_by_name("vessel", &vessel_operation_fields, &D::vessels, "the same keys for one vessel alone"));
+      list.push_back(
+          {f.key, f.form, f.left_out, f.doc, [&f](const Node& n, const Scope& s, D& d) { f.read(n, s, d); }});
+    list.push_back(
+        tables_by_name("vessel", &vessel_operation_fields, &D::vessels, "the same keys for one vessel alone"));
     return list;
   }();
   return fields;
@@ -138,9 +146,9 @@ const Fields<OperationDraft>& operation_fields() {
 const Fields<VesselOperationDraft>& vessel_operation_fields() {
   using D = VesselOperationDraft;
   static const Fields<D> fields{
-      words<D, Thermal>(
-          "thermal", {{"hold", Thermal::hold}, {"adiabatic", Thermal::adiabatic}, {"jacketed", Thermal::jacketed}},
-          &D::thermal, "hold: every vessel is held at `temperature`", "hold"),
+      words<D, Thermal>("thermal",
+                        {{"hold", Thermal::hold}, {"adiabatic", Thermal::adiabatic}, {"jacketed", Thermal::jacketed}},
+                        &D::thermal, "hold: every vessel is held at `temperature`", "hold"),
       figure("temperature", measure::temperature, &D::temperature, "for hold", "the feed's"),
       figure("pressure", measure::pressure, &D::pressure, "at the inlet of every first vessel", "the feed's"),
       figure("fill", measure::fill, &D::fill, "working fill of tanks, fraction of the volume", "the most working fill"),

@@ -24,8 +24,10 @@ std::vector<std::string> words_of(std::string_view text) {
   std::string word;
   for (const char c : std::string(text) + ' ') {
     const bool space = c == ' ' || c == '\t' || c == '\n' || c == '\r';
-    if (!space) word += c;
-    else if (!word.empty()) words.push_back(std::exchange(word, {}));
+    if (!space)
+      word += c;
+    else if (!word.empty())
+      words.push_back(std::exchange(word, {}));
   }
   return words;
 }
@@ -50,7 +52,8 @@ std::string::size_type stuck_digits(const std::string& word) {
 
 std::string fault_of_name(const std::string& name) {
   if (is_common_name(name)) return "found a species called " + quoted(name) + ", which is a word of the file format";
-  if (const auto plus = name.find('+'); plus != name.npos && plus + 1 < name.size() && plus > 0 && name[plus + 1] != '+')
+  if (const auto plus = name.find('+');
+      plus != name.npos && plus + 1 < name.size() && plus > 0 && name[plus + 1] != '+')
     return "found " + quoted(name) + ": one species, or two?";
   return {};
 }
@@ -67,15 +70,18 @@ std::variant<std::vector<Term>, Fault> parse_side(std::string_view text, const s
       if (!has_name) return missing(has_number ? "after the coefficient" : last);
       terms.push_back(term), term = {}, has_number = has_name = false, last = "after \"+\"";
     } else if (const double x = number_of(word); !std::isnan(x)) {
-      if (has_number || has_name) return Fault{"found " + quoted(word) + " where \"+\" should be", "expected \"2 A + B\""};
+      if (has_number || has_name)
+        return Fault{"found " + quoted(word) + " where \"+\" should be", "expected \"2 A + B\""};
       if (!(x > 0) || !std::isfinite(x)) return Fault{"found a coefficient of " + word, "expected one above zero"};
       term.coefficient = x, has_number = true;
     } else if (const std::size_t n = stuck_digits(word); n > 0) {
       const std::string apart = word.substr(0, n) + " " + word.substr(n);
-      return Fault{"found " + quoted(word) + ": a species of that name, or " + word.substr(0, n) + " of " + word.substr(n) + "?",
-                   "expected " + quoted(apart)};
+      return Fault{
+          "found " + quoted(word) + ": a species of that name, or " + word.substr(0, n) + " of " + word.substr(n) + "?",
+          "expected " + quoted(apart)};
     } else if (has_name) {
-      return Fault{"found " + quoted(term.species + " " + word), "expected \"+\" between two species; a name has no space"};
+      return Fault{"found " + quoted(term.species + " " + word),
+                   "expected \"+\" between two species; a name has no space"};
     } else if (const std::string fault = fault_of_name(word); !fault.empty()) {
       return Fault{fault, "expected a name, or \"+\" with spaces around it"};
     } else {
@@ -89,7 +95,9 @@ std::variant<std::vector<Term>, Fault> parse_side(std::string_view text, const s
 
 }  // namespace
 
-bool is_common_name(const std::string& name) { return name == "source" || name == "note" || name == "spread" || name == "reaction"; }
+bool is_common_name(const std::string& name) {
+  return name == "source" || name == "note" || name == "spread" || name == "reaction";
+}
 
 double Equation::left_of(std::string_view s) const { return sum_of(left, s); }
 double Equation::right_of(std::string_view s) const { return sum_of(right, s); }
@@ -111,7 +119,8 @@ std::variant<Equation, QuantityFault> parse_equation(std::string_view text) {
     if (at == text.npos && text.find(other) != text.npos)
       return Fault{"found \"" + std::string(other) + "\" between the sides", arrows};
   if (at == text.npos) return Fault{"found " + quoted(text) + ", without an arrow", arrows};
-  if (text.find("->", at + length) != text.npos) return Fault{"found two arrows", "expected one equation for each reaction"};
+  if (text.find("->", at + length) != text.npos)
+    return Fault{"found two arrows", "expected one equation for each reaction"};
   auto left = parse_side(text.substr(0, at), "before the arrow");
   if (auto* fault = std::get_if<Fault>(&left)) return *fault;
   auto right = parse_side(text.substr(at + length), "after the arrow");

@@ -27,13 +27,13 @@ const Fields<FeedDraft>& feed_fields() {
   using D = FeedDraft;
   static const Fields<D> fields = [] {
     Fields<D> list = material_fields<D>();
-    list.insert(list.begin(),
-                {text("name", "a text", &D::name, "[[feed]]: name of the stream"),
-                 raw("feed_rate", "a flow, `\"5.2 m3/h\"`, kg/h, or of a gas kmol/h", &D::feed_rate,
-                     "[[feed]]: its share of the whole, needed where there are several")});
+    list.insert(list.begin(), {text("name", "a text", &D::name, "[[feed]]: name of the stream"),
+                               raw("feed_rate", "a flow, `\"5.2 m3/h\"`, kg/h, or of a gas kmol/h", &D::feed_rate,
+                                   "[[feed]]: its share of the whole, needed where there are several")});
     list.push_back(figure("pressure", measure::pressure, &D::pressure, "pressure", "1.01325 bar"));
-    list.push_back(figures_by_species("fraction", measure::fraction, "species and mole fractions, `{ A = 0.5, N2 = 0.5 }`",
-                                      &D::fraction, "gas: must add to 1"));
+    list.push_back(figures_by_species("fraction", measure::fraction,
+                                      "species and mole fractions, `{ A = 0.5, N2 = 0.5 }`", &D::fraction,
+                                      "gas: must add to 1"));
     return list;
   }();
   return fields;
@@ -57,8 +57,8 @@ const Fields<DoseDraft>& dose_fields() {
       list.push_back({f.key, f.form, f.key == "volume" ? "" : f.left_out, f.doc,
                       [&f](const Node& n, const Scope& s, D& d) { f.read(n, s, d); }});
     list.push_back(table("equivalents", &equivalents_fields, &D::equivalents, "in place of volume"));
-    list.push_back(figure("time", {dim::time, above(0)}, &D::time, "how long it is fed",
-                          "the shortest that every limit allows"));
+    list.push_back(
+        figure("time", {dim::time, above(0)}, &D::time, "how long it is fed", "the shortest that every limit allows"));
     return list;
   }();
   return fields;
@@ -105,9 +105,8 @@ const Fields<AntoineDraft>& antoine_fields() {
       figure("B", measure::number, &D::B, "B of the equation", needed),
       figure("C", measure::number, &D::C, "C of the equation", needed),
       text("pressure", "a unit of pressure, `\"mmHg\"`", &D::pressure, "unit of p", needed),
-      words<D, AntoineScale>("temperature",
-                             {{"K", AntoineScale::kelvin}, {"degC", AntoineScale::celsius}}, &D::temperature,
-                             "unit of T", needed),
+      words<D, AntoineScale>("temperature", {{"K", AntoineScale::kelvin}, {"degC", AntoineScale::celsius}},
+                             &D::temperature, "unit of T", needed),
   };
   return fields;
 }

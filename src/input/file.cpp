@@ -14,12 +14,18 @@ namespace {
 
 std::string in_words(int error) {
   switch (error) {
-    case ENOENT: return "no such file";
-    case EACCES: return "may not be read by this user";
-    case ENOTDIR: return "no such file: a part of the path is not a folder";
-    case EISDIR: return "a folder, not a file";
-    case ENAMETOOLONG: return "no such file: the name is too long";
-    default: return std::string("could not be read: ") + std::strerror(error);
+    case ENOENT:
+      return "no such file";
+    case EACCES:
+      return "may not be read by this user";
+    case ENOTDIR:
+      return "no such file: a part of the path is not a folder";
+    case EISDIR:
+      return "a folder, not a file";
+    case ENAMETOOLONG:
+      return "no such file: the name is too long";
+    default:
+      return std::string("could not be read: ") + std::strerror(error);
   }
 }
 

@@ -13,11 +13,16 @@ class Walk {
   std::optional<DeepKey> run() {
     while (at_ < text_.size()) {
       const char c = text_[at_];
-      if (c == '#') step_over_comment();
-      else if (c == '"' || c == '\'') step_over_string(c);
-      else if (c == '.' && ++dots_ >= most_key_parts) return DeepKey{line_, column_};
-      else if (std::string_view("=,[]{}\n").find(c) != std::string_view::npos) dots_ = 0, step();
-      else step();
+      if (c == '#')
+        step_over_comment();
+      else if (c == '"' || c == '\'')
+        step_over_string(c);
+      else if (c == '.' && ++dots_ >= most_key_parts)
+        return DeepKey{line_, column_};
+      else if (std::string_view("=,[]{}\n").find(c) != std::string_view::npos)
+        dots_ = 0, step();
+      else
+        step();
     }
     return std::nullopt;
   }
@@ -25,8 +30,10 @@ class Walk {
  private:
   void step() {
     const auto c = static_cast<unsigned char>(text_[at_++]);
-    if (c == '\n') ++line_, column_ = 1;
-    else if ((c & 0xC0) != 0x80) ++column_;
+    if (c == '\n')
+      ++line_, column_ = 1;
+    else if ((c & 0xC0) != 0x80)
+      ++column_;
   }
   void step_over_comment() {
     while (at_ < text_.size() && text_[at_] != '\n') step();
@@ -38,11 +45,16 @@ class Walk {
     while (at_ < text_.size()) {
       const char c = text_[at_];
       if (!many_lines && c == '\n') return;
-      if (quote == '"' && c == '\\' && at_ + 1 < text_.size()) step(), step();
-      else if (c != quote) step();
-      else if (!many_lines) return step();
-      else if (triple(quote)) return close_triple(quote);
-      else step();
+      if (quote == '"' && c == '\\' && at_ + 1 < text_.size())
+        step(), step();
+      else if (c != quote)
+        step();
+      else if (!many_lines)
+        return step();
+      else if (triple(quote))
+        return close_triple(quote);
+      else
+        step();
     }
   }
   /// Up to two quotes may stand right before the closing three.

@@ -39,7 +39,7 @@ std::string keys_reference() {
       "- `[case.NAME]` takes tables of either file; of lists it takes an entry by its name: `vessel.TAG`, "
       "`reaction.NAME`, `feed.NAME`.\n\n"
       "## Inventory\n";
-  print(page, "Top of the file", inventory_fields());
+  print(page, "Top of an inventory", inventory_fields());
   print(page, "[site]", site_fields());
   print(page, "[utility.NAME]", utility_fields());
   print(page, "[[vessel]]", vessel_fields());
@@ -47,7 +47,7 @@ std::string keys_reference() {
   print(page, "[vessel.agitator]", agitator_fields());
   print(page, "[vessel.packing]", packing_fields());
   page += "\n## Duty\n";
-  print(page, "Top of the file", duty_fields());
+  print(page, "Top of a duty", duty_fields());
   print(page, "[target]", target_fields());
   print(page, "target.production", production_fields());
   print(page, "target.yield, target.selectivity", share_fields());

@@ -42,8 +42,10 @@ class Resolver {
     }
     for (auto it = chain.rbegin(); it != chain.rend(); ++it) {
       const auto base = base_of(*it);
-      if (base && states_[*base] == State::under_way) tell_circle(*it);
-      else if (base) merge(*it, *base);
+      if (base && states_[*base] == State::under_way)
+        tell_circle(*it);
+      else if (base)
+        merge(*it, *base);
       tell_unknown(*it);
       states_[*it] = State::done;
     }
@@ -97,8 +99,8 @@ class Resolver {
     const std::string *kind = text_at(own, "kind"), *its = text_at(whole, "kind");
     if (kind && its && *kind != *its)
       return diagnostics_.error(own.find("kind")->place, tag(i), "kind",
-                         "found " + quoted(*kind) + ", but " + tag(base) + " is a " + *its,
-                         "expected the same kind where one vessel is like another");
+                                "found " + quoted(*kind) + ", but " + tag(base) + " is a " + *its,
+                                "expected the same kind where one vessel is like another");
     merge_into(whole, own);
     own = std::move(whole);
   }

@@ -10,9 +10,7 @@ namespace {
 template <class D>
 Field<D> instead(std::string key, std::string what) {
   return {key, "", "", "",
-          [key, what](const Node& n, const Scope& s, D&) {
-            s.error(n.place, key, found_text(n), what);
-          }};
+          [key, what](const Node& n, const Scope& s, D&) { s.error(n.place, key, found_text(n), what); }};
 }
 
 }  // namespace
@@ -23,7 +21,8 @@ const Fields<ReactionDraft>& reaction_fields() {
       text("name", "a text", &D::name, "how it is called", "its equation"),
       text("equation", "`\"2 A + B -> C\"`", &D::equation,
            "'->' one way, '<->' reversible; coefficients with a space: \"2 A + B\"", needed),
-      raw("releases", "heat per mole, `\"62 kJ/mol\"`", &D::releases, "heat given off per mole of the equation as written"),
+      raw("releases", "heat per mole, `\"62 kJ/mol\"`", &D::releases,
+          "heat given off per mole of the equation as written"),
       raw("absorbs", "heat per mole, `\"62 kJ/mol\"`", &D::absorbs, "heat taken up, in place of releases"),
       figure("heat_at", measure::temperature, &D::heat_at, "temperature at which that heat holds", "25 degC"),
       table("rate", &rate_fields, &D::rate, "the rate", needed),
@@ -70,7 +69,8 @@ const Fields<RateDraft>& rate_fields() {
 const Fields<MeasuredDraft>& measured_fields() {
   using D = MeasuredDraft;
   static const Fields<D> fields{
-      bounds("temperature", measure::temperature, "[\"50 degC\", \"75 degC\"]", &D::temperature, "range of temperature"),
+      bounds("temperature", measure::temperature, "[\"50 degC\", \"75 degC\"]", &D::temperature,
+             "range of temperature"),
       bounds("conversion", measure::fraction, "[0.0, 0.9]", &D::conversion, "range of conversion"),
   };
   return fields;

@@ -29,10 +29,10 @@ void check_tags(const std::vector<VesselDraft>& drafts, const Builder& builder) 
     if (!d.tag) continue;
     const auto [first, fresh] = seen.try_emplace(*d.tag, d.tag.place);
     if (!fresh)
-      builder.about(*d.tag).error(d.tag.place, "tag",
-                                  "tag " + quoted(*d.tag) + " is already used at line " +
-                                      std::to_string(first->second.line),
-                                  "expected each tag once");
+      builder.about(*d.tag).error(
+          d.tag.place, "tag",
+          "tag " + quoted(*d.tag) + " is already used at line " + std::to_string(first->second.line),
+          "expected each tag once");
     if (const std::string fault = fault_of_tag(*d.tag); !fault.empty())
       builder.about(*d.tag).error(d.tag.place, "tag", fault, "expected another tag");
   }
@@ -45,7 +45,8 @@ std::string fault_of_tag(const std::string& tag) {
   if (tag == "then" || tag == "beside") return "found " + quoted(tag) + ", the word that joins vessels in a hookup";
   for (const char c : tag) {
     const auto u = static_cast<unsigned char>(c);
-    if (u <= 0x20 || u == 0x7f) return "found " + quoted(tag) + (c == ' ' ? ", with a space in it" : ", with a control character in it");
+    if (u <= 0x20 || u == 0x7f)
+      return "found " + quoted(tag) + (c == ' ' ? ", with a space in it" : ", with a control character in it");
     if (c == '[' || c == ']' || c == '"' || c == '\'')
       return "found " + quoted(tag) + ", with " + c + " in it, a mark of the hookup language";
   }

@@ -48,13 +48,20 @@ class Converter {
     if (depth > most_depth) {
       if (!told_depth_) diagnostics_.error(to.place, "", "", "tables or lists nested more than 64 deep");
       told_depth_ = true;
-    } else if (const auto* t = node.as_table()) to.value = table(*t, depth);
-    else if (const auto* a = node.as_array()) to.value = array(*a, depth);
-    else if (const auto* s = node.as_string()) to.value = s->get();
-    else if (const auto* i = node.as_integer()) to.value = i->get();
-    else if (const auto* x = node.as_floating_point()) to.value = x->get();
-    else if (const auto* b = node.as_boolean()) to.value = b->get();
-    else to.value = Node::Other{date_text(node)};
+    } else if (const auto* t = node.as_table())
+      to.value = table(*t, depth);
+    else if (const auto* a = node.as_array())
+      to.value = array(*a, depth);
+    else if (const auto* s = node.as_string())
+      to.value = s->get();
+    else if (const auto* i = node.as_integer())
+      to.value = i->get();
+    else if (const auto* x = node.as_floating_point())
+      to.value = x->get();
+    else if (const auto* b = node.as_boolean())
+      to.value = b->get();
+    else
+      to.value = Node::Other{date_text(node)};
     return to;
   }
   static std::string date_text(const toml::node& node) {

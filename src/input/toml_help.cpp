@@ -29,7 +29,8 @@ bool has(std::string_view text, std::string_view part) { return text.find(part) 
 /// The place of the first curly quote of a line, or 0.
 int curly_quote(std::string_view line) {
   std::size_t first = line.npos;
-  for (const std::string_view quote : {"\u201c", "\u201d", "\u201e", "\u2018", "\u2019"}) first = std::min(first, line.find(quote));
+  for (const std::string_view quote : {"\u201c", "\u201d", "\u201e", "\u2018", "\u2019"})
+    first = std::min(first, line.find(quote));
   return first == line.npos ? 0 : letters(line.substr(0, first)) + 1;
 }
 
@@ -51,7 +52,9 @@ std::string plain_words(std::string_view said) {
 TomlHelp help_with(std::string_view said, std::string_view text, Place place) {
   const std::string_view line = line_of(text, place.line);
   if (const int column = curly_quote(line); column > 0 && column <= place.column + 1)
-    return {{place.source, place.line, column}, "found curly quotes, as word processors make them", "expected plain ones: \""};
+    return {{place.source, place.line, column},
+            "found curly quotes, as word processors make them",
+            "expected plain ones: \""};
   if (has(said, "inline table") && has(said, "saw '\\n'"))
     return {place, "found a line break within { }", "expected an inline table on one line, or a [table] of its own"};
   if (has(said, "cannot redefine existing table"))
@@ -61,11 +64,13 @@ TomlHelp help_with(std::string_view said, std::string_view text, Place place) {
   if (has(said, "cannot redefine existing") && has(said, "key-value pair"))
     return {place, "the key is given twice in one table", "expected it once"};
   if (has(said, "saw ','") && digit_before(line, place.column))
-    return {place, "found a comma after a number", "expected a decimal point, and a value with a unit in quotes, such as \"6.3 m3\""};
+    return {place, "found a comma after a number",
+            "expected a decimal point, and a value with a unit in quotes, such as \"6.3 m3\""};
   if (has(said, "expected a comment or whitespace") && digit_before(line, place.column))
     return {place, "found more after a number", "expected a value with a unit in quotes, such as \"6.3 m3\""};
   if (has(said, "could not determine value type"))
-    return {place, "found a value that is no number, text, list or table", "expected text and units in quotes, such as \"6.3 m3\""};
+    return {place, "found a value that is no number, text, list or table",
+            "expected text and units in quotes, such as \"6.3 m3\""};
   if (has(said, "boolean")) return {place, plain_words(said), "expected true or false, small letters; text in quotes"};
   return {place, plain_words(said), ""};
 }

@@ -12,8 +12,8 @@ struct TomlHelp {
   std::string found, expected;
 };
 
-/// Turns what the parser said of a place of `text` into words that help with the usual mistakes: curly quotes, an inline table
-/// over several lines, a table or key given twice, a unit without quotes, a decimal comma.
+/// Turns what the parser said of a place of `text` into words that help with the usual mistakes: curly quotes, an
+/// inline table over several lines, a table or key given twice, a unit without quotes, a decimal comma.
 TomlHelp help_with(std::string_view said, std::string_view text, Place place);
 
 }  // namespace vatwright

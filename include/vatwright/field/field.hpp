@@ -48,7 +48,7 @@ template <class D>
 std::vector<std::string> keys_of(const Fields<D>& fields) {
   std::vector<std::string> keys;
   for (const Field<D>& field : fields)
-    if (!field.form.empty()) keys.push_back(field.key);   // without a form: a usual wrong name, told when met
+    if (!field.form.empty()) keys.push_back(field.key);  // without a form: a usual wrong name, told when met
   return keys;
 }
 
@@ -61,7 +61,8 @@ void read_table(const Fields<D>& fields, const Table& table, const Scope& scope,
     const Field<D>* field = nullptr;
     for (const Field<D>& f : fields)
       if (f.key == member.key) field = &f;
-    if (field) field->read(member.value, scope, draft);
+    if (field)
+      field->read(member.value, scope, draft);
     else if (!field_detail::read_common(member, table, known, scope, draft))
       field_detail::unknown_key(member, known, scope);
   }
@@ -73,8 +74,10 @@ void read_table(const Fields<D>& fields, const Table& table, const Scope& scope,
 template <class D>
 bool read_table_node(const Fields<D>& fields, const Node& node, const Scope& scope, std::string_view key, D& draft) {
   const Table* table = node.table();
-  if (!table) scope.error(node.place, key, found_text(node), "expected a table");
-  else read_table(fields, *table, scope, draft);
+  if (!table)
+    scope.error(node.place, key, found_text(node), "expected a table");
+  else
+    read_table(fields, *table, scope, draft);
   return table != nullptr;
 }
 

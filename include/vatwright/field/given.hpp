@@ -9,8 +9,8 @@
 
 namespace vatwright {
 
-/// What a file says under one key, with the place of the value. `written` without a value: it stood there and was wrong,
-/// which has been told already.
+/// What a file says under one key, with the place of the value. `written` without a value: it stood there and was
+/// wrong, which has been told already.
 template <class T>
 struct Given {
   std::optional<T> value;

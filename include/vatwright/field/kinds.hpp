@@ -8,8 +8,8 @@
 
 namespace vatwright {
 
-// One maker of a Field for each shape of value. Arguments in this order: key, what it may be, where it goes, what it means,
-// what holds where it is left out.
+// One maker of a Field for each shape of value. Arguments in this order: key, what it may be, where it goes, what it
+// means, what holds where it is left out.
 
 namespace field_detail {
 template <class T>
@@ -20,7 +20,7 @@ void give(Given<T>& given, const Node& node, std::optional<T> value) {
 
 /// A figure: `"6.3 m3"`, or a bare number where it has no dimension.
 template <class D>
-Field<D> figure(std::string key, Measure m, Given<double> D::* member, std::string doc, std::string_view left_out = "") {
+Field<D> figure(std::string key, Measure m, Given<double> D::*member, std::string doc, std::string_view left_out = "") {
   auto read = [key, m, member](const Node& n, const Scope& s, D& d) {
     field_detail::give(d.*member, n, read_figure(n, m, s, key));
   };
@@ -29,7 +29,8 @@ Field<D> figure(std::string key, Measure m, Given<double> D::* member, std::stri
 
 /// A figure whose dimension is judged later; form says what fits.
 template <class D>
-Field<D> raw(std::string key, std::string form, Given<Raw> D::* member, std::string doc, std::string_view left_out = "") {
+Field<D> raw(std::string key, std::string form, Given<Raw> D::*member, std::string doc,
+             std::string_view left_out = "") {
   auto read = [key, member](const Node& n, const Scope& s, D& d) {
     field_detail::give(d.*member, n, read_raw(n, s, key));
   };
@@ -37,7 +38,7 @@ Field<D> raw(std::string key, std::string form, Given<Raw> D::* member, std::str
 }
 
 template <class D>
-Field<D> raws(std::string key, std::string form, Given<std::vector<Raw>> D::* member, std::string doc,
+Field<D> raws(std::string key, std::string form, Given<std::vector<Raw>> D::*member, std::string doc,
               std::string_view left_out = "") {
   auto read = [key, member](const Node& n, const Scope& s, D& d) {
     field_detail::give(d.*member, n, read_raws(n, s, key));
@@ -46,7 +47,7 @@ Field<D> raws(std::string key, std::string form, Given<std::vector<Raw>> D::* me
 }
 
 template <class D>
-Field<D> text(std::string key, std::string form, Given<std::string> D::* member, std::string doc,
+Field<D> text(std::string key, std::string form, Given<std::string> D::*member, std::string doc,
               std::string_view left_out = "") {
   auto read = [key, member](const Node& n, const Scope& s, D& d) {
     field_detail::give(d.*member, n, read_text(n, s, key));
@@ -55,7 +56,7 @@ Field<D> text(std::string key, std::string form, Given<std::string> D::* member,
 }
 
 template <class D>
-Field<D> texts(std::string key, std::string form, Given<std::vector<std::string>> D::* member, std::string doc,
+Field<D> texts(std::string key, std::string form, Given<std::vector<std::string>> D::*member, std::string doc,
                std::string_view left_out = "") {
   auto read = [key, member](const Node& n, const Scope& s, D& d) {
     field_detail::give(d.*member, n, vatwright::read_texts(n, s, key));
@@ -64,7 +65,7 @@ Field<D> texts(std::string key, std::string form, Given<std::vector<std::string>
 }
 
 template <class D>
-Field<D> truth(std::string key, Given<bool> D::* member, std::string doc, std::string_view left_out = "") {
+Field<D> truth(std::string key, Given<bool> D::*member, std::string doc, std::string_view left_out = "") {
   auto read = [key, member](const Node& n, const Scope& s, D& d) {
     field_detail::give(d.*member, n, read_truth(n, s, key));
   };
@@ -72,7 +73,7 @@ Field<D> truth(std::string key, Given<bool> D::* member, std::string doc, std::s
 }
 
 template <class D>
-Field<D> whole(std::string key, std::int64_t least, Given<std::int64_t> D::* member, std::string doc,
+Field<D> whole(std::string key, std::int64_t least, Given<std::int64_t> D::*member, std::string doc,
                std::string_view left_out = "") {
   auto read = [key, least, member](const Node& n, const Scope& s, D& d) {
     field_detail::give(d.*member, n, read_whole(n, least, s, key));
@@ -82,7 +83,7 @@ Field<D> whole(std::string key, std::int64_t least, Given<std::int64_t> D::* mem
 
 /// One of a few words, each with its meaning.
 template <class D, class E>
-Field<D> words(std::string key, std::vector<std::pair<std::string, E>> known, Given<E> D::* member, std::string doc,
+Field<D> words(std::string key, std::vector<std::pair<std::string, E>> known, Given<E> D::*member, std::string doc,
                std::string_view left_out = "") {
   std::vector<std::string> names;
   for (const auto& [word, meaning] : known) names.push_back(word);
@@ -104,7 +105,7 @@ Field<D> words(std::string key, std::vector<std::pair<std::string, E>> known, Gi
 /// [least, most]; what: what the two are, for the message.
 template <class D>
 Field<D> pair_of(std::string key, Measure m, std::string what, std::string example,
-                 Given<std::pair<double, double>> D::* member, std::string doc, std::string_view left_out = "") {
+                 Given<std::pair<double, double>> D::*member, std::string doc, std::string_view left_out = "") {
   auto read = [key, m, what, example, member](const Node& n, const Scope& s, D& d) {
     field_detail::give(d.*member, n, read_pair(n, m, what, example, s, key));
   };
@@ -113,7 +114,7 @@ Field<D> pair_of(std::string key, Measure m, std::string what, std::string examp
 
 /// [least, most], or the most alone.
 template <class D>
-Field<D> bounds(std::string key, Measure m, std::string example, Given<Bounds> D::* member, std::string doc,
+Field<D> bounds(std::string key, Measure m, std::string example, Given<Bounds> D::*member, std::string doc,
                 std::string_view left_out = "") {
   auto read = [key, m, example, member](const Node& n, const Scope& s, D& d) {
     field_detail::give(d.*member, n, read_bounds(n, m, example, s, key));
@@ -122,7 +123,7 @@ Field<D> bounds(std::string key, Measure m, std::string example, Given<Bounds> D
 }
 
 template <class D>
-Field<D> figures(std::string key, Measure m, Given<std::vector<double>> D::* member, std::string doc,
+Field<D> figures(std::string key, Measure m, Given<std::vector<double>> D::*member, std::string doc,
                  std::string_view left_out = "") {
   auto read = [key, m, member](const Node& n, const Scope& s, D& d) {
     field_detail::give(d.*member, n, read_figures(n, m, s, key));
@@ -131,7 +132,7 @@ Field<D> figures(std::string key, Measure m, Given<std::vector<double>> D::* mem
 }
 
 template <class D>
-Field<D> figures_by_species(std::string key, Measure m, std::string form, Given<ByName<double>> D::* member,
+Field<D> figures_by_species(std::string key, Measure m, std::string form, Given<ByName<double>> D::*member,
                             std::string doc, std::string_view left_out = "") {
   auto read = [key, m, member](const Node& n, const Scope& s, D& d) {
     field_detail::give(d.*member, n, read_figures_by_name(n, m, s, key));
@@ -140,7 +141,7 @@ Field<D> figures_by_species(std::string key, Measure m, std::string form, Given<
 }
 
 template <class D>
-Field<D> raws_by_species(std::string key, std::string form, Given<ByName<Raw>> D::* member, std::string doc,
+Field<D> raws_by_species(std::string key, std::string form, Given<ByName<Raw>> D::*member, std::string doc,
                          std::string_view left_out = "") {
   auto read = [key, member](const Node& n, const Scope& s, D& d) {
     field_detail::give(d.*member, n, read_raws_by_name(n, s, key));

@@ -13,7 +13,7 @@ namespace vatwright {
 /// What is gathered beside the values while files are read.
 struct Collected {
   std::vector<FoundSpread> spreads;
-  bool bar_told = false;   ///< that plain "bar" is absolute is said once
+  bool bar_told = false;  ///< that plain "bar" is absolute is said once
 };
 
 /// Where the reader is: what a message names (subject "K-201", path "jacket"), the full path for spreads
@@ -23,8 +23,8 @@ struct Scope {
   Diagnostics* diagnostics = nullptr;
   Collected* collected = nullptr;
   std::string subject, path, trail;
-  bool top = false;   ///< the top of a file: its tables are subjects of their own
-  Place place;        ///< of the table
+  bool top = false;  ///< the top of a file: its tables are subjects of their own
+  Place place;       ///< of the table
 
   /// The scope of a table under `key`: "feed" from the top, "jacket" within "K-201".
   [[nodiscard]] Scope inside(std::string_view key, Place at) const;

@@ -8,14 +8,15 @@
 
 namespace vatwright {
 
-// Makers of a Field for keys that hold tables. `fields` is a function, so that a list of keys is made once, when first asked for.
+// Makers of a Field for keys that hold tables. `fields` is a function, so that a list of keys is made once, when first
+// asked for.
 
 template <class D>
 using FieldList = const Fields<D>& (*)();
 
 /// A table under a key: `[vessel.jacket]`.
 template <class D, class S>
-Field<D> table(std::string key, FieldList<S> fields, Given<S> D::* member, std::string doc,
+Field<D> table(std::string key, FieldList<S> fields, Given<S> D::*member, std::string doc,
                std::string_view left_out = "") {
   auto read = [key, fields, member](const Node& n, const Scope& s, D& d) {
     Given<S>& given = d.*member;
@@ -30,7 +31,7 @@ Field<D> table(std::string key, FieldList<S> fields, Given<S> D::* member, std::
 /// Several tables in a list: `[[vessel]]`. subject: how messages name one of them, told from its keys and its number.
 /// A single table counts as a list of one where `one_will_do`.
 template <class D, class S>
-Field<D> list_of_tables(std::string key, FieldList<S> fields, Given<std::vector<S>> D::* member,
+Field<D> list_of_tables(std::string key, FieldList<S> fields, Given<std::vector<S>> D::*member,
                         std::string (*subject)(const Table&, std::size_t number), bool one_will_do, std::string doc,
                         std::string_view left_out = "") {
   auto read_one = [key, fields, subject](const Node& n, const Scope& s, std::size_t number, std::vector<S>& to) {
@@ -63,7 +64,7 @@ Field<D> list_of_tables(std::string key, FieldList<S> fields, Given<std::vector<
 
 /// Tables under names that the user chooses: `[utility.tower-water]`. Messages name one "utility tower-water".
 template <class D, class S>
-Field<D> tables_by_name(std::string key, FieldList<S> fields, Given<ByName<S>> D::* member, std::string doc,
+Field<D> tables_by_name(std::string key, FieldList<S> fields, Given<ByName<S>> D::*member, std::string doc,
                         std::string_view left_out = "") {
   auto read = [key, fields, member](const Node& n, const Scope& s, D& d) {
     Given<ByName<S>>& given = d.*member;

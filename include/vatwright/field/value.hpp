@@ -30,7 +30,7 @@ struct Measure {
   Dimension dimension;
   Range range = anything;
   Sense sense = Sense::plain;
-  bool absolute = false;   ///< a pressure that may be meant as gauge: a plain "bar" is worth a word
+  bool absolute = false;  ///< a pressure that may be meant as gauge: a plain "bar" is worth a word
   /// "a volume above zero".
   [[nodiscard]] std::string text() const;
   /// A figure that would do, as it is written in a file: `"6.3 m3"` or `0.5`.
