@@ -49,6 +49,10 @@ bool below_vacuum(double x, const Measure& m) { return m.dimension == dim::press
 
 std::optional<double> judged(double x, const Node& node, const Measure& m, const Scope& scope, std::string_view key) {
   if (std::isfinite(x) && m.range.has(x)) return x;
+  if (m.sense == Sense::temperature && x <= 0) {
+    scope.error(node.place, key, found_text(node) + ", absolute zero", "expected a temperature above it");
+    return std::nullopt;
+  }
   if (below_vacuum(x, m)) {
     scope.error(node.place, key, found_text(node) + ", below full vacuum",
                 m.absolute ? "expected -1.01325 barg or more" : "expected " + m.text());
@@ -75,6 +79,7 @@ std::string Measure::text() const {
   const std::string what = sense == Sense::difference  ? "a temperature difference"
                            : bare_dimension(dimension) ? "a number"
                                                        : name_of(dimension);
+  if (sense == Sense::temperature) return what;  // its range is that above absolute zero, in whatever scale
   const std::string where = range.text();
   return where.empty() ? what : what + " " + where;
 }

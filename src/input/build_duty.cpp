@@ -48,7 +48,8 @@ void check_conversion_of(const DutyDraft& d, const std::vector<Reaction>& reacti
   if (!consumed && !reactions.empty())
     return scope.error(d.conversion_of.place, "conversion_of",
                        *d.conversion_of + (made ? " is made, not consumed" : " is not consumed"),
-                       "conversion is of a reactant: expected " + joined(reactants, "or"));
+                       reactants.empty() ? "expected an equation that consumes it"
+                                         : "conversion is of a reactant: expected " + joined(reactants, "or"));
   const auto& c = feed.c_mol_m3;
   const bool fed = c[static_cast<std::size_t>(i)] > 0;
   const bool nothing_fed = std::all_of(c.begin(), c.end(), [](double x) { return x <= 0; });

@@ -67,6 +67,12 @@ void build_limits(const LimitsDraft& d, const std::optional<double>& held_K, con
                "held " + show(*held_K - *limits.hottest_K, Shown::difference) + " above the product limit of line " +
                    std::to_string(d.temperature.place.line),
                "expected " + show(*limits.hottest_K, Shown::temperature) + " at the most");
+  if (held_K && limits.coldest_K && *held_K < *limits.coldest_K - 1e-9 && held.written)
+    builder.about("operation")
+        .error(held.place, "temperature",
+               "held " + show(*limits.coldest_K - *held_K, Shown::difference) + " below the product limit of line " +
+                   std::to_string(d.temperature.place.line),
+               "expected " + show(*limits.coldest_K, Shown::temperature) + " at the least");
 }
 
 std::vector<std::string> tags_of(const Site& site) {

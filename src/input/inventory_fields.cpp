@@ -5,7 +5,7 @@
 namespace vatwright {
 namespace {
 
-constexpr Measure absolute_temperature{dim::temperature, anything, Sense::temperature};
+constexpr Measure absolute_temperature{dim::temperature, above(0), Sense::temperature};
 
 std::string vessel_subject(const Table& table, std::size_t number) {
   const Node* tag = table.find("tag");

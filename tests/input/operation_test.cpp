@@ -110,3 +110,24 @@ TEST_CASE("constants of vapour pressure in other units give the pressure that is
                       "temperature = \"degC\" }\n"));
   CHECK(read.chemistry.feed.species[0].antoine->pressure_Pa(373.15) == Approx(101325).epsilon(2e-3));
 }
+
+TEST_CASE("a hold temperature outside the product's limits is told on either side", "[input][operation]") {
+  const std::string limits = "[limits]\ntemperature = [\"30 degC\", \"110 degC\"]\n";
+  CHECK(told(read_duty(duty("[operation]\ntemperature = \"120 degC\"\n" + limits)))
+            .find("held 10 K above the product limit of line 17") != std::string::npos);
+  CHECK(told(read_duty(duty("[operation]\ntemperature = \"20 degC\"\n" + limits)))
+            .find("held 10 K below the product limit of line 17") != std::string::npos);
+}
+
+TEST_CASE("absolute zero is no temperature of a feed: a gas would have no volume", "[input][feed]") {
+  const ReadResult result = read_duty("format = 1\nphase = \"gas\"\nconversion_of = \"A\"\n" + target +
+                                      "[feed]\ntemperature = \"0 K\"\nfraction = { A = 1 }\n" + reaction);
+  CHECK(told(result).find("feed, temperature: found \"0 K\", absolute zero; expected a temperature above it") !=
+        std::string::npos);
+}
+
+TEST_CASE("an equation that changes nothing consumes nothing", "[input][reaction]") {
+  const std::string text =
+      head + target + feed + "[[reaction]]\nequation = \"A -> A\"\n[reaction.rate]\nk = \"1 1/h\"\n";
+  CHECK(told(read_duty(text)).find("A is not consumed; expected an equation that consumes it") != std::string::npos);
+}
