@@ -1,6 +1,7 @@
 #include "build_duty.hpp"
 
 #include <algorithm>
+#include <cmath>
 
 #include "build_feed.hpp"
 #include "build_reaction.hpp"
@@ -59,6 +60,16 @@ void check_conversion_of(const DutyDraft& d, const std::vector<Reaction>& reacti
                 "expected a reactant that is fed");
 }
 
+/// Figures each of a size that can be may make one that can not, such as a gas at 1e300 bar.
+void check_finite(const DutyDraft& d, const Feed& feed, const Builder& builder) {
+  bool finite = std::isfinite(feed.temperature_K) && std::isfinite(feed.pressure_Pa) &&
+                std::isfinite(feed.density_kg_m3.value_or(0)) && std::isfinite(feed.heat_capacity_J_kg_K.value_or(0));
+  for (const double c : feed.c_mol_m3) finite = finite && std::isfinite(c);
+  if (!finite)
+    builder.about("feed").error(d.feeds.place, "", "found a mixture with a figure beyond all size",
+                                "expected concentrations, temperatures, pressures and rates that can be");
+}
+
 /// Batch and dosed are fed by charge and dose; what they lack is told, the rest is refused elsewhere.
 void check_whole(const DutyDraft& d, const Builder& builder) {
   if (continuous(d)) {
@@ -93,6 +104,7 @@ Duty build_duty(const DutyDraft& draft, const Site& site, const std::string& fol
   Chemistry& chemistry = duty.chemistry;
   chemistry.feed = built.feed;
   const Feed& feed = chemistry.feed;
+  check_finite(draft, feed, builder);
   std::vector<Reaction> reactions;
   if (draft.feeds) {
     const ReactionContext context{

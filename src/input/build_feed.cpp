@@ -271,7 +271,7 @@ std::optional<double> read_feed_rate(const Raw& raw, const Feed& feed, const Bui
   } else if (!(found == dim::volume_flow)) {
     return refuse(found == dim::volume ? "expected a flow: per hour?" : "expected a flow, such as \"2.4 m3/h\"");
   }
-  if (!(v > 0)) return refuse("expected a flow above zero");
+  if (!(v > 0) || !std::isfinite(v)) return refuse("expected a flow above zero, of a size that can be");
   return v;
 }
 

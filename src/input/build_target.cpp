@@ -108,7 +108,12 @@ class TargetMaker {
     if (!n)
       return error(p.species.place, "production.species", quoted(name) + " is not made from " + duty_.conversion_of,
                    "expected a product of it");
-    target_.feed_m3_s = *moles / share_of_year / (kinetics.c_of_feed() / *n * *Y);
+    const double v = *moles / share_of_year / (kinetics.c_of_feed() / *n * *Y);
+    if (!std::isfinite(v) || !(v > 0))
+      return error(p.amount.place, "production.amount",
+                   "found " + quoted(rate.text) + ", which asks a feed beyond all size",
+                   "expected another amount, or another concentration of " + duty_.conversion_of);
+    target_.feed_m3_s = v;
     builder_.assume("target.feed_rate", show(target_.feed_m3_s, Shown::feed),
                     "from the production, at a yield of " + shortest(*Y));
   }

@@ -150,3 +150,18 @@ TEST_CASE("rates given twice, not at all, or where they do not belong are told",
   CHECK(told(read_duty(head + "[target]\nconversion = 0.8\nfeed_rate = \"3 kmol/h\"\n" + feed + reaction))
             .find("moles are for gases") != std::string::npos);
 }
+
+TEST_CASE("figures that make an infinite one are told", "[input][feed]") {
+  const std::string gas = "format = 1\nphase = \"gas\"\nconversion_of = \"A\"\n" + target;
+  CHECK_FALSE(read_duty(gas + "[feed]\ntemperature = \"1e-290 K\"\npressure = \"1e290 bara\"\nfraction = { A = 1 }\n" +
+                        reaction)
+                  .problems.has_value());
+  CHECK_FALSE(read_duty(head + "[target]\nconversion = 0.8\nfeed_rate = \"1e290 kg/h\"\n" + feed +
+                        "density = \"1e-290 kg/m3\"\n" + reaction)
+                  .problems.has_value());
+  CHECK_FALSE(read_duty(head +
+                        "[target]\nconversion = 0.8\nproduction = { species = \"B\", amount = \"1e290 mol/s\" }\n"
+                        "[feed]\ntemperature = \"25 degC\"\nconcentration = { A = \"1e-290 mol/L\" }\n" +
+                        reaction)
+                  .problems.has_value());
+}
