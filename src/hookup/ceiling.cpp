@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <limits>
 #include <utility>
 
 #include "vatwright/numeric/root.hpp"
@@ -11,6 +12,7 @@ namespace {
 
 constexpr double step_down = 1.3335214321633240;  // 10^(1/8)
 constexpr double first_factor = 1.3;
+constexpr double span = 100;  // of rates looked at in one go, from the top
 
 class CeilingSearch {
  public:
@@ -46,7 +48,25 @@ class CeilingSearch {
     return below(q);
   }
 
-  Ceiling whole_window() { return told(windows_between(range_.first, range_.second)); }
+  /// The uppermost window, looked for downwards from the most that the feed lines pass.
+  Ceiling whole_window() {
+    const double cap = flow_cap(chooser_.problem(), chooser_.network().hookup()), top = std::min(range_.second, cap);
+    for (double hi = top; hi > range_.first;) {
+      const double lo = std::max(range_.first, hi / span);
+      Ceiling found = told(windows_between(lo, hi));
+      if (found.feed_m3_s) return found;
+      if (found.open && hi < range_.second) return {false, hi, found.unsolved};
+      if (found.open) return found;
+      hi = lo;
+    }
+    return {false, std::nullopt, unsolved_};
+  }
+  /// false: conversion falls with the rate, and no shares meet the target at q.
+  bool may_meet(double q) {
+    if (!falls()) return true;
+    const auto best = chooser_.choose_free(q);
+    return !best || best->value >= target_ - 1e-9;
+  }
 
  private:
   double target() const { return chooser_.problem().duty.target.conversion.value_or(0); }
@@ -65,7 +85,8 @@ class CeilingSearch {
   }
   Ceiling told(const Windows& w) {
     Ceiling c;
-    c.unsolved = unsolved_ || w.unsolved;
+    unsolved_ = unsolved_ || w.unsolved;
+    c.unsolved = unsolved_;
     c.feed_m3_s = w.ceiling_m3_s;
     c.open = !w.intervals.empty() && !w.ceiling_m3_s;
     return c;
@@ -121,6 +142,24 @@ class CeilingSearch {
 };
 
 }  // namespace
+
+double flow_cap(const Problem& problem, const Hookup& hookup) {
+  if (hookup.join == Hookup::Join::vessel)
+    return problem.site.vessels[static_cast<std::size_t>(hookup.vessel)].feed_line_m3_s.value_or(
+        std::numeric_limits<double>::infinity());
+  const bool series = hookup.join == Hookup::Join::then;
+  double cap = series ? std::numeric_limits<double>::infinity() : 0;
+  for (const Hookup& part : hookup.parts) {
+    const double one = flow_cap(problem, part);
+    cap = series ? std::min(cap, one) : cap + one;
+  }
+  return cap;
+}
+
+bool may_reach(Chooser& chooser, double feed_m3_s) {
+  if (flow_cap(chooser.problem(), chooser.network().hookup()) < feed_m3_s * (1 - 1e-9)) return false;
+  return CeilingSearch(chooser, feed_m3_s).may_meet(feed_m3_s);
+}
 
 Ceiling find_ceiling(Chooser& chooser, double from_m3_s, std::vector<double> start) {
   CeilingSearch search(chooser, from_m3_s);

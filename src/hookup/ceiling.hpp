@@ -18,6 +18,12 @@ struct Ceiling {
 /// One reaction and a target of conversion: conversion falls as the feed rises, so the rate at which the best shares
 /// just meet the target is found by turns (root at fixed shares, shares at that rate); where a limit is broken there,
 /// feed rates are tried downwards, 8 to a decade, and the end is refined. Else the whole window is searched.
+/// The most that feed lines pass: of a vessel its own, in series the least, in parallel the sum; infinite where none is
+/// stated.
+double flow_cap(const Problem& problem, const Hookup& hookup);
+/// false: the ceiling is surely below this rate, by the feed lines, or because conversion falls with the rate and no
+/// shares meet the target here. One choice of shares in place of a search.
+bool may_reach(Chooser& chooser, double feed_m3_s);
 Ceiling find_ceiling(Chooser& chooser, double from_m3_s, std::vector<double> start);
 
 }  // namespace vatwright

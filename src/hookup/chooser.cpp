@@ -7,6 +7,8 @@
 namespace vatwright {
 namespace {
 
+constexpr double hair = 1e-13;  // of a scaled margin
+
 bool all_met(const std::vector<TargetItem>& items) {
   return std::all_of(items.begin(), items.end(), [](const TargetItem& i) { return i.met; });
 }
@@ -61,7 +63,9 @@ JudgedHookup Chooser::choose(double feed_m3_s, Purpose purpose, Detail detail) {
     const auto* outlet = answer(here.passes.outlet);
     const auto objective = outlet ? value_of(objective_, problem_.duty, *outlet) : std::nullopt;
     if (!margin || !objective) return Score{-1, 0, false};
-    return Score{*margin + holds_within / 2, *objective, true};
+    // shares at the edge of a limit stay a hair inside, so that a window does not take the edge for its own end; a
+    // margin that rests on zero (the fill asked is the most) rests there
+    return Score{*margin == 0 ? 0 : *margin - hair, *objective, true};
   };
   std::vector<std::vector<double>> seeds;
   if (free) seeds.push_back(*free);

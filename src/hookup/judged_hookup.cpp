@@ -9,10 +9,11 @@ bool is_broken(const Limit& limit) { return limit.state == Limit::State::broken;
 
 bool any_broken(const std::vector<Limit>& limits) { return std::any_of(limits.begin(), limits.end(), is_broken); }
 
+// What only the files decide, whatever flows: no flow rate stands in it.
 bool read_from_files(const Limit& limit) {
   const auto& all = all_limits();
   const std::size_t i = place_of(limit.name);
-  return i < all.size() && all[i].reads == Reads::files;
+  return i < all.size() && all[i].reads == Reads::files && limit.unit != "m3/s";
 }
 
 void take_least(double& least, const std::vector<Limit>& limits) {

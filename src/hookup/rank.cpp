@@ -1,6 +1,8 @@
 #include "vatwright/hookup/rank.hpp"
 
 #include <algorithm>
+#include <cmath>
+#include <functional>
 #include <mutex>
 
 #include "chooser.hpp"
@@ -115,15 +117,56 @@ class Ranker {
   }
 
   // By fit: ceilings are found for those whose rank before the figure lets them be shown at all: down to `top`, the
-  // best of every number of vessels, and today's.
+  // best of every number of vessels, and today's. Of one rank only what can come among its first places is searched:
+  // the ceilings of those that convert most give a threshold, and what surely stays below it is left without a figure,
+  // behind them.
   void find_ceilings() {
     if (options_.by != By::fit) return;
-    std::vector<std::size_t> wanted;
+    std::vector<std::pair<int, std::size_t>> by_rank;
+    for (std::size_t i = 0; i < entries_.size(); ++i)
+      by_rank.emplace_back(rank_before_figure(entries_[i], options_), i);
+    std::stable_sort(by_rank.begin(), by_rank.end(), [](const auto& a, const auto& b) { return a.first < b.first; });
     const auto needed = ranks_needed();
-    for (std::size_t i = 0; i < entries_.size(); ++i) {
-      if (std::binary_search(needed.begin(), needed.end(), rank_before_figure(entries_[i], options_)))
-        wanted.push_back(i);
+    for (std::size_t begin = 0, end = 0; begin < by_rank.size(); begin = end) {
+      const int rank = by_rank[begin].first;
+      std::vector<std::size_t> members;
+      while (end < by_rank.size() && by_rank[end].first == rank) members.push_back(by_rank[end++].second);
+      if (!std::binary_search(needed.begin(), needed.end(), rank)) continue;
+      const bool has_today = today_ && rank_before_figure(entries_[*today_], options_) == rank;
+      const auto top = static_cast<std::size_t>(std::max(0, options_.top));
+      const std::size_t places = begin < top ? std::min(top - begin, members.size()) : 1;
+      find_ceilings_of(std::move(members), has_today ? end - begin : places);
     }
+  }
+
+  // The first `places` of these by ceiling are right, ties within a group of 0.1 % included. They are taken in lots,
+  // what feed lines let through most first, and what surely stays below the best so far is left.
+  void find_ceilings_of(std::vector<std::size_t> members, std::size_t places) {
+    constexpr std::size_t lot = 48;
+    const auto promise = [&](std::size_t i) {
+      return std::pair(-flow_cap(problem_, entries_[i].hookup), -entries_[i].reach.value_or(-1));
+    };
+    std::stable_sort(members.begin(), members.end(), [&](auto a, auto b) { return promise(a) < promise(b); });
+    std::vector<double> found;
+    for (std::size_t begin = 0; begin < members.size(); begin += lot) {
+      const std::size_t n = std::min(lot, members.size() - begin);
+      const double threshold = found.size() < places ? 0 : found[places - 1] * (1 - 3e-3);
+      std::vector<char> may(n, 1);
+      if (threshold > 0)
+        for_each_index(n, options_.threads, [&](std::size_t k) {
+          Chooser chooser(problem_, entries_[members[begin + k]].hookup, objective_);
+          may[k] = may_reach(chooser, threshold);
+        });
+      std::vector<std::size_t> wanted;
+      for (std::size_t k = 0; k < n; ++k)
+        if (may[k]) wanted.push_back(members[begin + k]);
+      find_all(wanted);
+      for (const std::size_t i : wanted) found.push_back(figure_of(entries_[i], options_.by));
+      std::sort(found.begin(), found.end(), std::greater<>());
+    }
+  }
+
+  void find_all(const std::vector<std::size_t>& wanted) {
     for_each_index(wanted.size(), options_.threads, [&](std::size_t k) {
       Entry& e = entries_[wanted[k]];
       Chooser chooser(problem_, e.hookup, objective_);

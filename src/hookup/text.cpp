@@ -44,7 +44,7 @@ std::vector<std::optional<long>> ticks_of(const Hookup& h) {
   for (const auto& share : h.shares) {
     ticks.push_back(share ? std::optional(std::max(1L, std::lround(*share * whole_in_ticks))) : std::nullopt);
   }
-  if (std::count(ticks.begin(), ticks.end(), std::nullopt) > 0) return ticks;
+  if (ticks.empty() || std::count(ticks.begin(), ticks.end(), std::nullopt) > 0) return ticks;
   long left = whole_in_ticks;
   for (std::size_t i = 0; i + 1 < ticks.size(); ++i) left -= *ticks[i];
   if (left < 1) {  // the last is below a tick: the largest gives it
