@@ -60,7 +60,7 @@ class TubeMarch {
       for (std::size_t k = 0; k + 1 < nodes.size() && nodes[k] < s; ++k) {
         const double a = nodes[k], b = std::min(nodes[k + 1], s);
         Rates slip(balance_.size());
-        add_integral(stretch.track, a, b, gauss(stretch.track, a, b), 30, slip);
+        add_integral(stretch.track, a, b, gauss(stretch.track, a, b), 14, slip);
         stretch.track.read(a, from);
         stretch.track.read(b, to);
         for (std::size_t i = 0; i < slip.size(); ++i) slip[i] = to[i] - from[i] - slip[i];
@@ -71,12 +71,12 @@ class TubeMarch {
     balance_.set_exhausted(kept);
     read(s, to);
     const auto start = balance_.at_inlet();
-    double worst = 0, terms = 0;
+    double worst = 0, terms = balance_.scale()[0];  // of what is fed
     for (std::size_t j = 0; j < total.size(); ++j) {
       worst = std::max(worst, std::abs(total[j]));
       terms = std::max(terms, std::abs(start[j]) + std::abs(to[j]) + std::abs(to[j] - start[j]));
     }
-    return terms > 0 ? worst / terms : 0;
+    return worst / terms;
   }
 
   [[nodiscard]] double reached() const { return s_; }
@@ -113,7 +113,7 @@ class TubeMarch {
     double apart = 0;
     for (std::size_t j = 0; j < sum.size(); ++j)
       apart = std::max(apart, std::abs(left[j] + right[j] - whole[j]) / balance_.scale()[j]);
-    if (apart <= 1e-13 || depth == 0) {
+    if (apart <= 1e-12 || depth == 0) {
       for (std::size_t j = 0; j < sum.size(); ++j) sum[j] += left[j] + right[j];
       return;
     }

@@ -73,6 +73,20 @@ class Transient {
     if (moves_) dy[n_] = dT;
   }
 
+  /// By differences in proportion to each amount, so that what is nearly gone is felt at its own size.
+  void jacobian(std::span<const double> y, std::span<double> J) {
+    const std::size_t m = size();
+    std::vector<double> moved(y.begin(), y.end()), dy(m), dy_moved(m);
+    (*this)(y, dy);
+    for (std::size_t k = 0; k < m; ++k) {
+      const double h = k < n_ ? std::max(1e-7 * std::abs(y[k]), 1e-3 * fade * scale()) : 1e-6 * y[k];
+      moved[k] = y[k] + h;
+      (*this)(moved, dy_moved);
+      for (std::size_t i = 0; i < m; ++i) J[i * m + k] = (dy_moved[i] - dy[i]) / h;
+      moved[k] = y[k];
+    }
+  }
+
  private:
   void rates(std::span<const double> y, double T) {
     for (std::size_t i = 0; i < n_; ++i) C_[i] = y[i];
@@ -82,7 +96,7 @@ class Transient {
     // A reactant of an order below 1 that runs out: its rate fades over the last millionth, so that the march can go
     // on.
     for (const BrokenOrder& b : broken_) {
-      const double c = std::max(0.0, C_[b.species]), last = 1e-6 * scale();
+      const double c = std::max(0.0, C_[b.species]), last = fade * scale();
       const double nu = setup_.chemistry.kinetics.nu(static_cast<int>(b.species), static_cast<int>(b.reaction));
       if (nu * r_[b.reaction] < 0) r_[b.reaction] *= c / (c + last);
     }
@@ -109,6 +123,7 @@ class Transient {
     return sum;
   }
 
+  static constexpr double fade = 1e-6;
   const Setup& setup_;
   RateEvaluator evaluator_;
   std::vector<BrokenOrder> broken_;
@@ -174,8 +189,10 @@ Outcome<StartRun> run_start_up(const Setup& setup, const StartState& start, doub
     scale.push_back(300);
   }
   const auto f = [&](double, std::span<const double> at, std::span<double> dy) { transient(at, dy); };
-  const MarchOptions options{.rel_tol = 1e-8, .abs_tol = 1e-11, .scale = scale};
-  const auto track = march(f, y, 0, space_times, options);
+  const auto by_amounts = [&](double, std::span<const double> at, std::span<double> J) { transient.jacobian(at, J); };
+  const Jacobian jacobian(by_amounts);
+  const MarchOptions options{.rel_tol = 1e-8, .abs_tol = 1e-11, .scale = scale, .most_calls = 400'000};
+  const auto track = march(f, y, 0, space_times, options, {}, &jacobian);
   if (const auto* no = std::get_if<NoAnswer>(&track)) return unsolved("the start-up could not be followed: " + no->why);
   const Track& path = std::get<Track>(track);
   StartRun run;
