@@ -25,7 +25,7 @@ std::string shown(double percent) {
 /// "]").
 class Parser {
  public:
-  Parser(std::vector<Token> tokens, const Site& site) : tokens_(std::move(tokens)), site_(site) {
+  Parser(std::vector<Token> tokens, const Site& site) : tokens_(std::move(tokens)) {
     for (const Vessel& v : site.vessels) tags_.push_back(v.tag);
   }
 
@@ -181,7 +181,6 @@ class Parser {
   }
 
   std::vector<Token> tokens_;
-  const Site& site_;
   std::vector<std::string> tags_;
   std::map<std::string, int> seen_;
   std::size_t at_ = 0;

@@ -6,7 +6,7 @@ namespace vatwright {
 
 std::optional<Limit> check_pressure_rating(const LimitInput& input) {
   if (!input.vessel.pressure_Pa) return std::nullopt;
-  const auto [least, most] = *input.vessel.pressure_Pa;
+  const double least = input.vessel.pressure_Pa->first, most = input.vessel.pressure_Pa->second;
   const VesselOutcome& o = input.outcome;
   const auto limit = tighter(limit_of(limit_name::pressure_rating, o.highest_Pa, most, Side::most, "Pa"),
                              limit_of(limit_name::pressure_rating, o.lowest_Pa, least, Side::least, "Pa"));

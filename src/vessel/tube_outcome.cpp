@@ -30,8 +30,7 @@ std::vector<double> places_of(const SolvedTube& tube, int intervals) {
   std::vector<double> all = standing_places(intervals);
   all.insert(all.end(), tube.places.begin(), tube.places.end());
   std::ranges::sort(all);
-  const auto same = std::ranges::unique(all);
-  all.erase(same.begin(), same.end());
+  all.erase(std::unique(all.begin(), all.end()), all.end());
   return all;
 }
 
