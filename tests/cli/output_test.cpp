@@ -86,7 +86,7 @@ TEST_CASE("only idle vessels are offered unless asked; examine takes any", "[cli
   CHECK(run_program({"examine", fixture("bay.toml"), fixture("easy.toml"), "--hookup", "K-9"}).exit == Exit::answered);
 }
 
-TEST_CASE("--feed-rate stands in place of the duty's", "[cli][output]") {
+TEST_CASE("the option feed-rate stands in place of the duty's", "[cli][output]") {
   const Ran ran =
       run_program({"screen", fixture("bay.toml"), fixture("easy.toml"), "--json", "--feed-rate", "0.5 m3/h"});
   CHECK(Json::parse(ran.out)["feed_m3_s"].get<double>() == Approx(0.5 / 3600).epsilon(1e-14));
