@@ -37,6 +37,7 @@ class CeilingSearch {
       if (!end) return whole_window();
       const bool still = turn > 0 && std::abs(*end - q) <= 1e-11 * q;
       q = *end;
+      if (q <= range_.first && levelled_off(shares)) return {};
       if (still || q >= range_.second) break;
       if (chooser_.space().dimensions() == 0) break;
       const auto best = chooser_.choose_free(q);
@@ -90,6 +91,12 @@ class CeilingSearch {
     c.feed_m3_s = w.ceiling_m3_s;
     c.open = !w.intervals.empty() && !w.ceiling_m3_s;
     return c;
+  }
+
+  // Still short of the target at almost no feed, and ten times that makes no difference: no shares do better there.
+  bool levelled_off(const std::vector<double>& shares) {
+    const auto least = chooser_.value_at(range_.first, shares), more = chooser_.value_at(10 * range_.first, shares);
+    return least && more && *least < target_ - 1e-9 && std::abs(*least - *more) < 1e-9;
   }
 
   // The feed rate at which these shares just meet the target; an end of the search where they do at all or none.
@@ -162,6 +169,7 @@ bool may_reach(Chooser& chooser, double feed_m3_s) {
 }
 
 Ceiling find_ceiling(Chooser& chooser, double from_m3_s, std::vector<double> start) {
+  if (chooser.never_fits(from_m3_s)) return {};
   CeilingSearch search(chooser, from_m3_s);
   return search.falls() ? search.by_turns(std::move(start)) : search.whole_window();
 }

@@ -44,6 +44,11 @@ std::optional<Chooser::Free> Chooser::choose_free(double feed_m3_s) {
   return x ? std::optional(Free{space_.shares(*x), value}) : std::nullopt;
 }
 
+bool Chooser::never_fits(double feed_m3_s) {
+  const auto shares = space_.shares(space_.dimensions() == 0 ? std::vector<double>{} : space_.in_proportion());
+  return breaks_limit_of_files(judge_hookup(problem_, network_, feed_m3_s, shares, Detail::full));
+}
+
 JudgedHookup Chooser::choose(double feed_m3_s, Purpose purpose, Detail detail) {
   const auto judged_at = [&](std::span<const double> x) {
     return judge_hookup(problem_, network_, feed_m3_s, space_.shares(x), detail);

@@ -18,6 +18,8 @@ class Chooser {
 
   /// The best shares for the objective among those that break no limit, judged. Where every share breaks one: for the
   /// reach the best without limits; for a window those nearest to holding.
+  /// A limit that no feed rate decides is broken, so there is no window.
+  bool never_fits(double feed_m3_s);
   [[nodiscard]] JudgedHookup choose(double feed_m3_s, Purpose purpose, Detail detail = Detail::full);
   /// The best shares with no limit asked, with the objective there; absent where no shares give an answer.
   struct Free {

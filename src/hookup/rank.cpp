@@ -108,7 +108,6 @@ class Ranker {
     if (const Stream* outlet = answer(judged.passes.outlet)) {
       e.reach = value_of(options_.by == By::yield ? objective_ : Objective{}, problem_.duty, *outlet);
     }
-    if (options_.by == By::ceiling) find_one(chooser, e);
   }
 
   void find_one(Chooser& chooser, Entry& e) const {
@@ -116,25 +115,26 @@ class Ranker {
     e.unsolved = e.unsolved || e.ceiling->unsolved;
   }
 
-  // By fit: ceilings are found for those whose rank before the figure lets them be shown at all: down to `top`, the
+  // Ceilings are found for those whose rank before the figure lets them be shown at all: down to `top`, the
   // best of every number of vessels, and today's. Of one rank only what can come among its first places is searched:
   // the ceilings of those that convert most give a threshold, and what surely stays below it is left without a figure,
   // behind them.
   void find_ceilings() {
-    if (options_.by != By::fit) return;
-    std::vector<std::pair<int, std::size_t>> by_rank;
+    if (!needs_ceilings()) return;
+    std::vector<std::pair<std::pair<int, int>, std::size_t>> by_rank;  // rank and number of vessels
     for (std::size_t i = 0; i < entries_.size(); ++i)
-      by_rank.emplace_back(rank_before_figure(entries_[i], options_), i);
+      by_rank.push_back({{rank_before_figure(entries_[i], options_), entries_[i].vessel_count}, i});
     std::stable_sort(by_rank.begin(), by_rank.end(), [](const auto& a, const auto& b) { return a.first < b.first; });
     const auto needed = ranks_needed();
     for (std::size_t begin = 0, end = 0; begin < by_rank.size(); begin = end) {
-      const int rank = by_rank[begin].first;
+      const auto lot = by_rank[begin].first;
       std::vector<std::size_t> members;
-      while (end < by_rank.size() && by_rank[end].first == rank) members.push_back(by_rank[end++].second);
-      if (!std::binary_search(needed.begin(), needed.end(), rank)) continue;
-      const bool has_today = today_ && rank_before_figure(entries_[*today_], options_) == rank;
+      while (end < by_rank.size() && by_rank[end].first == lot) members.push_back(by_rank[end++].second);
+      if (!std::binary_search(needed.begin(), needed.end(), lot.first)) continue;
+      const bool has_today = today_ && rank_before_figure(entries_[*today_], options_) == lot.first;
       const auto top = static_cast<std::size_t>(std::max(0, options_.top));
-      const std::size_t places = begin < top ? std::min(top - begin, members.size()) : 1;
+      const std::size_t open = options_.by == By::ceiling ? top : top - std::min(top, begin);
+      const std::size_t places = std::min(std::max<std::size_t>(1, open), members.size());
       find_ceilings_of(std::move(members), has_today ? end - begin : places);
     }
   }

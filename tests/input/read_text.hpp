@@ -2,6 +2,7 @@
 #include <fstream>
 #include <sstream>
 #include <stdexcept>
+#include <deque>
 #include <string>
 
 #include "vatwright/input/read.hpp"
@@ -34,11 +35,13 @@ inline ReadResult read_duty(const std::string& duty) { return read_both(one_tank
 inline std::string told(const ReadResult& result) { return to_text(result.diagnostics, false); }
 
 /// The duty of a text that has to be right; what is told otherwise becomes the fault of the test.
-inline Problem right(const ReadResult& result) {
+/// It is kept for the whole run, so that tests may hold on to parts of it.
+inline const Problem& right(const ReadResult& result) {
+  static std::deque<Problem> kept;
   if (!result.problems) throw std::runtime_error(told(result));
-  return result.problems->base;
+  return kept.emplace_back(result.problems->base);
 }
-inline Duty right_duty(const std::string& text) { return right(read_duty(text)).duty; }
+inline const Duty& right_duty(const std::string& text) { return right(read_duty(text)).duty; }
 
 inline double fed(const Duty& duty, const std::string& species) {
   return duty.chemistry.feed.c_mol_m3.at(static_cast<std::size_t>(duty.chemistry.feed.index_of(species)));
