@@ -80,7 +80,7 @@ bool TubeTrack::add_panel(double u0, double u1) {
   a[degree] /= 2;
   const double last = std::max({std::abs(a[degree]), std::abs(a[degree - 1]), std::abs(a[degree - 2])});
   const double cancelled =
-      way_.kind() == EndKind::equilibrium ? 2e-14 * std::exp(u1) : 0;  // of the rate, near its zero
+      way_.kind() == EndKind::equilibrium ? 2e-14 * cancels_ * std::exp(u1) : 0;  // of the rate, near its zero
   if (last > largest * (1e-12 + cancelled) && u1 - u0 > narrowest * std::max(1.0, u1)) return false;
 
   std::array<double, degree + 2> P{};  // the integral from u0
@@ -101,6 +101,11 @@ bool TubeTrack::add_panel(double u0, double u1) {
   return true;
 }
 
+double TubeTrack::cancellation(Way& way) {
+  if (way.kind() != EndKind::equilibrium || !(way.length() > 0)) return 1;
+  return std::max(1.0, way.path().reach(way.sign()).distance / way.length());
+}
+
 bool TubeTrack::extend() {
   if (ended_ || failed_) return false;
   const double u0 = panels_.empty() ? 0 : panels_.back().u1;
@@ -119,7 +124,7 @@ bool TubeTrack::extend() {
   bool at_once = true;
   while (!add_panel(u0, u1)) {
     at_once = false;
-    if (way_.kind() == EndKind::equilibrium && u0 > 25) {  // the rest is the rounding of the rate
+    if (way_.kind() == EndKind::equilibrium && u0 + std::log(cancels_) > 25) {  // the rest is the rounding of the rate
       ended_ = true;
       return false;
     }

@@ -13,7 +13,8 @@ namespace vatwright {
 /// reaction has a constant dt/du, a power law an exponential: one panel goes a long way.
 class TubeTrack {
  public:
-  explicit TubeTrack(Way way) : way_(std::move(way)), kinks_(way_.path().kinks(way_.sign())) {}
+  explicit TubeTrack(Way way)
+      : way_(std::move(way)), kinks_(way_.path().kinks(way_.sign())), cancels_(cancellation(way_)) {}
 
   /// Where the fluid is after the space time t; d = length at or beyond the end (then `through` is true).
   struct Reading {
@@ -26,6 +27,10 @@ class TubeTrack {
   /// Space time at which the end is reached to rounding, as far as is known by now.
   [[nodiscard]] std::optional<double> end_time() const;
   [[nodiscard]] bool failed() const { return failed_; }
+  /// How many times larger the terms of the rate are than the rate itself at the inlet of a way that ends in
+  /// equilibrium, about: the way to depletion over the way to equilibrium. The rate's rounding counts that much more,
+  /// e^u times at u.
+  [[nodiscard]] double cancels() const { return cancels_; }
   Way& way() { return way_; }
 
  private:
@@ -41,8 +46,11 @@ class TubeTrack {
   [[nodiscard]] static double solve(const Panel& panel, double t);
   [[nodiscard]] Place place_of(double u) const;
 
+  static double cancellation(Way& way);
+
   Way way_;
   std::vector<double> kinks_;
+  double cancels_ = 1;
   std::vector<Panel> panels_;
   double width_ = 2;
   bool ended_ = false, failed_ = false;
