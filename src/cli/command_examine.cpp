@@ -1,9 +1,6 @@
 #include <ostream>
 
-#include "session.hpp"
-#include "vatwright/report/csv.hpp"
-#include "vatwright/report/json.hpp"
-#include "vatwright/report/page.hpp"
+#include "finish.hpp"
 
 namespace vatwright {
 namespace {
@@ -30,13 +27,8 @@ Exit run_examine(const Context& context) {
   ExamineAnswer answer{examine(problems.base, *hookup, made_by(*read), context), {}};
   for (const auto& [name, problem] : problems.cases)
     answer.cases.emplace_back(name, examine(problem, *hookup, made_by(*read), context));
-  tell_unsolved_of(context, answer, "");
-  for (const auto& [name, of_case] : answer.cases) tell_unsolved_of(context, of_case, " (" + name + ")");
-
-  const bool written =
-      write_answer(context, {[&] { return to_json(answer); }, [&] { return to_page(answer, look_of(context)); },
-                             [&] { return to_csv(answer); }});
-  return exit_of(context.settings, {written, anything_unsolved(answer), anything_fits(answer)});
+  return finish(context, answer,
+                [&](const auto& of, const std::string& which) { tell_unsolved_of(context, of, which); });
 }
 
 }  // namespace vatwright

@@ -1,11 +1,8 @@
 #include <ostream>
 
+#include "finish.hpp"
 #include "progress.hpp"
-#include "session.hpp"
 #include "vatwright/numeric/pool.hpp"
-#include "vatwright/report/csv.hpp"
-#include "vatwright/report/json.hpp"
-#include "vatwright/report/page.hpp"
 
 namespace vatwright {
 namespace {
@@ -88,13 +85,8 @@ Exit run_rank(const Context& context) {
   }
   RankAnswer answer = alone(rank_problem(problems.base, options, made_by(*read), context, "hookups rated"));
   add_cases(answer, problems, options, made_by(*read), context);
-  tell_unsolved_of(context, answer, "");
-  for (const auto& [name, of_case] : answer.cases) tell_unsolved_of(context, of_case, " (" + name + ")");
-
-  const bool written =
-      write_answer(context, {[&] { return to_json(answer); }, [&] { return to_page(answer, look_of(context)); },
-                             [&] { return to_csv(answer); }});
-  return exit_of(settings, {written, anything_unsolved(answer), anything_fits(answer)});
+  return finish(context, answer,
+                [&](const auto& of, const std::string& which) { tell_unsolved_of(context, of, which); });
 }
 
 }  // namespace vatwright

@@ -1,11 +1,8 @@
 #include <ostream>
 
+#include "finish.hpp"
 #include "progress.hpp"
-#include "session.hpp"
 #include "vatwright/numeric/pool.hpp"
-#include "vatwright/report/csv.hpp"
-#include "vatwright/report/json.hpp"
-#include "vatwright/report/page.hpp"
 
 namespace vatwright {
 namespace {
@@ -38,13 +35,8 @@ Exit run_screen(const Context& context) {
   for (const auto& [name, problem] : problems.cases)
     answer.cases.emplace_back(name, screen(problem, made_by(*read), context, progress));
   progress.end();
-  tell_unsolved_of(context, answer, "");
-  for (const auto& [name, of_case] : answer.cases) tell_unsolved_of(context, of_case, " (" + name + ")");
-
-  const bool written =
-      write_answer(context, {[&] { return to_json(answer); }, [&] { return to_page(answer, look_of(context)); },
-                             [&] { return to_csv(answer); }});
-  return exit_of(context.settings, {written, anything_unsolved(answer), anything_fits(answer)});
+  return finish(context, answer,
+                [&](const auto& of, const std::string& which) { tell_unsolved_of(context, of, which); });
 }
 
 }  // namespace vatwright

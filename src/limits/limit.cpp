@@ -6,6 +6,18 @@
 
 namespace vatwright {
 
+std::string_view text_of(Limit::State state) {
+  switch (state) {
+    case Limit::State::holds:
+      return "holds";
+    case Limit::State::broken:
+      return "broken";
+    case Limit::State::cannot_tell:
+      break;
+  }
+  return "cannot-tell";
+}
+
 const std::vector<ListedLimit>& all_limits() {
   static const std::vector<ListedLimit> list = {
       {limit_name::fill, check_fill, Reads::files},

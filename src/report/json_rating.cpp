@@ -9,18 +9,6 @@ Json windows_json(const std::vector<Interval>& intervals) {
   return json;
 }
 
-std::string_view text_of_state(Limit::State state) {
-  switch (state) {
-    case Limit::State::holds:
-      return "holds";
-    case Limit::State::broken:
-      return "broken";
-    case Limit::State::cannot_tell:
-      break;
-  }
-  return "cannot-tell";
-}
-
 Json limit_json(const Limit& limit) {
   Json json;
   json["name"] = limit.name;
@@ -28,7 +16,7 @@ Json limit_json(const Limit& limit) {
   json["bound"] = number(limit.bound);
   json["unit"] = text_or_null(std::string(limit.unit));
   json["margin"] = number(limit.margin);
-  json["state"] = text_of_state(limit.state);
+  json["state"] = text_of(limit.state);
   return json;
 }
 

@@ -5,29 +5,16 @@
 
 namespace vatwright {
 
-std::string words_of(Verdict verdict) {
-  switch (verdict) {
-    case Verdict::fits:
-      return "fits";
-    case Verdict::does_not_fit:
-      return "does not fit";
-    case Verdict::cannot_tell:
-      break;
-  }
-  return "cannot tell";
+namespace {
+std::string with_spaces(std::string_view text) {
+  std::string words(text);
+  std::replace(words.begin(), words.end(), '-', ' ');
+  return words;
 }
+}  // namespace
 
-std::string words_of(Limit::State state) {
-  switch (state) {
-    case Limit::State::holds:
-      return "holds";
-    case Limit::State::broken:
-      return "broken";
-    case Limit::State::cannot_tell:
-      break;
-  }
-  return "cannot tell";
-}
+std::string words_of(Verdict verdict) { return with_spaces(text_of(verdict)); }
+std::string words_of(Limit::State state) { return with_spaces(text_of(state)); }
 
 std::string short_kind(const std::string& kind) {
   if (kind == "stirred-tank") return "tank";

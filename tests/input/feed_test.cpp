@@ -85,6 +85,17 @@ TEST_CASE("gas streams mix by moles; heat capacities that are constants give the
   CHECK(duty.target.feed_m3_s == Approx(4000.0 / 3600 / c));
 }
 
+TEST_CASE("gas streams whose heat capacity moves with temperature mix by its integral", "[input][feed]") {
+  // equal moles of one species at 300 K and 500 K, cp = 20 + 0.05 T + 1e-4 T^2 J/mol/K: the root of 2 H(T) = H(300 K) +
+  // H(500 K), H = 20 T + 0.025 T^2 + 1e-4/3 T^3, by scipy.optimize.brentq is 411.45397030626054 K
+  const Duty duty =
+      right_duty("format = 1\nphase = \"gas\"\nconversion_of = \"A\"\n" + no_rate +
+                 stream("one", "1 kmol/h", "300 K", "pressure = \"2 bara\"\nfraction = { A = 1 }\n") +
+                 stream("two", "1 kmol/h", "500 K", "pressure = \"2 bara\"\nfraction = { A = 1 }\n") +
+                 "[species.A]\nheat_capacity = [\"20 J/mol/K\", \"0.05 J/mol/K2\", \"1e-4 J/mol/K3\"]\n" + reaction);
+  CHECK(duty.chemistry.feed.temperature_K == Approx(411.45397030626054).epsilon(1e-11));
+}
+
 TEST_CASE("a gas feed is ideal, and weighs what its molar masses say", "[input][feed]") {
   // 2 bar, 500 K, half A of 30 g/mol, half N2 of 28 g/mol: c = 2e5/(8.314462618*500) = 48.109 mol/m3, 29 g/mol
   const std::string gas =

@@ -3,20 +3,12 @@
 #include <cmath>
 
 #include "support/catch.hpp"
+#include "track_reading.hpp"
 #include "vatwright/numeric/march.hpp"
 
 using namespace vatwright;
 
 namespace {
-
-using In = std::span<const double>;
-using Out = std::span<double>;
-
-std::vector<double> at(const Track& track, double t) {
-  std::vector<double> y(static_cast<std::size_t>(track.size()));
-  track.read(t, y);
-  return y;
-}
 
 constexpr auto robertson = [](double, In y, Out d) {
   d[0] = -0.04 * y[0] + 1e4 * y[1] * y[2];

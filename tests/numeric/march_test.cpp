@@ -5,19 +5,11 @@
 #include <limits>
 
 #include "support/catch.hpp"
+#include "track_reading.hpp"
 
 using namespace vatwright;
 
 namespace {
-
-using In = std::span<const double>;
-using Out = std::span<double>;
-
-std::vector<double> at(const Track& track, double t) {
-  std::vector<double> y(static_cast<std::size_t>(track.size()));
-  track.read(t, y);
-  return y;
-}
 
 Track marched(Rhs f, std::vector<double> y0, double t0, double t1, const MarchOptions& options = {},
               std::span<const Event> events = {}) {

@@ -41,6 +41,8 @@ struct Limit {
 /// hookup's).
 enum class Stands { alone, in_hookup };
 
+std::string_view text_of(Limit::State state);  ///< "holds", "broken", "cannot-tell"
+
 /// What a limit looks at.
 struct LimitInput {
   const Vessel& vessel;
