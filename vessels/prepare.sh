@@ -11,7 +11,7 @@ need() {
     package=${pair#*=}
     case $thing in
       */*) found=$(ls -d /usr/$thing /usr/local/$thing 2>/dev/null | head -n 1) ;;
-      *) found=$(command -v "$thing" 2>/dev/null) ;;
+      *) found=$(command -v "$thing" 2>/dev/null || true) ;;
     esac
     [ -n "$found" ] || missing="$missing $package"
   done
