@@ -1,5 +1,6 @@
 #include "vatwright/hookup/network.hpp"
 
+#include <algorithm>
 #include <numeric>
 
 #include "vatwright/hookup/mix.hpp"
@@ -10,7 +11,7 @@ namespace {
 /// One vessel with what arrives at it, and the run made for that.
 struct Leaf {
   Leaf(const Problem& problem, int index)
-      : vessel(problem.site.vessels[static_cast<std::size_t>(index)]), operation(operation_of(problem.duty, vessel)) {}
+      : vessel(problem.site.vessels[static_cast<std::size_t>(index)]), operation(operation_of(problem, vessel)) {}
   const Vessel& vessel;
   Operation operation;
   Stream arrives;
@@ -37,6 +38,21 @@ Outcome<Stream> outlet_of(const Outcome<VesselOutcome>& outcome) {
   const auto& got = std::get<VesselOutcome>(outcome);
   if (got.cycle) return NoAnswer{NoAnswer::Kind::cannot_tell, "the start ends in a cycle, there is no steady outlet"};
   return got.outlet;
+}
+
+/// Jacketed vessels on one medium of which only the `total` is stated share it evenly.
+void share_totals(std::vector<Leaf>& leaves) {
+  const auto takes_of = [](const Utility* medium) {
+    return [medium](const Leaf& leaf) {
+      const Utility* own = leaf.operation.medium;
+      return own != nullptr && own == medium && !own->flow_m3_s && own->total_m3_s;
+    };
+  };
+  for (Leaf& leaf : leaves)
+    if (takes_of(leaf.operation.medium)(leaf)) {
+      const auto sharing = std::ranges::count_if(leaves, takes_of(leaf.operation.medium));
+      leaf.operation.medium_flow_m3_s = *leaf.operation.medium->total_m3_s / static_cast<double>(sharing);
+    }
 }
 
 }  // namespace
@@ -118,6 +134,7 @@ Network::Network(const Problem& problem, const Hookup& hookup)
     const Leaf& leaf = model_->leaves.back();
     model_->volumes.push_back(fluid_volume(leaf.vessel.kind, gas ? 1 : leaf.operation.fill));
   }
+  share_totals(model_->leaves);
 }
 Network::~Network() = default;
 Network::Network(Network&&) noexcept = default;

@@ -16,12 +16,12 @@ OperationChoice choice_of(const VesselOperationDraft& d) {
 }
 
 void check_choice(const VesselOperationDraft& d, Thermal thermal, const Site& site, const Scope& scope) {
-  if (d.thermal && *d.thermal == Thermal::jacketed)
-    scope.error(d.thermal.place, "thermal", "\"jacketed\" is read and checked, but this version can not reckon it",
-                "expected \"hold\" or \"adiabatic\"");
   if (d.temperature && thermal == Thermal::adiabatic)
     scope.error(d.temperature.place, "temperature", "found a temperature where vessels are adiabatic",
                 "expected none; feed.temperature meant?");
+  if (d.temperature && thermal == Thermal::jacketed)
+    scope.warning(d.temperature.place, "temperature", "holds nothing where vessels run on their jackets alone",
+                  "left unused; thermal = \"hold\" meant?");
   if (d.utility) {
     std::vector<std::string> names;
     bool known = false;

@@ -43,7 +43,8 @@ std::optional<Draw> draw_of(const LimitInput& input) {
     case Thermal::adiabatic:
       return std::nullopt;
     case Thermal::jacketed:
-      return Draw{medium, medium->flow_m3_s ? medium->flow_m3_s : medium->total_m3_s, true};
+      if (!input.operation.medium_flow_m3_s) return std::nullopt;  // nothing limits it
+      return Draw{medium, input.operation.medium_flow_m3_s, true};
     case Thermal::hold:
       break;
   }

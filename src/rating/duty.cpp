@@ -36,6 +36,16 @@ Operation operation_of(const Duty& duty, const Vessel& vessel) {
   return operation;
 }
 
+Operation operation_of(const Problem& problem, const Vessel& vessel) {
+  Operation operation = operation_of(problem.duty, vessel);
+  if (operation.thermal != Thermal::jacketed) return operation;
+  operation.medium = choose_medium(vessel, operation, problem.site.utilities, {});
+  if (operation.medium == nullptr) return operation;
+  const Utility& medium = *operation.medium;
+  operation.medium_flow_m3_s = medium.flow_m3_s ? medium.flow_m3_s : medium.total_m3_s;
+  return operation;
+}
+
 Stream whole_feed(const Duty& duty) {
   const auto n = static_cast<std::size_t>(duty.chemistry.kinetics.reactions());
   return {duty.target.feed_m3_s, std::vector<double>(n, 0.0), duty.chemistry.feed.temperature_K,

@@ -91,7 +91,7 @@ void tell_vessel(Rating& rating, const VesselPlace& place, const Judged& judged,
 
 Rating rate(const Problem& problem, const Vessel& vessel, const RateOptions& options) {
   const Duty& duty = problem.duty;
-  const Operation operation = operation_of(duty, vessel);
+  const Operation operation = operation_of(problem, vessel);
   VesselRun run(vessel, duty.chemistry, operation, duty.start, arriving_first(duty, operation));
   const VesselPlace place{problem, vessel, operation, duty.target.feed_m3_s};
   const auto outcome = run.at(place.feed_m3_s, options.detail);

@@ -19,6 +19,13 @@ std::string missing_for_heat(const Chemistry& chemistry) {
   for (int j = 0; j < kinetics.reactions(); ++j)
     if (!kinetics.reaction(j).heat)
       return "reaction " + kinetics.reaction(j).name + " has no heat of reaction, others have";
+  return missing_heat_capacity(chemistry);
+}
+
+}  // namespace
+
+std::string missing_heat_capacity(const Chemistry& chemistry) {
+  const Kinetics& kinetics = chemistry.kinetics;
   const Feed& feed = chemistry.feed;
   if (feed.heat_capacity_J_kg_K)
     return chemistry.feed_mass() ? "" : "the feed has a heat capacity per mass and no density";
@@ -29,6 +36,8 @@ std::string missing_for_heat(const Chemistry& chemistry) {
   }
   return "";
 }
+
+namespace {
 
 /// rho cp of the feed where the mixture's is given; J/K per m3 of mixed feed.
 std::optional<double> constant_capacity(const Chemistry& chemistry) {
@@ -94,15 +103,21 @@ double released_heat(const Chemistry& chemistry, std::span<const double> xi_in, 
 }
 
 double adiabatic_temperature(const Chemistry& chemistry, std::span<const double> xi_in, double T_in_K,
-                             std::span<const double> xi, double added_J_m3) {
+                             std::span<const double> xi) {
+  return mixed_temperature(chemistry, xi_in, T_in_K, xi, {});
+}
+
+double mixed_temperature(const Chemistry& chemistry, std::span<const double> xi_in, double T_in_K,
+                         std::span<const double> xi, const Exchange& exchange) {
   const double nowhere = std::numeric_limits<double>::quiet_NaN();
-  // f(T) = sensible(xi_in, T_in, T) - released(xi_in, xi, T) - added; its slope is the heat capacity at xi where the
-  // heats of reaction move with the heat capacities.
+  // f(T) = sensible(xi_in, T_in, T) + per_K (T - medium) - released(xi_in, xi, T) - added; its slope is the heat
+  // capacity at xi, where the heats of reaction move with the heat capacities, and per_K.
   double T = T_in_K;
   for (int i = 0; i < 60; ++i) {
-    const double excess =
-        sensible_heat(chemistry, xi_in, T_in_K, T) - released_heat(chemistry, xi_in, xi, T) - added_J_m3;
-    const double capacity = heat_capacity(chemistry, heat_is_constant(chemistry) ? xi_in : xi, T);
+    const double excess = sensible_heat(chemistry, xi_in, T_in_K, T) - released_heat(chemistry, xi_in, xi, T) -
+                          exchange.added_J_m3 + exchange.per_K_J_m3_K * (T - exchange.medium_K);
+    const double capacity =
+        heat_capacity(chemistry, heat_is_constant(chemistry) ? xi_in : xi, T) + exchange.per_K_J_m3_K;
     if (!(capacity > 0)) return nowhere;
     const double step = excess / capacity;
     const double next = std::max(T - step, T / 4);  // never below 0 K on the way

@@ -3,6 +3,7 @@
 
 #include "start_up.hpp"
 #include "tank_curve.hpp"
+#include "tank_newton.hpp"
 #include "tank_outcome.hpp"
 
 namespace vatwright {
@@ -20,17 +21,18 @@ struct Found {
 class OneReactionTank final : public Solver {
  public:
   explicit OneReactionTank(const Setup& setup) : setup_(setup), tell_rate_(setup.chemistry.kinetics) {
-    if (!moves_with_feed()) build(0);
+    if (!moves_with_feed()) build({});
   }
 
   Outcome<VesselOutcome> at(double feed_m3_s, Detail detail) override {
-    if (moves_with_feed()) build(setup_.agitator_W / feed_m3_s);
+    if (moves_with_feed()) build(setup_.exchange(feed_m3_s));
     if (path_->no_value() > 0) return cannot_tell("a rate has no finite value where a species that slows it is absent");
     const double tau = setup_.volume_m3 / feed_m3_s;
     bool confined = false;
     std::vector<Found> found;
     if (auto failed = find_states(tau, found, confined)) return *failed;
-    const auto reached = reached_of(tau, feed_m3_s, found, confined);
+    if (setup_.is_jacketed()) judge_stability(feed_m3_s, found);
+    const auto reached = reached_of(tau, feed_m3_s, found, confined, detail);
     if (const auto* no = std::get_if<NoAnswer>(&reached)) return *no;
     return outcome_of(found, std::get<Arrival>(reached), feed_m3_s, detail);
   }
@@ -56,16 +58,16 @@ class OneReactionTank final : public Solver {
 
  private:
   struct Arrival {
-    std::size_t state = 0;
-    double peak_K = 0;
+    std::optional<std::size_t> state;  ///< absent: a cycle
+    std::optional<double> peak_K;      ///< absent: not asked
   };
 
-  bool moves_with_feed() const { return !setup_.is_held && setup_.agitator_W != 0 && setup_.heat_known(); }
+  bool moves_with_feed() const { return setup_.T_moves() && (setup_.agitator_W != 0 || setup_.is_jacketed()); }
 
-  void build(double added_J_m3) {
+  void build(const Exchange& exchange) {
     if (path_) calls_before_ += path_->calls();
     curve_.reset();
-    path_.emplace(setup_, added_J_m3);
+    path_.emplace(setup_, exchange);
     for (double sign : {1.0, -1.0})
       if (!curve_)
         if (auto way = Way::find(*path_, sign)) curve_.emplace(*way);
@@ -115,35 +117,63 @@ class OneReactionTank final : public Solver {
     return 0;
   }
 
-  Outcome<Arrival> reached_of(double tau, double feed_m3_s, const std::vector<Found>& found, bool confined) {
-    const NoAnswer beyond = cannot_tell(confined ? curve_->way().why() : "no steady state in the range of the model");
-    if (found.empty()) return beyond;
-    const StartState start = start_state(setup_);
-    double from = start.xi, peak = setup_.inlet_K;
-    if (!on_line(start)) {
-      if (setup_.chemistry.kinetics.has_table())
-        return cannot_tell("a table of measured rates says nothing of a tank that starts filled with solvent");
-      const auto run = run_start_up(setup_, start, feed_m3_s, 40);
-      if (const auto* no = std::get_if<NoAnswer>(&run)) return *no;
-      const StartRun& end = std::get<StartRun>(run);
-      from = std::clamp(end.xi[0], lowest(), highest());
-      peak = end.peak_K;
-    } else if (!setup_.is_held) {
-      peak = path_->temperature(from);
+  /// A jacket makes heat and composition move apart: stable is what the eigenvalues of both balances say.
+  void judge_stability(double feed_m3_s, std::vector<Found>& found) {
+    TankBalance balance(setup_, feed_m3_s);
+    Transient transient(setup_, feed_m3_s);
+    for (Found& state : found) {
+      const auto place = place_of(state);
+      std::vector<double> y = place.C;
+      y.push_back(place.temperature_K);
+      if (setup_.is_gas) {
+        state.stable = is_stable(transient, y);
+      } else {
+        state.stable = is_stable(balance, y);
+      }
     }
-    bool leaves = false;
-    const std::size_t i = nearest_from(from, tau, found, leaves);
-    if (leaves) return beyond;
-    if (!setup_.is_held) peak = std::max(peak, path_->temperature(found[i].xi));
-    return Arrival{i, peak};
+    calls_before_ += balance.calls();
   }
 
-  double lowest() const { return path_->inlet().xi - path_->reach(-1).distance; }
-  double highest() const { return path_->inlet().xi + path_->reach(1).distance; }
+  /// Concentrations at a state, to full digits near either end of the way.
+  RestingPlace place_of(const Found& state) {
+    const bool from_end = curve_ && state.left < std::abs(state.distance_out);
+    const double sign = curve_ ? curve_->way().sign() : 1;
+    const Anchor there = from_end ? path_->at(curve_->way().end(), -sign * state.left)
+                                  : path_->at(path_->inlet(), state.distance_out);
+    RestingPlace place{there.c, path_->temperature(state.xi), state.stable};
+    for (double& c : place.C) c = std::max(c, 0.0);
+    setup_.chemistry.concentrations_of_amounts(place.C, place.temperature_K, setup_.inlet_Pa, place.C);
+    return place;
+  }
+
+  Outcome<Arrival> reached_of(double tau, double feed_m3_s, const std::vector<Found>& found, bool confined,
+                              Detail detail) {
+    const NoAnswer beyond = cannot_tell(confined ? curve_->way().why() : "no steady state in the range of the model");
+    if (found.empty()) return beyond;
+    if (setup_.is_jacketed() && detail == Detail::map && found.size() == 1 && found[0].stable) return Arrival{0, {}};
+    const StartState start = start_state(setup_);
+    if (!on_line(start)) return follow(start, feed_m3_s, found);
+    bool leaves = false;
+    const std::size_t i = nearest_from(start.xi, tau, found, leaves);
+    if (leaves) return beyond;
+    if (setup_.is_held) return Arrival{i, setup_.inlet_K};
+    return Arrival{i, std::max(path_->temperature(start.xi), path_->temperature(found[i].xi))};
+  }
+
+  Outcome<Arrival> follow(const StartState& start, double feed_m3_s, const std::vector<Found>& found) {
+    if (setup_.chemistry.kinetics.has_table())
+      return cannot_tell("a table of measured rates says nothing of a tank that starts filled with solvent");
+    std::vector<RestingPlace> places;
+    for (const Found& state : found) places.push_back(place_of(state));
+    const auto end = follow_start(setup_, start, feed_m3_s, places, Places::all);
+    if (const auto* no = std::get_if<NoAnswer>(&end)) return *no;
+    const StartEnd& rest = std::get<StartEnd>(end);
+    return Arrival{rest.at, rest.peak_K};
+  }
 
   /// The start lies on the line that the states lie on, so that the tank moves along it.
   bool on_line(const StartState& start) const {
-    if (!start.on_extents) return false;
+    if (!start.on_extents || setup_.is_jacketed()) return false;
     if (setup_.is_held) return true;
     return std::abs(path_->temperature(start.xi) - start.temperature_K) <= 1e-9 * start.temperature_K;
   }
@@ -176,7 +206,9 @@ class OneReactionTank final : public Solver {
                                 found[i].stable,
                                 i == arrival.state});
     outcome.start_peak_K = arrival.peak_K;
-    outcome.residual = residual_of(found[arrival.state], setup_.volume_m3 / feed_m3_s);
+    outcome.isothermal = setup_.is_held;
+    outcome.cycle = !arrival.state;
+    if (arrival.state) outcome.residual = residual_of(found[*arrival.state], setup_.volume_m3 / feed_m3_s);
     tell_of_tank(setup_, feed_m3_s, outcome, detail);
     std::ranges::stable_sort(outcome.states, {}, &SteadyState::conversion);
     return outcome;

@@ -12,7 +12,7 @@ namespace {
 /// A tube or packed tube with one reaction whose rate does not feel the pressure drop: one track serves all feed rates.
 class OneReactionTube final : public Solver {
  public:
-  explicit OneReactionTube(const Setup& setup) : setup_(setup), path_(setup, 0), tell_rate_(setup.chemistry.kinetics) {
+  explicit OneReactionTube(const Setup& setup) : setup_(setup), path_(setup, {}), tell_rate_(setup.chemistry.kinetics) {
     if (path_.rate(path_.inlet(), 0) == 0) return;  // nothing happens, even where a seed would start it
     for (double sign : {1.0, -1.0})
       if (!track_)

@@ -25,8 +25,8 @@ bool rate_falls(const Kinetics& kinetics, const Setup& setup) {
 
 }  // namespace
 
-RatePath::RatePath(const Setup& setup, double added_J_m3)
-    : setup_(setup), evaluator_(setup.chemistry.kinetics), added_(added_J_m3) {
+RatePath::RatePath(const Setup& setup, const Exchange& exchange)
+    : setup_(setup), evaluator_(setup.chemistry.kinetics), exchange_(exchange) {
   const Chemistry& chemistry = setup.chemistry;
   const Kinetics& kinetics = chemistry.kinetics;
   const auto n = static_cast<std::size_t>(kinetics.species());
@@ -47,17 +47,18 @@ RatePath::RatePath(const Setup& setup, double added_J_m3)
   }
   X_per_xi_ = kinetics.c_of_feed() > 0 ? -kinetics.nu(kinetics.of(), 0) / kinetics.c_of_feed() : 0;
   T_at_inlet_ = setup.inlet_K;
-  if (setup.is_held || !setup.heat_known()) return;
+  if (!setup.T_moves()) return;
   linear_ = heat_is_constant(chemistry);
   if (!linear_) return;
-  const double capacity = heat_capacity(chemistry, setup.arrives.xi_mol_m3, setup.inlet_K);
-  T_at_inlet_ += added_ / capacity;
-  dT_dxi_ = -kinetics.reaction(0).heat->dH_J_mol / capacity;
+  const double capacity =
+      heat_capacity(chemistry, setup.arrives.xi_mol_m3, setup.inlet_K) + exchange.per_K_J_m3_K;
+  T_at_inlet_ += (exchange.added_J_m3 - exchange.per_K_J_m3_K * (setup.inlet_K - exchange.medium_K)) / capacity;
+  dT_dxi_ = -setup.dH(0, setup.inlet_K) / capacity;
 }
 
 double RatePath::temperature(double xi) const {
   if (linear_) return T_at_inlet_ + dT_dxi_ * (xi - inlet_.xi);
-  return adiabatic_temperature(setup_.chemistry, {&inlet_.xi, 1}, setup_.inlet_K, {&xi, 1}, added_);
+  return mixed_temperature(setup_.chemistry, {&inlet_.xi, 1}, setup_.inlet_K, {&xi, 1}, exchange_);
 }
 
 double RatePath::rate(const Anchor& from, double offset) {

@@ -21,12 +21,12 @@ struct Anchor {
   std::vector<double> c;
 };
 
-/// One reaction, held or adiabatic, at constant pressure: T is a function of the extent, so there is one scalar rate
+/// One reaction, held, adiabatic or in a tank on its jacket, at constant pressure: T is a function of the extent, so there is one scalar rate
 ///   R(xi) = capacity r(C(xi), T(xi)),   mol per m3 of the coordinate volume per s
 class RatePath {
  public:
-  /// added_J_m3: heat taken up from an agitator, per m3 of mixed feed.
-  RatePath(const Setup& setup, double added_J_m3);
+  /// exchange: of a tank with agitator and jacket, at one feed rate.
+  RatePath(const Setup& setup, const Exchange& exchange);
 
   [[nodiscard]] const Anchor& inlet() const { return inlet_; }
   [[nodiscard]] double temperature(double xi) const;
@@ -62,7 +62,7 @@ class RatePath {
   RateEvaluator evaluator_;
   std::vector<double> nu_, C_;
   Anchor inlet_;
-  double added_ = 0;
+  Exchange exchange_;
   double dT_dxi_ = 0, T_at_inlet_ = 0;  // where T is linear in xi
   bool linear_ = true, reversible_ = false, falls_ = false, table_ = false;
   double X_per_xi_ = 0;

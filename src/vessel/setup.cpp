@@ -85,18 +85,35 @@ void add_sizes(Setup& setup) {
   }
 }
 
+void add_jacket(Setup& setup) {
+  const Operation& operation = setup.operation;
+  if (operation.thermal != Thermal::jacketed || !setup.vessel.jacket || operation.medium == nullptr) return;
+  JacketSide& side = setup.jacket;
+  side.UA_W_K = setup.vessel.jacket->U_fouled() * jacket_area(setup.vessel, operation.fill);
+  side.supply_K = operation.medium->supply_K;
+  side.capacity_W_K = capacity_rate(*operation.medium, operation.medium_flow_m3_s);
+  side.passage = setup.vessel.jacket->passage;
+  if (setup.is_tank && !(side.mixed_W_K() > 0)) side.UA_W_K = 0;  // no flow of medium
+}
+
 }  // namespace
+
+double JacketSide::mixed_W_K() const {
+  return UA_W_K > 0 && capacity_W_K > 0 ? 1 / (1 / UA_W_K + 1 / capacity_W_K) : 0;
+}
 
 Outcome<Setup> make_setup(const Vessel& vessel, const Chemistry& chemistry, const Operation& operation,
                           const Start& start, const Stream& arrives) {
   Setup setup{vessel, chemistry, operation, start, arrives};
-  if (operation.thermal == Thermal::jacketed)
-    return cannot_tell("a vessel run on its jacket alone (thermal = jacketed) is not modelled");
   add_sizes(setup);
+  add_jacket(setup);
   setup.heat = heat_knowledge(chemistry);
   if (!(setup.volume_m3 > 0)) return cannot_tell("the vessel holds no fluid at this fill");
   if (!setup.is_held && setup.heat.state == HeatKnowledge::State::unknown)
-    return cannot_tell("adiabatic operation needs heat: " + setup.heat.why);
+    return cannot_tell("a temperature that moves needs heat: " + setup.heat.why);
+  if (setup.is_jacketed() && !setup.heat_known())
+    if (const auto missing = missing_heat_capacity(chemistry); !missing.empty())
+      return cannot_tell("a vessel run on its jacket needs a heat capacity: " + missing);
   if (auto refused = add_capacities(setup)) return *refused;
   if (auto refused = table_does_not_serve(setup)) return *refused;
   return setup;

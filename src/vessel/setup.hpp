@@ -6,6 +6,16 @@
 
 namespace vatwright {
 
+/// What passes between the contents of a jacketed vessel and its medium.
+struct JacketSide {
+  double UA_W_K = 0;  ///< of the whole vessel; 0: nothing passes
+  double supply_K = 0;
+  double capacity_W_K = 0;  ///< of the medium's flow; infinite where it condenses or nothing limits it
+  Passage passage = Passage::uniform;
+  /// Heat per K of a mixed jacket, whose medium is at the temperature at which it leaves: 1/(1/(U A) + 1/(m cp)).
+  [[nodiscard]] double mixed_W_K() const;
+};
+
 /// What one vessel is given to work with, settled once: sizes, shares and the state at its inlet.
 struct Setup {
   Setup(const Vessel& v, const Chemistry& c, const Operation& o, const Start& st, const Stream& in)
@@ -24,8 +34,21 @@ struct Setup {
   std::vector<double> capacity;  ///< per reaction, fluid volume, bed volume or catalyst mass per m3 of `volume_m3`
   double agitator_W = 0;
   HeatKnowledge heat;
+  JacketSide jacket;
 
   [[nodiscard]] bool heat_known() const { return heat.state == HeatKnowledge::State::known; }
+  [[nodiscard]] bool is_jacketed() const { return jacket.UA_W_K > 0; }
+  /// The temperature is a result.
+  [[nodiscard]] bool T_moves() const { return !is_held && (heat_known() || is_jacketed()); }
+  /// What a tank exchanges with agitator and jacket.
+  [[nodiscard]] Exchange exchange(double feed_m3_s) const {
+    return {agitator_W / feed_m3_s, jacket.mixed_W_K() / feed_m3_s, jacket.supply_K};
+  }
+  /// Heat of reaction j, J/mol; 0 where none has one.
+  [[nodiscard]] double dH(std::size_t j, double T_K) const {
+    const auto& heat_of = chemistry.kinetics.reaction(static_cast<int>(j)).heat;
+    return heat_of ? heat_of->at(T_K) : 0;
+  }
 };
 
 /// cannot_tell where the vessel can not serve the rate laws as they are told (`per`), heat is missing where T moves, or

@@ -4,134 +4,12 @@
 #include <cmath>
 #include <numeric>
 
-#include "broken_order.hpp"
+#include "transient.hpp"
 #include "vatwright/numeric/march.hpp"
 #include "vatwright/numeric/matrix.hpp"
 
 namespace vatwright {
 namespace {
-
-std::vector<double> extents_of_product(const Chemistry& chemistry) {
-  const Kinetics& kinetics = chemistry.kinetics;
-  std::vector<double> xi(static_cast<std::size_t>(kinetics.reactions()));
-  for (int j = 0; j < kinetics.reactions(); ++j) {
-    if (!(kinetics.nu(kinetics.of(), j) < 0)) continue;
-    double most = std::numeric_limits<double>::infinity();
-    for (int i = 0; i < kinetics.species(); ++i)
-      if (const double nu = kinetics.nu(i, j); nu < 0)
-        most = std::min(most, chemistry.feed.c_mol_m3[static_cast<std::size_t>(i)] / -nu);
-    xi[static_cast<std::size_t>(j)] = most;
-    break;
-  }
-  return xi;
-}
-
-/// The transient balances of a tank in space times, theta = t v/V, per m3 of its working fluid:
-///   dC_i/dtheta = c_in,i - w C_i + tau sum_j nu_ij m_j r_j
-///   (sum C_i cp_i) dT/dtheta = -sensible(feed, T_in to T) + tau sum_j m_j r_j (-dH_j) + agitator/v
-/// w: what leaves over what is fed, by volume: 1 for a liquid; a gas stays at its pressure, sum C_i = P/(R T).
-class Transient {
- public:
-  Transient(const Setup& setup, double feed_m3_s)
-      : setup_(setup), evaluator_(setup.chemistry.kinetics), broken_(broken_orders(setup.chemistry.kinetics)) {
-    tau_ = setup.volume_m3 / feed_m3_s;
-    agitator_ = setup.agitator_W / feed_m3_s;
-    n_ = static_cast<std::size_t>(setup.chemistry.kinetics.species());
-    c_in_.resize(n_);
-    C_.resize(n_);
-    r_.resize(setup.capacity.size());
-    setup.chemistry.kinetics.amounts(setup.chemistry.feed.c_mol_m3, setup.arrives.xi_mol_m3, c_in_);
-    for (double& c : c_in_) c = std::max(c, 0.0);  // rounding of what is gone
-    total_in_ = std::accumulate(c_in_.begin(), c_in_.end(), 0.0);
-    moves_ = !setup.is_held && setup.heat_known();
-  }
-  [[nodiscard]] std::size_t size() const { return n_ + (moves_ ? 1 : 0); }
-  [[nodiscard]] bool moves() const { return moves_; }
-  [[nodiscard]] double scale() const { return total_in_ > 0 ? total_in_ : 1; }
-
-  void operator()(std::span<const double> y, std::span<double> dy) {
-    const double T = moves_ ? y[n_] : setup_.inlet_K;
-    if (!(T > 1)) {  // a trial step gone astray: no value there
-      std::ranges::fill(dy, std::numeric_limits<double>::quiet_NaN());
-      return;
-    }
-    rates(y, T);
-    double made = 0;
-    for (std::size_t i = 0; i < n_; ++i) {
-      dy[i] = c_in_[i];
-      for (std::size_t j = 0; j < r_.size(); ++j)
-        dy[i] += tau_ * setup_.chemistry.kinetics.nu(static_cast<int>(i), static_cast<int>(j)) * r_[j];
-      made += dy[i];
-    }
-    const double dT = moves_ ? warming(y, T) : 0;
-    double leaves = 1;
-    if (setup_.is_gas) {
-      const double held = setup_.inlet_Pa / (gas_constant * T);  // sum C_i
-      leaves = (made + held / T * dT) / held;
-    }
-    for (std::size_t i = 0; i < n_; ++i) dy[i] -= leaves * y[i];
-    if (moves_) dy[n_] = dT;
-  }
-
-  /// By differences in proportion to each amount, so that what is nearly gone is felt at its own size.
-  void jacobian(std::span<const double> y, std::span<double> J) {
-    const std::size_t m = size();
-    std::vector<double> moved(y.begin(), y.end()), dy(m), dy_moved(m);
-    (*this)(y, dy);
-    for (std::size_t k = 0; k < m; ++k) {
-      const double h = k < n_ ? std::max(1e-7 * std::abs(y[k]), 1e-3 * fade * scale()) : 1e-6 * y[k];
-      moved[k] = y[k] + h;
-      (*this)(moved, dy_moved);
-      for (std::size_t i = 0; i < m; ++i) J[i * m + k] = (dy_moved[i] - dy[i]) / h;
-      moved[k] = y[k];
-    }
-  }
-
- private:
-  void rates(std::span<const double> y, double T) {
-    for (std::size_t i = 0; i < n_; ++i) C_[i] = y[i];
-    const double X = 0;  // tables never come here: they are held and start on the line of their extents
-    evaluator_(C_, T, X, r_);
-    for (std::size_t j = 0; j < r_.size(); ++j) r_[j] *= setup_.capacity[j];
-    // A reactant of an order below 1 that runs out: its rate fades over the last millionth, so that the march can go
-    // on.
-    for (const BrokenOrder& b : broken_) {
-      const double c = std::max(0.0, C_[b.species]), last = fade * scale();
-      const double nu = setup_.chemistry.kinetics.nu(static_cast<int>(b.species), static_cast<int>(b.reaction));
-      if (nu * r_[b.reaction] < 0) r_[b.reaction] *= c / (c + last);
-    }
-  }
-
-  double warming(std::span<const double> y, double T) const {
-    const Chemistry& chemistry = setup_.chemistry;
-    double heat = agitator_ - sensible_heat(chemistry, setup_.arrives.xi_mol_m3, setup_.arrives.temperature_K, T);
-    for (std::size_t j = 0; j < r_.size(); ++j)
-      heat -= tau_ * r_[j] * chemistry.kinetics.reaction(static_cast<int>(j)).heat->at(T);
-    return heat / capacity(y, T);
-  }
-
-  /// Of the contents, J/K per m3; a gas with one heat capacity for the mixture: in proportion to its moles.
-  double capacity(std::span<const double> y, double T) const {
-    const Feed& feed = setup_.chemistry.feed;
-    if (feed.heat_capacity_J_kg_K) {
-      const double of_feed = heat_capacity(setup_.chemistry, setup_.arrives.xi_mol_m3, T);
-      return setup_.is_gas ? of_feed * setup_.inlet_Pa / (gas_constant * T) / total_in_ : of_feed;
-    }
-    double sum = 0;
-    for (std::size_t i = 0; i < n_; ++i)
-      if (const auto& cp = feed.species[i].heat_capacity) sum += std::max(0.0, y[i]) * cp->at(T);
-    return sum;
-  }
-
-  static constexpr double fade = 1e-6;
-  const Setup& setup_;
-  RateEvaluator evaluator_;
-  std::vector<BrokenOrder> broken_;
-  double tau_ = 0, agitator_ = 0, total_in_ = 0;
-  std::size_t n_ = 0;
-  std::vector<double> c_in_, C_, r_;
-  bool moves_ = false;
-};
 
 /// Extents (and for a gas also how many m3 of mixed feed fill 1 m3) by least squares; empty where the reactions are not
 /// independent.
@@ -154,64 +32,180 @@ std::vector<double> extents_of(const Setup& setup, std::span<const double> C) {
   return b;
 }
 
-}  // namespace
+constexpr double rests_within = 1e-4;  // of the scale: nearer than that a start-up has come to a stable state
+constexpr double first_stretch = 30, longest = 1e7;  // space times: near a fold a start-up creeps long
+constexpr double at_rest = 1e-5;                      // largest change of the scale per space time
 
-StartState start_state(const Setup& setup) {
-  const Chemistry& chemistry = setup.chemistry;
-  const Kinetics& kinetics = chemistry.kinetics;
-  StartState start;
-  start.temperature_K =
-      setup.is_held ? setup.inlet_K : setup.start.temperature_K.value_or(chemistry.feed.temperature_K);
-  start.C.resize(static_cast<std::size_t>(kinetics.species()));
-  start.xi_all.assign(static_cast<std::size_t>(kinetics.reactions()), 0.0);
-  if (setup.start.filled_with == Start::Filled::product) start.xi_all = extents_of_product(chemistry);
-  start.xi = start.xi_all[0];
-  kinetics.amounts(chemistry.feed.c_mol_m3, start.xi_all, start.C);
-  for (double& c : start.C) c = std::max(c, 0.0);
-  if (setup.start.filled_with == Start::Filled::solvent) {
-    start.on_extents = false;
-    for (int i = 0; i < kinetics.species(); ++i)
-      for (int j = 0; j < kinetics.reactions(); ++j)
-        if (kinetics.nu(i, j) < 0) start.C[static_cast<std::size_t>(i)] = 0;
-  }
-  chemistry.concentrations_of_amounts(start.C, start.temperature_K, setup.inlet_Pa, start.C);
-  return start;
+double apart(std::span<const double> a, std::span<const double> b, std::span<const double> scale) {
+  double most = 0;
+  for (std::size_t i = 0; i < a.size(); ++i) most = std::max(most, std::abs(a[i] - b[i]) / scale[i]);
+  return most;
 }
 
-Outcome<StartRun> run_start_up(const Setup& setup, const StartState& start, double feed_m3_s, double space_times) {
+/// A start-up on its way, stretch by stretch.
+class StartUp {
+ public:
+  StartUp(const Setup& setup, const StartState& start, double feed_m3_s, std::span<const RestingPlace> places,
+          Places known)
+      : setup_(setup),
+        transient_(setup, feed_m3_s),
+        y_(start.C),
+        scale_(transient_.scale()),
+        places_(places),
+        others_may_be_(known == Places::some) {
+    if (transient_.moves()) y_.push_back(start.temperature_K);
+    end_.peak_K = start.temperature_K;
+    for (const RestingPlace& place : places) {
+      states_.push_back(place.C);
+      if (transient_.moves()) states_.back().push_back(place.temperature_K);
+    }
+    for (std::size_t s = 0; s < states_.size(); ++s) {
+      double nearest = 10 * rests_within;
+      for (std::size_t other = 0; other < states_.size(); ++other)
+        if (other != s) nearest = std::min(nearest, apart(states_[s], states_[other], scale_));
+      within_.push_back(nearest / 10);
+    }
+  }
+
+  Outcome<StartEnd> run() {
+    double done = 0;
+    for (double stretch = first_stretch; done < longest; done += stretch, stretch = done) {
+      if (away_from_states(y_) <= 0) return arrived();
+      if (auto failed = go(stretch)) return *failed;
+      if (path_.ended_by()) return arrived();
+      if (drift() < at_rest && rests()) return end_;
+      if (cycles()) {
+        end_.cycle = true;
+        return end_;
+      }
+    }
+    return unsolved("the start-up has not come to rest after " + std::to_string(static_cast<int>(done)) +
+                    " space times");
+  }
+
+ private:
+  /// Above 0: no stable state is near.
+  double away_from_states(std::span<const double> y) const {
+    double least = 1;
+    for (std::size_t s = 0; s < states_.size(); ++s)
+      if (places_[s].stable) least = std::min(least, apart(y, states_[s], scale_) - within_[s]);
+    return least;
+  }
+
+  std::optional<NoAnswer> go(double space_times) {
+    const auto f = [&](double, std::span<const double> at, std::span<double> dy) { transient_(at, dy); };
+    const auto by_amounts = [&](double, std::span<const double> at, std::span<double> J) { transient_.jacobian(at, J); };
+    const Jacobian jacobian(by_amounts);
+    const auto near = [&](double, std::span<const double> at) { return away_from_states(at); };
+    const Event event(near);
+    const MarchOptions options{.rel_tol = 1e-8, .abs_tol = 1e-11, .scale = scale_, .most_calls = 2'000'000};
+    auto track = march(f, y_, 0, space_times, options, {&event, 1}, &jacobian);
+    if (const auto* no = std::get_if<NoAnswer>(&track))
+      return unsolved("the start-up could not be followed: " + no->why);
+    path_ = std::get<Track>(std::move(track));
+    path_.read(path_.end(), y_);
+    look_for_peak();
+    return std::nullopt;
+  }
+
+  void look_for_peak() {
+    if (!transient_.moves()) return;
+    std::vector<double> there(y_.size());
+    const auto& nodes = path_.nodes();
+    for (std::size_t k = 0; k + 1 < nodes.size(); ++k)
+      for (double part : {0.25, 0.5, 0.75, 1.0}) {
+        path_.read(nodes[k] + part * (nodes[k + 1] - nodes[k]), there);
+        end_.peak_K = std::max(end_.peak_K, there.back());
+      }
+  }
+
+  double drift() {
+    std::vector<double> dy(y_.size());
+    transient_(y_, dy);
+    double most = 0;
+    for (std::size_t i = 0; i < dy.size(); ++i) most = std::max(most, std::abs(dy[i]) / scale_[i]);
+    return most;
+  }
+
+  /// The last quarter of the stretch swings as far as the one before it and as that of the last stretch.
+  bool cycles() {
+    const double before = swing(0.5, 0.75), last = swing(0.75, 1);
+    const bool goes_on = last > 100 * rests_within && std::abs(before - last) <= 0.002 * last &&
+                         std::abs(last - last_swing_) <= 0.01 * last;
+    last_swing_ = last;
+    return goes_on;
+  }
+  /// Where the temperature (a held tank: the last species) turns more than once: how far the contents swing.
+  double swing(double from, double to) const {
+    std::vector<double> low, high, there(y_.size());
+    int turns = 0;
+    double was = 0, went = 0;
+    const auto& nodes = path_.nodes();
+    for (std::size_t k = 0; k + 1 < nodes.size(); ++k) {
+      if (nodes[k] < from * path_.end() || nodes[k] > to * path_.end()) continue;
+      for (double part : {0.0, 0.25, 0.5, 0.75}) {
+        path_.read(nodes[k] + part * (nodes[k + 1] - nodes[k]), there);
+        if (low.empty()) {
+          low = high = there;
+          was = there.back();
+        }
+        for (std::size_t i = 0; i < there.size(); ++i) {
+          low[i] = std::min(low[i], there[i]);
+          high[i] = std::max(high[i], there[i]);
+        }
+        const double goes = there.back() - was;
+        if (goes * went < 0) ++turns;
+        if (goes != 0) went = goes;
+        was = there.back();
+      }
+    }
+    return turns > 1 ? apart(low, high, scale_) : 0;
+  }
+
+  StartEnd arrived() {
+    double nearest = std::numeric_limits<double>::infinity();
+    for (std::size_t s = 0; s < states_.size(); ++s)
+      if (const double d = apart(y_, states_[s], scale_); places_[s].stable && d < nearest) {
+        nearest = d;
+        end_.at = s;
+      }
+    end_.peak_K = std::max(end_.peak_K, places_[*end_.at].temperature_K);
+    return end_;
+  }
+  /// At a state, if not at one told stable (a start right on it); or at rest where other states may be. Where none can
+  /// be, it creeps past what was a state a little way before a fold.
+  bool rests() {
+    const std::size_t n = transient_.species();
+    end_.temperature_K = transient_.temperature(y_);
+    end_.xi = extents_of(setup_, std::span(y_).first(n));
+    double nearest = 10 * rests_within;
+    for (std::size_t s = 0; s < states_.size(); ++s)
+      if (const double d = apart(y_, states_[s], scale_); d < nearest) {
+        nearest = d;
+        end_.at = s;
+      }
+    return end_.at || others_may_be_;
+  }
+
+  const Setup& setup_;
+  Transient transient_;
+  std::vector<double> y_, scale_;
+  std::span<const RestingPlace> places_;
+  std::vector<std::vector<double>> states_;
+  std::vector<double> within_;
+  bool others_may_be_;
+  double last_swing_ = 0;
+  Track path_;
+  StartEnd end_;
+};
+
+}  // namespace
+
+Outcome<StartEnd> follow_start(const Setup& setup, const StartState& start, double feed_m3_s,
+                               std::span<const RestingPlace> places, Places known) {
   if (setup.is_gas && std::accumulate(start.C.begin(), start.C.end(), 0.0) <= 0)
     return cannot_tell("a gas without its reactants leaves nothing to fill the tank with at the start");
-  Transient transient(setup, feed_m3_s);
-  const std::size_t n = start.C.size();
-  std::vector<double> y = start.C, scale(n, transient.scale());
-  if (transient.moves()) {
-    y.push_back(start.temperature_K);
-    scale.push_back(300);
-  }
-  const auto f = [&](double, std::span<const double> at, std::span<double> dy) { transient(at, dy); };
-  const auto by_amounts = [&](double, std::span<const double> at, std::span<double> J) { transient.jacobian(at, J); };
-  const Jacobian jacobian(by_amounts);
-  const MarchOptions options{.rel_tol = 1e-8, .abs_tol = 1e-11, .scale = scale, .most_calls = 400'000};
-  const auto track = march(f, y, 0, space_times, options, {}, &jacobian);
-  if (const auto* no = std::get_if<NoAnswer>(&track)) return unsolved("the start-up could not be followed: " + no->why);
-  const Track& path = std::get<Track>(track);
-  StartRun run;
-  run.peak_K = start.temperature_K;
-  std::vector<double> there(y.size());
-  if (transient.moves())
-    for (std::size_t k = 0; k + 1 < path.nodes().size(); ++k)
-      for (double part : {0.25, 0.5, 0.75, 1.0}) {
-        path.read(path.nodes()[k] + part * (path.nodes()[k + 1] - path.nodes()[k]), there);
-        run.peak_K = std::max(run.peak_K, there[n]);
-      }
-  path.read(path.end(), there);
-  std::vector<double> dy(y.size());
-  transient(there, dy);
-  for (std::size_t i = 0; i < dy.size(); ++i) run.drift = std::max(run.drift, std::abs(dy[i]) / scale[i]);
-  run.temperature_K = transient.moves() ? there[n] : setup.inlet_K;
-  run.C.assign(there.begin(), there.begin() + static_cast<std::ptrdiff_t>(n));
-  run.xi = extents_of(setup, run.C);
-  return run;
+  return StartUp(setup, start, feed_m3_s, places, known).run();
 }
 
 }  // namespace vatwright

@@ -1,25 +1,33 @@
 #pragma once
-#include "setup.hpp"
+#include <optional>
+#include <span>
+
+#include "start_state.hpp"
 
 namespace vatwright {
 
-/// What a tank is filled with before its feed is opened, per m3 of its working fluid.
-struct StartState {
+/// A steady state that a start-up may come to.
+struct RestingPlace {
   std::vector<double> C;  ///< mol per m3 of fluid
   double temperature_K = 0;
-  bool on_extents = true;      ///< the fill is the feed at some extents (not solvent)
-  double xi = 0;               ///< of the one reaction, where there is one
-  std::vector<double> xi_all;  ///< extents of the fill, where on_extents
+  bool stable = false;
 };
-StartState start_state(const Setup& setup);
 
-/// Where the tank is after a time, told in space times, and how hot it got on the way.
-struct StartRun {
-  std::vector<double> xi;  ///< extents that fit the contents best, per m3 of mixed feed
-  std::vector<double> C;
-  double temperature_K = 0, peak_K = 0;
-  double drift = 0;  ///< how fast it still moves: largest relative change per space time
+/// Whether the places named are all there are.
+enum class Places { all, some };
+
+/// How a start-up ends.
+struct StartEnd {
+  std::optional<std::size_t> at;  ///< at this one of the named places; absent: it rests elsewhere (Places::some), or cycles
+  bool cycle = false;
+  std::vector<double> xi;  ///< resting elsewhere: extents that fit the contents best; empty where none are known
+  double temperature_K = 0;
+  double peak_K = 0;  ///< the hottest on the way, the start included
 };
-Outcome<StartRun> run_start_up(const Setup& setup, const StartState& start, double feed_m3_s, double space_times);
+/// The start-up integrated, feed open and medium on, until it is within 1e-4 (of all that is fed, and of 300 K) of a
+/// stable place, or hardly moves, or swings as far in one quarter of the time as in the one before. NoAnswer::unsolved:
+/// none of these within 1e7 space times.
+Outcome<StartEnd> follow_start(const Setup& setup, const StartState& start, double feed_m3_s,
+                               std::span<const RestingPlace> places, Places known);
 
 }  // namespace vatwright

@@ -13,9 +13,9 @@ TankBalance::TankBalance(const Setup& setup, double feed_m3_s)
       broken_(broken_orders(setup.chemistry.kinetics)),
       R_(setup.capacity.size()),
       n_(static_cast<std::size_t>(setup.chemistry.kinetics.species())),
+      exchange_(setup.exchange(feed_m3_s)),
       tau_(setup.volume_m3 / feed_m3_s),
-      added_(setup.agitator_W / feed_m3_s),
-      moves_(!setup.is_held && setup.heat_known()),
+      moves_(setup.T_moves()),
       nu_(n_ * R_),
       c_in_(n_),
       c_(n_),
@@ -36,16 +36,12 @@ TankBalance::TankBalance(const Setup& setup, double feed_m3_s)
   for (double& c : c_in_) c = c < 1e-15 * c_scale_ ? 0 : c;  // rounding of what is gone
 }
 
-double TankBalance::dH(std::size_t j, double T) const {
-  return setup_.chemistry.kinetics.reaction(static_cast<int>(j)).heat->at(T);
-}
-
 std::vector<double> TankBalance::contents(std::span<const double> xi) const {
   std::vector<double> y(n_);
   setup_.chemistry.kinetics.amounts(setup_.chemistry.feed.c_mol_m3, xi, y);
   for (double& c : y) c = std::max(c, 0.0);
   if (moves_)
-    y.push_back(adiabatic_temperature(setup_.chemistry, setup_.arrives.xi_mol_m3, setup_.inlet_K, xi, added_));
+    y.push_back(mixed_temperature(setup_.chemistry, setup_.arrives.xi_mol_m3, setup_.inlet_K, xi, exchange_));
   return y;
 }
 
@@ -80,8 +76,9 @@ bool TankBalance::operator()(std::span<const double> y, std::span<double> F) {
     for (std::size_t j = 0; j < R_; ++j) F[i] -= tau_ * nu(i, j) * r_[j];
   }
   if (moves_) {
-    double heat = sensible_heat(setup_.chemistry, setup_.arrives.xi_mol_m3, setup_.inlet_K, T) - added_;
-    for (std::size_t j = 0; j < R_; ++j) heat += tau_ * r_[j] * dH(j, T);
+    double heat = sensible_heat(setup_.chemistry, setup_.arrives.xi_mol_m3, setup_.inlet_K, T) -
+                  exchange_.added_J_m3 + exchange_.per_K_J_m3_K * (T - exchange_.medium_K);
+    for (std::size_t j = 0; j < R_; ++j) heat += tau_ * r_[j] * setup_.dH(j, T);
     F[n_] = heat / heat_capacity(setup_.chemistry, setup_.arrives.xi_mol_m3, T);
   }
   return std::ranges::all_of(F, [](double f) { return std::isfinite(f); });
@@ -123,13 +120,22 @@ bool TankBalance::jacobian(std::span<const double> y, std::span<double> J) {
   const double capacity = heat_capacity(setup_.chemistry, setup_.arrives.xi_mol_m3, T), h = 1e-5 * T;
   for (std::size_t k = 0; k < n_; ++k) {
     double heat = 0;
-    for (std::size_t j = 0; j < R_; ++j) heat += tau_ * dr_dc_[k * R_ + j] * dH(j, T);
+    for (std::size_t j = 0; j < R_; ++j) heat += tau_ * dr_dc_[k * R_ + j] * setup_.dH(j, T);
     J[n_ * m + k] = heat / capacity;
   }
-  double heat = capacity;
-  for (std::size_t j = 0; j < R_; ++j) heat += tau_ * (dr_dT_[j] * dH(j, T) + r_[j] * (dH(j, T + h) - dH(j, T)) / h);
+  double heat = capacity + exchange_.per_K_J_m3_K;
+  for (std::size_t j = 0; j < R_; ++j) heat += tau_ * (dr_dT_[j] * setup_.dH(j, T) + r_[j] * (setup_.dH(j, T + h) - setup_.dH(j, T)) / h);
   J[n_ * m + n_] = heat / capacity;
   return true;
+}
+
+double TankBalance::warms_slower(std::span<const double> y) const {
+  if (!moves_ || setup_.chemistry.feed.heat_capacity_J_kg_K) return 1;
+  const double T = temperature(y);
+  double contents = 0;
+  for (std::size_t i = 0; i < n_; ++i)
+    if (const auto& cp = setup_.chemistry.feed.species[i].heat_capacity) contents += y[i] * cp->at(T);
+  return contents > 0 ? heat_capacity(setup_.chemistry, setup_.arrives.xi_mol_m3, T) / contents : 1;
 }
 
 double TankBalance::allowed(std::span<const double> step) const {
@@ -154,8 +160,8 @@ double TankBalance::imbalance(std::span<const double> y) {
   }
   if (moves_) {
     const double capacity = heat_capacity(setup_.chemistry, setup_.arrives.xi_mol_m3, T);
-    double terms = T;
-    for (std::size_t j = 0; j < R_; ++j) terms += tau_ * both_ways[j] * std::abs(dH(j, T)) / capacity;
+    double terms = T + std::abs(exchange_.per_K_J_m3_K * (T - exchange_.medium_K)) / capacity;
+    for (std::size_t j = 0; j < R_; ++j) terms += tau_ * both_ways[j] * std::abs(setup_.dH(j, T)) / capacity;
     worst = std::max(worst, std::abs(F[n_]) / terms);
   }
   return worst;

@@ -102,10 +102,24 @@ std::optional<std::vector<double>> settle(TankBalance& balance, std::vector<doub
 }
 
 bool is_stable(TankBalance& balance, std::span<const double> y) {
-  std::vector<double> J(balance.size() * balance.size());
+  const std::size_t m = balance.size();
+  std::vector<double> J(m * m);
   if (!balance.jacobian(y, J)) return false;
-  const auto all = eigenvalues(J, static_cast<int>(balance.size()));
+  const double warms = balance.warms_slower(y);
+  for (std::size_t k = 0; k < m && m > balance.species(); ++k) J[(m - 1) * m + k] *= warms;
+  const auto all = eigenvalues(J, static_cast<int>(m));
   return !all.empty() && std::ranges::all_of(all, [](const auto& l) { return l.real() > 0; });
+}
+
+bool is_stable(Transient& transient, std::span<const double> y) {
+  const std::size_t m = transient.size();
+  std::vector<double> J(m * m);
+  transient.jacobian(y, J);
+  auto all = eigenvalues(J, static_cast<int>(m));
+  if (all.empty()) return false;
+  // a gas keeps sum C = P/(R T): the direction across that is neither left nor sought, its eigenvalue is rounding
+  all.erase(std::ranges::min_element(all, {}, [](const auto& l) { return std::abs(l); }));
+  return std::ranges::all_of(all, [](const auto& l) { return l.real() < 0; });
 }
 
 }  // namespace vatwright

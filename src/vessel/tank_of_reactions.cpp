@@ -96,73 +96,66 @@ class TankOfReactions final : public Solver {
     return found;
   }
 
-  /// The state that a start-up has come to; -1: none of them.
-  int nearest(const TankBalance& balance, const std::vector<Contents>& found, const StartRun& run) const {
-    int best = -1;
-    double least = 1e-3;
-    std::vector<double> C(run.C.size());
-    for (std::size_t s = 0; s < found.size(); ++s) {
-      const double T = balance.temperature(found[s]);
-      setup_.chemistry.concentrations_of_amounts(std::span(found[s]).first(C.size()), T, setup_.inlet_Pa, C);
-      double apart = std::abs(T - run.temperature_K) / T;
-      const double total = std::ranges::max(C);
-      for (std::size_t i = 0; i < C.size(); ++i) apart = std::max(apart, std::abs(C[i] - run.C[i]) / total);
-      if (apart < least) {
-        least = apart;
-        best = static_cast<int>(s);
-      }
+  /// Concentrations and stability of the states, for the start-up to come to.
+  std::vector<RestingPlace> places_of(TankBalance& balance, const std::vector<Contents>& found, double feed_m3_s) const {
+    std::vector<RestingPlace> places;
+    for (const Contents& y : found) {
+      RestingPlace place{std::vector<double>(balance.species()), balance.temperature(y), false};
+      setup_.chemistry.concentrations_of_amounts(std::span(y).first(balance.species()), place.temperature_K,
+                                                 setup_.inlet_Pa, place.C);
+      place.stable = stable(balance, y, place, feed_m3_s);
+      places.push_back(std::move(place));
     }
-    return best;
+    return places;
+  }
+  bool stable(TankBalance& balance, const Contents& y, const RestingPlace& place, double feed_m3_s) const {
+    if (!(setup_.is_gas && setup_.T_moves())) return is_stable(balance, y);
+    Transient transient(setup_, feed_m3_s);
+    std::vector<double> at = place.C;
+    at.push_back(place.temperature_K);
+    return is_stable(transient, at);
   }
 
-  /// Follows the start-up until it rests at a state (which may be one not found before).
-  Outcome<StartRun> come_to_rest(TankBalance& balance, std::vector<Contents>& found, double feed_m3_s, int& reached) {
-    StartState from = start_;
-    double peak = from.temperature_K;
-    for (double stretch : {30.0, 70.0, 200.0}) {
-      auto run = run_start_up(setup_, from, feed_m3_s, stretch);
-      if (std::holds_alternative<NoAnswer>(run)) return run;
-      StartRun& end = std::get<StartRun>(run);
-      peak = end.peak_K = std::max(peak, end.peak_K);
-      if (end.drift < 1e-5) {
-        if (!end.xi.empty()) add(balance, found, settle(balance, balance.contents(end.xi)));
-        reached = nearest(balance, found, end);
-        if (reached >= 0) return run;
-      }
-      from.C = end.C;
-      from.temperature_K = end.temperature_K;
-    }
-    StartRun never;
-    never.peak_K = peak;
-    return never;
+  /// Follows the start-up until it rests at a state (which may be one not found before: it is added).
+  Outcome<StartEnd> come_to_rest(TankBalance& balance, std::vector<Contents>& found, std::vector<RestingPlace>& places,
+                                 double feed_m3_s) {
+    auto end = follow_start(setup_, start_, feed_m3_s, places, Places::some);
+    const auto* rests = answer(end);
+    if (rests == nullptr || rests->at || rests->cycle || rests->xi.empty()) return end;
+    const std::size_t known = found.size();
+    add(balance, found, settle(balance, balance.contents(rests->xi)));
+    if (found.size() > known) places = places_of(balance, found, feed_m3_s);
+    return follow_start(setup_, start_, feed_m3_s, places, Places::all);
   }
 
   Outcome<VesselOutcome> judge(TankBalance& balance, std::vector<Contents>& found, double feed_m3_s, Detail detail) {
     VesselOutcome outcome;
     outcome.states_complete = false;
     outcome.start_peak_K = setup_.inlet_K;
-    int reached = -1;
-    const bool alone = found.size() == 1 && is_stable(balance, found[0]);
-    if (alone && (setup_.is_held || detail == Detail::map)) {
+    auto places = places_of(balance, found, feed_m3_s);
+    std::optional<std::size_t> reached;
+    if (found.size() == 1 && places[0].stable && (setup_.is_held || detail == Detail::map)) {
       reached = 0;
       if (!setup_.is_held) outcome.start_peak_K.reset();
     } else {
-      const auto run = come_to_rest(balance, found, feed_m3_s, reached);
-      if (const auto* no = std::get_if<NoAnswer>(&run)) return *no;
-      outcome.start_peak_K = std::get<StartRun>(run).peak_K;
+      const auto end = come_to_rest(balance, found, places, feed_m3_s);
+      if (const auto* no = std::get_if<NoAnswer>(&end)) return *no;
+      const auto& rest = std::get<StartEnd>(end);
+      if (found.empty()) return unsolved("no steady state found from any of the starts");
+      if (!rest.at && !rest.cycle) return unsolved("the start-up rests where no steady state was found");
+      reached = rest.at;
+      outcome.start_peak_K = rest.peak_K;
     }
-    if (found.empty()) return unsolved("no steady state found from any of the starts");
     for (std::size_t s = 0; s < found.size(); ++s) {
       Extents xi = balance.extents(found[s]);
       const double X = setup_.chemistry.kinetics.conversion(xi);
-      outcome.states.push_back({std::move(xi), X, balance.temperature(found[s]), is_stable(balance, found[s]),
-                                static_cast<int>(s) == reached});
+      outcome.states.push_back({std::move(xi), X, balance.temperature(found[s]), places[s].stable, s == reached});
     }
-    if (reached < 0) {
+    if (!reached) {
       outcome.cycle = true;
       outcome.isothermal = setup_.is_held;
     } else {
-      outcome.residual = balance.imbalance(found[static_cast<std::size_t>(reached)]);
+      outcome.residual = balance.imbalance(found[*reached]);
       tell_of_tank(setup_, feed_m3_s, outcome, detail);
       if (outcome.start_peak_K) outcome.start_peak_K = std::max(*outcome.start_peak_K, outcome.hottest_K);
     }

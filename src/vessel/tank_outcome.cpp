@@ -16,6 +16,10 @@ void tell_of_tank(const Setup& setup, double feed_m3_s, VesselOutcome& outcome, 
   outcome.let_down_above_Pa = setup.let_down_above_Pa;
   if (detail == Detail::map) return;
   outcome.inside = {outcome.outlet};
+  if (setup.is_jacketed()) {
+    const JacketSide& jacket = setup.jacket;
+    outcome.heat = HeatNeed{jacket.mixed_W_K() * (reached->temperature_K - jacket.supply_K), 0, 0, 0};
+  }
   if (!setup.is_held || !setup.heat_known()) return;
   const double warming = sensible_heat(setup.chemistry, xi_in, setup.arrives.temperature_K, setup.inlet_K);
   const double released = released_heat(setup.chemistry, xi_in, reached->xi_mol_m3, setup.inlet_K);

@@ -25,6 +25,7 @@ class Way {
     return d <= s ? path_->inlet().xi + sign_ * d : end_.end.xi - sign_ * s;
   }
   [[nodiscard]] double xi_end() const { return end_.end.xi; }
+  [[nodiscard]] const Anchor& end() const { return end_.end; }
   /// Distance of an extent from the inlet along the way; negative: behind it.
   [[nodiscard]] double distance(double xi) const { return sign_ * (xi - path_->inlet().xi); }
   RatePath& path() { return *path_; }

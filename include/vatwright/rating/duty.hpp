@@ -87,5 +87,8 @@ struct Problems {
 
 /// How `vessel` is run in this duty (fill resolved: asked, else the most working fill).
 Operation operation_of(const Duty& duty, const Vessel& vessel);
+/// The same with its medium, where it runs on its jacket alone: the one asked for, else the first listed, with its
+/// `flow`, else all of its `total`. The problem outlives it.
+Operation operation_of(const Problem& problem, const Vessel& vessel);
 
 }  // namespace vatwright

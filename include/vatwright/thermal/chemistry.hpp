@@ -35,6 +35,8 @@ struct HeatKnowledge {
   std::string why;
 };
 HeatKnowledge heat_knowledge(const Chemistry& chemistry);
+/// What is missing to reckon the heat that the product takes up when it is warmed, in words; empty: nothing.
+std::string missing_heat_capacity(const Chemistry& chemistry);
 
 /// Whether heat capacity and heats of reaction are the same at any temperature and composition; T is then linear in the
 /// extents. Precondition: known.
@@ -47,10 +49,18 @@ double heat_capacity(const Chemistry& chemistry, std::span<const double> xi, dou
 double sensible_heat(const Chemistry& chemistry, std::span<const double> xi, double from_K, double to_K);
 /// Heat that the reactions release on the way from xi_in to xi at temperature T, J per m3 of mixed feed (+ = released).
 double released_heat(const Chemistry& chemistry, std::span<const double> xi_in, std::span<const double> xi, double T_K);
-/// The temperature at xi of what entered at (xi_in, T_in) and took up `added` (J per m3 of mixed feed, agitator) and
-/// gave off nothing: sensible_heat(xi_in, T_in, T) = released_heat(xi_in, xi, T) + added. Explicit where cp and dH are
-/// constant, else by Newton's method on the enthalpy. NaN where no temperature above 0 K does.
+/// What well mixed contents exchange with their surroundings, per m3 of mixed feed: they take up `added_J_m3` (agitator)
+/// and give `per_K_J_m3_K` (T - medium_K) to a medium.
+struct Exchange {
+  double added_J_m3 = 0, per_K_J_m3_K = 0, medium_K = 0;
+};
+/// The temperature at xi of well mixed contents that entered at (xi_in, T_in):
+///   sensible_heat(xi_in, T_in, T) + per_K (T - medium) = released_heat(xi_in, xi, T) + added
+/// By Newton's method on the enthalpy (one step where cp and dH are constant). NaN where no temperature above 0 K does.
+double mixed_temperature(const Chemistry& chemistry, std::span<const double> xi_in, double T_in_K,
+                         std::span<const double> xi, const Exchange& exchange);
+/// The same without any exchange: adiabatic.
 double adiabatic_temperature(const Chemistry& chemistry, std::span<const double> xi_in, double T_in_K,
-                             std::span<const double> xi, double added_J_m3 = 0);
+                             std::span<const double> xi);
 
 }  // namespace vatwright

@@ -20,6 +20,8 @@ struct Operation {
   double fill = 1;                     ///< of a tank with liquid, fraction of the brimful volume
   double catalyst_kg_m3 = 0;           ///< loading of a stirred tank, per m3 of working fluid
   std::optional<std::string> utility;  ///< asked for by name
+  const Utility* medium = nullptr;     ///< jacketed: what flows in the jacket; null: nothing does
+  std::optional<double> medium_flow_m3_s;  ///< jacketed: how much of it; absent: nothing limits it
 };
 
 /// How a tank is brought on line; decides among steady states.
@@ -44,9 +46,9 @@ struct Profile {
   std::vector<std::optional<double>> medium_K;
 };
 
-/// Heat that a vessel needs to stay as it is run (held), + = must be removed.
+/// Heat that a held vessel needs to stay as it is run, or that a jacketed one gives off, + = removed.
 struct HeatNeed {
-  double cooling_W = 0;        ///< of the whole vessel, agitator counted (tank: warming of the feed too)
+  double cooling_W = 0;        ///< of the whole vessel, agitator counted (held tank: warming of the feed too)
   double preheat_W = 0;        ///< held tubes: to bring what arrives to the hold temperature, + = heating; tanks 0
   double most_flux_W_m2 = 0;   ///< tubes: greatest cooling flux along it (>= 0)
   double least_flux_W_m2 = 0;  ///< tubes: greatest heating flux along it as a negative number (<= 0)
@@ -68,10 +70,10 @@ struct VesselOutcome {
   std::optional<double>
       let_down_above_Pa;  ///< a let-down was asked to more than what arrives: that much (ruled: does not pass)
   std::optional<double> start_peak_K;  ///< tanks: the hottest while it comes on line
-  std::vector<SteadyState> states;     ///< tanks, rising conversion
+  std::vector<SteadyState> states;     ///< tanks, rising conversion; tubes: where counter-current has several
   bool states_complete = true;         ///< tanks: certain in the range searched
   bool cycle = false;                  ///< tanks: the start ends in a cycle; there is no outlet to speak of
-  std::optional<HeatNeed> heat;        ///< absent where heat is not asked or not known
+  std::optional<HeatNeed> heat;        ///< absent where heat is not asked or not known, and in adiabatic vessels
   std::vector<Stream> inside;          ///< states to check limits at: tank: its contents; tube: places along it, rising
   std::optional<Profile> profile;      ///< tubes, where Detail::profile was asked
   double residual = 0;                 ///< ruling 37, reckoned apart from the solver
