@@ -1,8 +1,8 @@
 #include <algorithm>
 #include <cmath>
 
-#include "adiabatic_rise.hpp"
 #include "vatwright/rating/rating.hpp"
+#include "vatwright/thermal/adiabatic.hpp"
 
 namespace vatwright {
 
@@ -30,11 +30,13 @@ bool releases_heat(const Problem& problem) {
 }
 
 std::optional<Caution> adiabatic_caution(const Problem& problem) {
-  const auto rise = adiabatic_rise(problem.duty.chemistry);
-  if (!rise || *rise <= rise_to_mind_K) return std::nullopt;
-  std::string text =
-      "Without cooling, complete reaction of the feed would warm it by " + show(*rise, Shown::difference);
-  text += *rise > rise_to_fear_K
+  const Chemistry& chemistry = problem.duty.chemistry;
+  const std::vector<double> none(static_cast<std::size_t>(chemistry.kinetics.reactions()), 0.0);
+  const double T_K = chemistry.feed.temperature_K;
+  const double rise = adiabatic_range(chemistry, none, T_K).warmest_K - T_K;
+  if (rise <= rise_to_mind_K) return std::nullopt;
+  std::string text = "Without cooling, complete reaction of the feed would warm it by " + show(rise, Shown::difference);
+  text += rise > rise_to_fear_K
               ? ", more than 200 K: loss of cooling can bring boiling, decomposition and a rise of pressure; have the "
                 "consequences worked out before any trial."
               : ", more than 50 K: what loss of cooling, stirring or dosing would do needs to be looked at.";

@@ -34,7 +34,8 @@ class OneReactionTube final : public Solver {
       const double xi = extent(there);
       return Stream{feed_m3_s, {xi}, path_.temperature(xi), setup_.inlet_Pa - loss * length * z};
     };
-    VesselOutcome outcome = tell({setup_, feed_m3_s, stream_at, end_place(t), tell_rate_}, detail);
+    const auto no_medium = [](double) { return 0.0; };
+    VesselOutcome outcome = tell({setup_, feed_m3_s, stream_at, no_medium, end_place(t), tell_rate_}, detail);
     if (detail != Detail::map) outcome.residual = residual(out, t);
     return outcome;
   }

@@ -3,7 +3,7 @@
 #include <sstream>
 
 #include "solver.hpp"
-#include "tube_outcome.hpp"
+#include "tube_balance.hpp"
 
 namespace vatwright {
 namespace {
@@ -11,16 +11,11 @@ namespace {
 /// Bounds on the relative imbalance of what is given out as an answer.
 constexpr double most_residual_isothermal = 1e-9, most_residual = 1e-6;
 
-/// The rate feels the pressure drop: a gas in a tube where it can be reckoned.
-bool pressure_acts(const Setup& setup) {
-  return !setup.is_tank && setup.is_gas &&
-         loss_per_length(setup, 1, setup.arrives.xi_mol_m3, setup.inlet_K, setup.inlet_Pa).has_value();
-}
-
 std::unique_ptr<Solver> choose_solver(const Setup& setup) {
   const bool one = setup.chemistry.kinetics.reactions() == 1;
   if (setup.is_tank) return one ? make_one_reaction_tank(setup) : make_tank_of_reactions(setup);
-  return one && !pressure_acts(setup) ? make_one_reaction_tube(setup) : make_marched_tube(setup);
+  const bool on_one_way = one && !setup.is_jacketed() && !TubeBalance::pressure_acts(setup);
+  return on_one_way ? make_one_reaction_tube(setup) : make_marched_tube(setup);
 }
 
 NoAnswer imbalance(double residual, double bound) {

@@ -22,13 +22,24 @@ double scale_of(const Chemistry& chemistry) {
 
 }  // namespace
 
-TubeBalance::TubeBalance(const Setup& setup, bool with_pressure, double feed_m3_s)
+bool TubeBalance::pressure_acts(const Setup& setup) {
+  return !setup.is_tank && setup.is_gas &&
+         loss_per_length(setup, 1, setup.arrives.xi_mol_m3, setup.inlet_K, setup.inlet_Pa).has_value();
+}
+
+bool TubeBalance::serves_all_rates(const Setup& setup) {
+  const bool medium_moves =
+      setup.is_jacketed() && setup.jacket.passage != Passage::uniform && std::isfinite(setup.jacket.capacity_W_K);
+  return !pressure_acts(setup) && !medium_moves;
+}
+
+TubeBalance::TubeBalance(const Setup& setup, Coordinate coordinate, double feed_m3_s)
     : setup_(setup),
       evaluator_(setup.chemistry.kinetics),
       broken_(broken_orders(setup.chemistry.kinetics)),
       R_(setup.capacity.size()),
-      with_pressure_(with_pressure),
-      factor_(with_pressure ? setup.volume_m3 / feed_m3_s : 1),
+      coordinate_(coordinate),
+      factor_(coordinate == Coordinate::length ? setup.volume_m3 / feed_m3_s : 1),
       feed_m3_s_(feed_m3_s),
       length_m_(length_of(setup.vessel.kind)),
       c_scale_(scale_of(setup.chemistry)),
@@ -42,6 +53,18 @@ TubeBalance::TubeBalance(const Setup& setup, bool with_pressure, double feed_m3_
     if (std::ranges::find(can_run_out_, b.species) == can_run_out_.end()) can_run_out_.push_back(b.species);
     if (C_[b.species] <= gone_) exhausted_[b.species] = true;
   }
+  size_ = R_;
+  if (setup.is_jacketed()) {
+    const JacketSide& jacket = setup.jacket;
+    temperature_ = size_++;
+    u_ = jacket.UA_W_K / setup.volume_m3;
+    if (coordinate == Coordinate::length && jacket.passage != Passage::uniform && std::isfinite(jacket.capacity_W_K)) {
+      medium_ = size_++;
+      medium_u_ = u_ * feed_m3_s / jacket.capacity_W_K * (jacket.passage == Passage::co_current ? 1 : -1);
+    }
+  }
+  if (coordinate == Coordinate::length && pressure_acts(setup)) pressure_ = size_++;
+  if (temperature_) return;
   if (setup.is_held || !setup.heat_known()) return;
   linear_ = heat_is_constant(setup.chemistry);
   if (!linear_) return;
@@ -50,19 +73,24 @@ TubeBalance::TubeBalance(const Setup& setup, bool with_pressure, double feed_m3_
     dT_[j] = -setup.chemistry.kinetics.reaction(static_cast<int>(j)).heat->dH_J_mol / capacity;
 }
 
-std::vector<double> TubeBalance::at_inlet() const {
+std::vector<double> TubeBalance::at_inlet(double medium_K) const {
   std::vector<double> y = setup_.arrives.xi_mol_m3;
-  if (with_pressure_) y.push_back(1);
+  y.resize(size_);
+  if (temperature_) y[*temperature_] = setup_.inlet_K;
+  if (medium_) y[*medium_] = medium_K;
+  if (pressure_) y[*pressure_] = 1;
   return y;
 }
 
 std::vector<double> TubeBalance::scale() const {
-  std::vector<double> all(R_, c_scale_);
-  if (with_pressure_) all.push_back(1);
+  std::vector<double> all(size_, 100.0);  // K
+  std::fill_n(all.begin(), R_, c_scale_);
+  if (pressure_) all[*pressure_] = 1;
   return all;
 }
 
 double TubeBalance::temperature(std::span<const double> y) const {
+  if (temperature_) return y[*temperature_];
   if (!linear_) return adiabatic_temperature(setup_.chemistry, setup_.arrives.xi_mol_m3, setup_.inlet_K, y.first(R_));
   double T = setup_.inlet_K;
   for (std::size_t j = 0; j < R_; ++j) T += dT_[j] * (y[j] - setup_.arrives.xi_mol_m3[j]);
@@ -70,7 +98,7 @@ double TubeBalance::temperature(std::span<const double> y) const {
 }
 
 double TubeBalance::pressure(std::span<const double> y) const {
-  return with_pressure_ ? setup_.inlet_Pa * std::sqrt(std::max(y[R_], 0.01 * no_pressure)) : setup_.inlet_Pa;
+  return pressure_ ? setup_.inlet_Pa * std::sqrt(std::max(y[*pressure_], 0.01 * no_pressure)) : setup_.inlet_Pa;
 }
 
 double TubeBalance::left(std::size_t species, std::span<const double> y) const {
@@ -156,10 +184,19 @@ void TubeBalance::operator()(std::span<const double> y, std::span<double> dy) {
   rates_just_above(y, T);
   share_out();
   for (std::size_t j = 0; j < R_; ++j) dy[j] = factor_ * r_[j];
-  if (!with_pressure_) return;
+  if (temperature_) dy[*temperature_] = factor_ * warming(y, T);
+  if (medium_) dy[*medium_] = factor_ * medium_u_ * (T - y[*medium_]);
+  if (!pressure_) return;
   const double P = pressure(y);
   const double loss = loss_per_length(setup_, feed_m3_s_, y.first(R_), T, P).value_or(0);
-  dy[R_] = -2 * P / (setup_.inlet_Pa * setup_.inlet_Pa) * length_m_ * loss;
+  dy[*pressure_] = -2 * P / (setup_.inlet_Pa * setup_.inlet_Pa) * length_m_ * loss;
+}
+
+/// dT per space time, K/s, at the rates in r_.
+double TubeBalance::warming(std::span<const double> y, double T) const {
+  double heat = -u_ * (T - medium(y));
+  for (std::size_t j = 0; j < R_; ++j) heat -= r_[j] * setup_.dH(j, T);
+  return heat / heat_capacity(setup_.chemistry, y.first(R_), T);
 }
 
 /// By differences in the amount of each species, in proportion to it, so that what is nearly gone is felt at its own
@@ -177,28 +214,42 @@ void TubeBalance::jacobian(std::span<const double> y, std::span<double> J) {
     share_out();
   };
   std::ranges::fill(J, 0.0);
+  // rates at (T, P) against what is moved: d(rates)/d(that), and what follows for T at those rates
+  const double warms = temperature_ ? (rates(T, P), warming(y, T)) : 0;
   rates(T, P);
   r = r_;
+  const auto add_column = [&](std::size_t k, double h, double weight) {
+    for (std::size_t j = 0; j < R_; ++j) J[j * m + k] += factor_ * (r_[j] - r[j]) / h * weight;
+    if (temperature_) J[*temperature_ * m + k] += factor_ * (warming(y, T) - warms) / h * weight;
+  };
   for (std::size_t i = 0; i < n; ++i) {
     const double kept = c[i], h = std::max(1e-7 * std::abs(kept), 1e-6 * gone_);
     c[i] = kept + h;
     rates(T, P);
-    for (std::size_t j = 0; j < R_; ++j)
-      for (std::size_t k = 0; k < R_; ++k)
-        J[j * m + k] += factor_ * (r_[j] - r[j]) / h * kinetics.nu(static_cast<int>(i), static_cast<int>(k));
+    for (std::size_t k = 0; k < R_; ++k)
+      if (const double nu = kinetics.nu(static_cast<int>(i), static_cast<int>(k)); nu != 0) add_column(k, h, nu);
     c[i] = kept;
   }
-  if (!setup_.is_held && setup_.heat_known()) {
-    const double h = 1e-6 * T, capacity = heat_capacity(setup_.chemistry, y.first(R_), T);
+  if (setup_.T_moves()) {
+    const double h = 1e-6 * T;
     rates(T + h, P);
-    for (std::size_t j = 0; j < R_; ++j)
-      for (std::size_t k = 0; k < R_; ++k)
-        J[j * m + k] -= factor_ * (r_[j] - r[j]) / h * kinetics.reaction(static_cast<int>(k)).heat->at(T) / capacity;
+    if (temperature_) {
+      for (std::size_t j = 0; j < R_; ++j) J[j * m + *temperature_] = factor_ * (r_[j] - r[j]) / h;
+      J[*temperature_ * m + *temperature_] = factor_ * (warming(y, T + h) - warms) / h;
+    } else {
+      const double capacity = heat_capacity(setup_.chemistry, y.first(R_), T);
+      for (std::size_t k = 0; k < R_; ++k) add_column(k, h, -setup_.dH(k, T) / capacity);
+    }
   }
-  if (!with_pressure_) return;
-  const double w = std::max(y[R_], 0.01 * no_pressure);  // P = P_in sqrt(w)
+  if (medium_) {
+    J[*temperature_ * m + *medium_] = factor_ * u_ / heat_capacity(setup_.chemistry, y.first(R_), T);
+    J[*medium_ * m + *temperature_] = factor_ * medium_u_;
+    J[*medium_ * m + *medium_] = -factor_ * medium_u_;
+  }
+  if (!pressure_) return;
+  const double w = std::max(y[*pressure_], 0.01 * no_pressure);  // P = P_in sqrt(w)
   rates(T, P * std::sqrt(1 + 1e-6));
-  for (std::size_t j = 0; j < R_; ++j) J[j * m + R_] = factor_ * (r_[j] - r[j]) / (1e-6 * w);
+  add_column(*pressure_, 1e-6 * w, 1);
 }
 
 }  // namespace vatwright

@@ -43,8 +43,7 @@ double flux_at(const SolvedTube& tube, const Stream& there) {
   chemistry.concentrations(there.xi_mol_m3, there.temperature_K, there.pressure_Pa, C);
   tube.evaluator(C, there.temperature_K, chemistry.kinetics.conversion(there.xi_mol_m3), r);
   double heat = 0;
-  for (std::size_t j = 0; j < r.size(); ++j)
-    heat -= setup.capacity[j] * r[j] * chemistry.kinetics.reaction(static_cast<int>(j)).heat->at(there.temperature_K);
+  for (std::size_t j = 0; j < r.size(); ++j) heat -= setup.capacity[j] * r[j] * setup.dH(j, there.temperature_K);
   return heat * std::visit(BoreOf{}, setup.vessel.kind) / 4;  // volume over surface
 }
 
@@ -78,6 +77,30 @@ HeatNeed heat_of(const SolvedTube& tube, const Stream& outlet, const std::vector
   return heat;
 }
 
+/// What a jacket that nothing holds takes: the integral of u (T - Tm) along the tube, by what the fluid gives off.
+HeatNeed given_off(const SolvedTube& tube, const Stream& outlet) {
+  const Setup& setup = tube.setup;
+  const auto& xi_in = setup.arrives.xi_mol_m3;
+  const double T = outlet.temperature_K;
+  HeatNeed heat;
+  heat.cooling_W = tube.feed_m3_s * (released_heat(setup.chemistry, xi_in, outlet.xi_mol_m3, T) -
+                                     sensible_heat(setup.chemistry, xi_in, setup.inlet_K, T));
+  return heat;
+}
+
+/// Hottest and coldest between the places, where the temperature turns.
+void refine_extremes(const SolvedTube& tube, const std::vector<double>& places, const std::vector<double>& T,
+                     VesselOutcome& outcome) {
+  const auto temperature = [&](double z) { return tube.at(z).temperature_K; };
+  const auto minus = [&](double z) { return -tube.at(z).temperature_K; };
+  for (std::size_t i = 1; i + 1 < places.size(); ++i) {
+    if (T[i] >= T[i - 1] && T[i] >= T[i + 1] && T[i] > std::min(T[i - 1], T[i + 1]))
+      outcome.hottest_K = std::max(outcome.hottest_K, find_peak(temperature, places[i - 1], places[i + 1], 1e-6).value);
+    if (T[i] <= T[i - 1] && T[i] <= T[i + 1] && T[i] < std::max(T[i - 1], T[i + 1]))
+      outcome.coldest_K = std::min(outcome.coldest_K, -find_peak(minus, places[i - 1], places[i + 1], 1e-6).value);
+  }
+}
+
 Profile profile_of(const SolvedTube& tube) {
   Profile profile;
   const double length = length_of(tube.setup.vessel.kind);
@@ -88,7 +111,7 @@ Profile profile_of(const SolvedTube& tube) {
     profile.conversion.push_back(tube.setup.chemistry.kinetics.conversion(there.xi_mol_m3));
     profile.temperature_K.push_back(there.temperature_K);
     profile.pressure_Pa.push_back(there.pressure_Pa);
-    profile.medium_K.emplace_back();
+    profile.medium_K.push_back(tube.setup.is_jacketed() ? std::optional(tube.medium_at(z)) : std::nullopt);
   }
   return profile;
 }
@@ -108,13 +131,19 @@ VesselOutcome tell(const SolvedTube& tube, Detail detail) {
     outcome.pressure_drop_Pa = setup.inlet_Pa - outcome.outlet.pressure_Pa;
   const auto places = places_of(tube, detail == Detail::map ? 1 : 24);
   outcome.coldest_K = outcome.hottest_K = setup.inlet_K;
+  std::vector<double> T;
   for (double z : places) {
     Stream there = tube.at(z);
+    T.push_back(there.temperature_K);
     outcome.coldest_K = std::min(outcome.coldest_K, there.temperature_K);
     outcome.hottest_K = std::max(outcome.hottest_K, there.temperature_K);
     if (detail != Detail::map) outcome.inside.push_back(std::move(there));
   }
   if (detail == Detail::map) return outcome;
+  if (setup.is_jacketed()) {
+    refine_extremes(tube, places, T, outcome);
+    outcome.heat = given_off(tube, outcome.outlet);
+  }
   if (setup.is_held && setup.heat_known()) outcome.heat = heat_of(tube, outcome.outlet, places, outcome.inside);
   if (detail == Detail::profile) outcome.profile = profile_of(tube);
   return outcome;

@@ -9,7 +9,8 @@ struct SolvedTube {
   const Setup& setup;
   double feed_m3_s;
   FunctionRef<Stream(double z)> at;
-  std::vector<double> places;  ///< fractions worth looking at besides the standing ones, rising
+  FunctionRef<double(double z)> medium_at;  ///< temperature of the medium; read only with a jacket
+  std::vector<double> places;               ///< fractions worth looking at besides the standing ones, rising
   RateEvaluator& evaluator;
 };
 VesselOutcome tell(const SolvedTube& tube, Detail detail);
