@@ -32,6 +32,17 @@ void check_choice(const VesselOperationDraft& d, Thermal thermal, const Site& si
   }
 }
 
+/// Vessels on their jackets alone need heat: all that is missing is named at once.
+void check_heat(const Given<Thermal>& thermal, const Chemistry& chemistry, const Scope& scope) {
+  if (!thermal || *thermal != Thermal::jacketed) return;
+  if (heat_knowledge(chemistry).state != HeatKnowledge::State::not_asked) return;
+  std::string missing = "no heat of reaction (releases or absorbs)";
+  if (const auto capacity = missing_heat_capacity(chemistry); !capacity.empty()) missing += "; " + capacity;
+  scope.error(thermal.place, "thermal", "\"jacketed\" with " + missing,
+              "expected a heat of reaction, and in the feed density and heat_capacity (or the heat_capacity of every "
+              "species)");
+}
+
 void check_mode(const OperationDraft& d, const Scope& scope) {
   if (!d.mode || *d.mode == Mode::continuous) return;
   scope.error(d.mode.place, "mode",
@@ -92,6 +103,7 @@ void build_operation(const DutyDraft& draft, const Site& site, bool said_pressur
   duty.thermal = d.thermal.value.value_or(Thermal::hold);
   if (!d.thermal.written) builder.assume("operation.thermal", "hold", "left out");
   check_choice(d, duty.thermal, site, scope);
+  check_heat(d.thermal, duty.chemistry, scope);
   duty.operation = choice_of(d);
   duty.catalyst_kg_m3 = d.catalyst.value.value_or(0);
   duty.hold_K = d.temperature.value.value_or(feed.temperature_K);
@@ -109,6 +121,7 @@ void build_operation(const DutyDraft& draft, const Site& site, bool said_pressur
         continue;
       }
       check_choice(named.value, named.value.thermal.value.value_or(duty.thermal), site, builder.about(subject));
+      check_heat(named.value.thermal, duty.chemistry, builder.about(subject));
       duty.operation_of[named.name] = choice_of(named.value);
     }
   if (draft.start) {

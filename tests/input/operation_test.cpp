@@ -48,11 +48,15 @@ TEST_CASE("one vessel may have its own operation; a tag of another site is only 
         std::string::npos);
 }
 
-TEST_CASE("what is worked otherwise than computed here is refused in plain words", "[input][operation]") {
-  CHECK(told(read_duty(duty("[operation]\nthermal = \"jacketed\"\n")))
-            .find("\"jacketed\" is read and checked, but this version") != std::string::npos);
+TEST_CASE("vessels on their jackets need heat: all that is missing is named at once", "[input][operation]") {
+  const std::string all = told(read_duty(duty("[operation]\nthermal = \"jacketed\"\n")));
+  CHECK(all.find("operation, thermal: \"jacketed\" with no heat of reaction") != std::string::npos);
+  CHECK(all.find("the unnamed solvent has no heat capacity") != std::string::npos);
   CHECK(told(read_duty(duty("[operation.vessel.K-1]\nthermal = \"jacketed\"\n")))
-            .find("operation, vessel K-1, thermal: \"jacketed\"") != std::string::npos);
+            .find("operation, vessel K-1, thermal: \"jacketed\" with no heat of reaction") != std::string::npos);
+}
+
+TEST_CASE("what is worked otherwise than computed here is refused in plain words", "[input][operation]") {
   const std::string batch =
       head +
       "[target]\nconversion = 0.8\n[charge]\ntemperature = \"25 degC\"\nconcentration = { A = \"2 mol/L\" }\n"

@@ -175,8 +175,6 @@ TEST_CASE("what a vessel can not serve is told in words", "[vessel]") {
   CHECK(why(plant, tank_of(1)).empty());
   law_of(plant.reactions[0]).per = Per::bed;
   CHECK_FALSE(why(plant, tank_of(1)).empty());
-  plant.operation.thermal = Thermal::jacketed;
-  CHECK_FALSE(why(plant, bed_of(1)).empty());
 }
 
 TEST_CASE("a measured table ends where it was measured", "[vessel][table]") {
