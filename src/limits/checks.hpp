@@ -19,6 +19,10 @@ inline constexpr std::string_view pressure_drop = "pressure drop";
 inline constexpr std::string_view feed_line = "feed line";
 inline constexpr std::string_view utility_total = "utility total";
 inline constexpr std::string_view steady_state_stable = "steady state stable";
+inline constexpr std::string_view start_up_peak = "start-up peak";
+inline constexpr std::string_view runaway_sensitivity = "runaway sensitivity";
+inline constexpr std::string_view temperature_if_cooling_fails = "temperature if cooling fails";
+inline constexpr std::string_view glass_temperature_step = "glass temperature step";
 }  // namespace limit_name
 
 /// Working fill of a tank with liquid against its least and most.
@@ -45,5 +49,13 @@ std::optional<Limit> check_feed_line(const LimitInput& input);
 std::optional<Limit> check_utility_total(const LimitInput& input);
 /// The start of a tank must end in a steady state.
 std::optional<Limit> check_steady_state_stable(const LimitInput& input);
+/// The hottest while a tank comes on line against what product and vessel may see; where the temperature moves.
+std::optional<Limit> check_start_up_peak(const LimitInput& input);
+/// The share of its U at which the hot spot of a tube on its jacket is most sensitive to it, against the whole.
+std::optional<Limit> check_runaway_sensitivity(const LimitInput& input);
+/// What the contents come to if cooling fails at the worst moment, against onset of decomposition and design range.
+std::optional<Limit> check_temperature_if_cooling_fails(const LimitInput& input);
+/// The step of temperature across a glass lining, from the medium and from what arrives.
+std::optional<Limit> check_glass_temperature_step(const LimitInput& input);
 
 }  // namespace vatwright

@@ -31,24 +31,30 @@ const std::vector<ListedLimit>& all_limits() {
       {limit_name::pressure_drop, check_pressure_drop},
       {limit_name::feed_line, check_feed_line, Reads::files},
       {limit_name::utility_total, check_utility_total},
-      {limit_name::steady_state_stable, check_steady_state_stable},
+      {limit_name::steady_state_stable, check_steady_state_stable, Reads::start},
+      {limit_name::start_up_peak, check_start_up_peak, Reads::start},
+      {limit_name::runaway_sensitivity, check_runaway_sensitivity},
+      {limit_name::temperature_if_cooling_fails, check_temperature_if_cooling_fails, Reads::start},
+      {limit_name::glass_temperature_step, check_glass_temperature_step},
   };
   return list;
 }
 
 namespace {
-std::vector<Limit> check(const LimitInput& input, bool files_only) {
+std::vector<Limit> check(const LimitInput& input, Reads most) {
   std::vector<Limit> limits;
   for (const ListedLimit& listed : all_limits()) {
-    if (files_only && listed.reads != Reads::files) continue;
+    if (listed.reads > most) continue;
     if (auto limit = listed.check(input)) limits.push_back(std::move(*limit));
   }
   return limits;
 }
 }  // namespace
 
-std::vector<Limit> check_limits(const LimitInput& input) { return check(input, false); }
-std::vector<Limit> check_limits_of_files(const LimitInput& input) { return check(input, true); }
+std::vector<Limit> check_limits(const LimitInput& input) {
+  return check(input, input.outcome.cycle ? Reads::start : Reads::outcome);
+}
+std::vector<Limit> check_limits_of_files(const LimitInput& input) { return check(input, Reads::files); }
 
 std::size_t place_of(std::string_view name) {
   const auto& list = all_limits();

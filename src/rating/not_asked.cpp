@@ -43,7 +43,6 @@ void add_of_product(std::vector<std::string>& list, const Duty& duty) {
   if (limits.wetted.empty()) add(list, "wetted materials of the product");
   if (duty.chemistry.feed.phase == Phase::liquid && !boiling_is_asked(duty)) add(list, "boiling");
   if (!limits.decomposition_K) add(list, "decomposition");
-  add(list, "temperature if cooling fails");  // not part of this rating
 }
 
 void add_of_vessels(std::vector<std::string>& list, const Site& site) {

@@ -95,6 +95,7 @@ struct LimitShown {
   Shown value, margin;
 };
 LimitShown shown_of(const Limit& limit) {
+  if (limit.of_difference) return {Shown::difference, Shown::difference};
   if (limit.unit == "K") return {Shown::temperature, Shown::difference};
   if (limit.unit == "Pa")
     return {limit.name == "pressure drop" ? Shown::pressure_drop : Shown::pressure, Shown::percent};

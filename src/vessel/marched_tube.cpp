@@ -2,6 +2,7 @@
 #include <cmath>
 
 #include "counter_current.hpp"
+#include "runaway.hpp"
 #include "solver.hpp"
 #include "tube_march.hpp"
 #include "tube_outcome.hpp"
@@ -92,8 +93,25 @@ class MarchedTube final : public Solver {
       return march.balance().medium(y);
     };
     VesselOutcome outcome = tell({setup_, feed_m3_s, stream_at, medium_at, places(march, end), tell_rate_}, detail);
-    if (detail != Detail::map) outcome.residual = march.residual(end);
+    if (detail == Detail::map) return outcome;
+    outcome.residual = march.residual(end);
+    if (setup_.is_jacketed() && setup_.heat_known())
+      tell_runaway(stream_at, medium_at, setup_.volume_m3 / feed_m3_s, outcome);
     return outcome;
+  }
+
+  /// Where there is a hot spot inside: how much of its U it stands on. In V/v it is the same at every feed rate.
+  void tell_runaway(FunctionRef<Stream(double)> stream_at, FunctionRef<double(double)> medium_at, double space_time_s,
+                    VesselOutcome& outcome) {
+    const Stream inlet = stream_at(0);
+    if (!(outcome.hottest_K > std::max(inlet.temperature_K, outcome.outlet.temperature_K))) return;
+    if (shared_ && runaway_share_) {
+      outcome.runaway_share = runaway_share_;
+      return;
+    }
+    const double hot_spot = outcome.hottest_at;
+    runaway_share_ = runaway_share(setup_, medium_at(hot_spot), hot_spot * space_time_s);
+    outcome.runaway_share = runaway_share_;
   }
 
   /// Stages end at powers of 4 of a second, whatever was asked before: the same answer in any order of asking.
@@ -117,6 +135,7 @@ class MarchedTube final : public Solver {
   const Setup& setup_;
   RateEvaluator tell_rate_;
   std::optional<TubeMarch> shared_;
+  std::optional<double> runaway_share_;
   long calls_before_ = 0;
 };
 

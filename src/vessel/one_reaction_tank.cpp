@@ -60,6 +60,7 @@ class OneReactionTank final : public Solver {
   struct Arrival {
     std::optional<std::size_t> state;  ///< absent: a cycle
     std::optional<double> peak_K;      ///< absent: not asked
+    std::optional<double> uncooled_K = {};
   };
 
   bool moves_with_feed() const { return setup_.T_moves() && (setup_.agitator_W != 0 || setup_.is_jacketed()); }
@@ -138,8 +139,8 @@ class OneReactionTank final : public Solver {
   RestingPlace place_of(const Found& state) {
     const bool from_end = curve_ && state.left < std::abs(state.distance_out);
     const double sign = curve_ ? curve_->way().sign() : 1;
-    const Anchor there = from_end ? path_->at(curve_->way().end(), -sign * state.left)
-                                  : path_->at(path_->inlet(), state.distance_out);
+    const Anchor there =
+        from_end ? path_->at(curve_->way().end(), -sign * state.left) : path_->at(path_->inlet(), state.distance_out);
     RestingPlace place{there.c, path_->temperature(state.xi), state.stable};
     for (double& c : place.C) c = std::max(c, 0.0);
     setup_.chemistry.concentrations_of_amounts(place.C, place.temperature_K, setup_.inlet_Pa, place.C);
@@ -168,7 +169,7 @@ class OneReactionTank final : public Solver {
     const auto end = follow_start(setup_, start, feed_m3_s, places, Places::all);
     if (const auto* no = std::get_if<NoAnswer>(&end)) return *no;
     const StartEnd& rest = std::get<StartEnd>(end);
-    return Arrival{rest.at, rest.peak_K};
+    return Arrival{rest.at, rest.peak_K, rest.uncooled_K};
   }
 
   /// The start lies on the line that the states lie on, so that the tank moves along it.
@@ -209,7 +210,8 @@ class OneReactionTank final : public Solver {
     outcome.isothermal = setup_.is_held;
     outcome.cycle = !arrival.state;
     if (arrival.state) outcome.residual = residual_of(found[*arrival.state], setup_.volume_m3 / feed_m3_s);
-    tell_of_tank(setup_, feed_m3_s, outcome, detail);
+    outcome.uncooled_K = arrival.uncooled_K;
+    tell_of_tank(setup_, feed_m3_s, outcome, detail, tell_rate_);
     std::ranges::stable_sort(outcome.states, {}, &SteadyState::conversion);
     return outcome;
   }

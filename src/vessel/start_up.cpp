@@ -5,6 +5,7 @@
 #include <numeric>
 
 #include "transient.hpp"
+#include "uncooled.hpp"
 #include "vatwright/numeric/march.hpp"
 #include "vatwright/numeric/matrix.hpp"
 
@@ -34,7 +35,7 @@ std::vector<double> extents_of(const Setup& setup, std::span<const double> C) {
 
 constexpr double rests_within = 1e-4;  // of the scale: nearer than that a start-up has come to a stable state
 constexpr double first_stretch = 30, longest = 1e7;  // space times: near a fold a start-up creeps long
-constexpr double at_rest = 1e-5;                      // largest change of the scale per space time
+constexpr double at_rest = 1e-5;                     // largest change of the scale per space time
 
 double apart(std::span<const double> a, std::span<const double> b, std::span<const double> scale) {
   double most = 0;
@@ -94,7 +95,9 @@ class StartUp {
 
   std::optional<NoAnswer> go(double space_times) {
     const auto f = [&](double, std::span<const double> at, std::span<double> dy) { transient_(at, dy); };
-    const auto by_amounts = [&](double, std::span<const double> at, std::span<double> J) { transient_.jacobian(at, J); };
+    const auto by_amounts = [&](double, std::span<const double> at, std::span<double> J) {
+      transient_.jacobian(at, J);
+    };
     const Jacobian jacobian(by_amounts);
     const auto near = [&](double, std::span<const double> at) { return away_from_states(at); };
     const Event event(near);
@@ -112,11 +115,27 @@ class StartUp {
     if (!transient_.moves()) return;
     std::vector<double> there(y_.size());
     const auto& nodes = path_.nodes();
+    if (cooling_can_fail(setup_)) look_for_worst_moment();
     for (std::size_t k = 0; k + 1 < nodes.size(); ++k)
       for (double part : {0.25, 0.5, 0.75, 1.0}) {
         path_.read(nodes[k] + part * (nodes[k + 1] - nodes[k]), there);
         end_.peak_K = std::max(end_.peak_K, there.back());
       }
+  }
+
+  void look_for_worst_moment() {
+    const std::size_t n = transient_.species();
+    std::vector<double> there(y_.size()), worst(y_);
+    double most = 0;
+    for (double t : path_.nodes()) {
+      path_.read(t, there);
+      const double potential = potential_K(setup_, std::span(there).first(n), there[n]);
+      if (potential <= most) continue;
+      most = potential;
+      worst = there;
+    }
+    const double hottest = warmest_uncooled(setup_, std::span(worst).first(n), worst[n]);
+    end_.uncooled_K = std::max(hottest, end_.uncooled_K.value_or(hottest));
   }
 
   double drift() {

@@ -18,11 +18,14 @@ enum class Places { all, some };
 
 /// How a start-up ends.
 struct StartEnd {
-  std::optional<std::size_t> at;  ///< at this one of the named places; absent: it rests elsewhere (Places::some), or cycles
+  std::optional<std::size_t>
+      at;  ///< at this one of the named places; absent: it rests elsewhere (Places::some), or cycles
   bool cycle = false;
   std::vector<double> xi;  ///< resting elsewhere: extents that fit the contents best; empty where none are known
   double temperature_K = 0;
-  double peak_K = 0;  ///< the hottest on the way, the start included
+  double peak_K = 0;                 ///< the hottest on the way, the start included
+  std::optional<double> uncooled_K;  ///< the hottest that the contents could become if cooling failed on the way;
+                                     ///< absent where that is no question
 };
 /// The start-up integrated, feed open and medium on, until it is within 1e-4 (of all that is fed, and of 300 K) of a
 /// stable place, or hardly moves, or swings as far in one quarter of the time as in the one before. NoAnswer::unsolved:

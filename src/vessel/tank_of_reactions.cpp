@@ -17,7 +17,8 @@ using Contents = std::vector<double>;  // amounts and temperature, see TankBalan
 /// and where the start-up itself comes to rest. Which other states there are is not certain.
 class TankOfReactions final : public Solver {
  public:
-  explicit TankOfReactions(const Setup& setup) : setup_(setup), start_(start_state(setup)) {}
+  explicit TankOfReactions(const Setup& setup)
+      : setup_(setup), start_(start_state(setup)), tell_rate_(setup.chemistry.kinetics) {}
 
   Outcome<VesselOutcome> at(double feed_m3_s, Detail detail) override {
     TankBalance balance(setup_, feed_m3_s);
@@ -97,7 +98,8 @@ class TankOfReactions final : public Solver {
   }
 
   /// Concentrations and stability of the states, for the start-up to come to.
-  std::vector<RestingPlace> places_of(TankBalance& balance, const std::vector<Contents>& found, double feed_m3_s) const {
+  std::vector<RestingPlace> places_of(TankBalance& balance, const std::vector<Contents>& found,
+                                      double feed_m3_s) const {
     std::vector<RestingPlace> places;
     for (const Contents& y : found) {
       RestingPlace place{std::vector<double>(balance.species()), balance.temperature(y), false};
@@ -145,6 +147,7 @@ class TankOfReactions final : public Solver {
       if (!rest.at && !rest.cycle) return unsolved("the start-up rests where no steady state was found");
       reached = rest.at;
       outcome.start_peak_K = rest.peak_K;
+      outcome.uncooled_K = rest.uncooled_K;
     }
     for (std::size_t s = 0; s < found.size(); ++s) {
       Extents xi = balance.extents(found[s]);
@@ -156,7 +159,7 @@ class TankOfReactions final : public Solver {
       outcome.isothermal = setup_.is_held;
     } else {
       outcome.residual = balance.imbalance(found[*reached]);
-      tell_of_tank(setup_, feed_m3_s, outcome, detail);
+      tell_of_tank(setup_, feed_m3_s, outcome, detail, tell_rate_);
       if (outcome.start_peak_K) outcome.start_peak_K = std::max(*outcome.start_peak_K, outcome.hottest_K);
     }
     std::ranges::stable_sort(outcome.states, {}, &SteadyState::conversion);
@@ -165,6 +168,7 @@ class TankOfReactions final : public Solver {
 
   const Setup& setup_;
   StartState start_;
+  RateEvaluator tell_rate_;
   long calls_ = 0;
 };
 

@@ -1,5 +1,7 @@
 #include "tube_outcome.hpp"
 
+#include "uncooled.hpp"
+
 #include <algorithm>
 #include <cmath>
 #include <sstream>
@@ -94,10 +96,38 @@ void refine_extremes(const SolvedTube& tube, const std::vector<double>& places, 
   const auto temperature = [&](double z) { return tube.at(z).temperature_K; };
   const auto minus = [&](double z) { return -tube.at(z).temperature_K; };
   for (std::size_t i = 1; i + 1 < places.size(); ++i) {
-    if (T[i] >= T[i - 1] && T[i] >= T[i + 1] && T[i] > std::min(T[i - 1], T[i + 1]))
-      outcome.hottest_K = std::max(outcome.hottest_K, find_peak(temperature, places[i - 1], places[i + 1], 1e-6).value);
+    if (T[i] >= T[i - 1] && T[i] >= T[i + 1] && T[i] > std::min(T[i - 1], T[i + 1])) {
+      const Peak peak = find_peak(temperature, places[i - 1], places[i + 1], 1e-6);
+      if (peak.value > outcome.hottest_K) outcome.hottest_K = peak.value, outcome.hottest_at = peak.at;
+    }
     if (T[i] <= T[i - 1] && T[i] <= T[i + 1] && T[i] < std::max(T[i - 1], T[i + 1]))
       outcome.coldest_K = std::min(outcome.coldest_K, -find_peak(minus, places[i - 1], places[i + 1], 1e-6).value);
+  }
+}
+
+/// The worst place to lose the cooling, and the greatest difference to the medium.
+void tell_uncooled(const SolvedTube& tube, const std::vector<double>& places, VesselOutcome& outcome) {
+  const Setup& setup = tube.setup;
+  std::vector<double> C(static_cast<std::size_t>(setup.chemistry.kinetics.species()));
+  const Stream* worst = nullptr;
+  double most = 0;
+  for (const Stream& there : outcome.inside) {
+    setup.chemistry.concentrations(there.xi_mol_m3, there.temperature_K, there.pressure_Pa, C);
+    const double potential = potential_K(setup, C, there.temperature_K);
+    if (worst == nullptr || potential > most) worst = &there, most = potential;
+  }
+  setup.chemistry.concentrations(worst->xi_mol_m3, worst->temperature_K, worst->pressure_Pa, C);
+  outcome.uncooled_K = std::max(outcome.hottest_K, warmest_uncooled(setup, C, worst->temperature_K));
+  if (!setup.vessel.jacket) return;
+  const double U = setup.vessel.jacket->U_fouled();
+  for (std::size_t i = 0; i < places.size(); ++i) {
+    const Stream& there = outcome.inside[i];
+    if (setup.is_held && !(U > 0)) continue;
+    const double difference =
+        setup.is_held ? flux_at(tube, there) / U : there.temperature_K - tube.medium_at(places[i]);
+    if (difference <= (outcome.driving ? outcome.driving->contents_K : 0)) continue;
+    if (const auto own = most_driving_K(setup, tube.evaluator, there))
+      outcome.driving = DrivingDifference{difference, *own};
   }
 }
 
@@ -123,6 +153,7 @@ VesselOutcome tell(const SolvedTube& tube, Detail detail) {
   VesselOutcome outcome;
   outcome.outlet = tube.at(1);
   outcome.conversion = setup.chemistry.kinetics.conversion(outcome.outlet.xi_mol_m3);
+  outcome.enters_K = setup.inlet_K;
   outcome.isothermal = setup.is_held;
   outcome.let_down_above_Pa = setup.let_down_above_Pa;
   outcome.highest_Pa = setup.inlet_Pa;
@@ -136,7 +167,7 @@ VesselOutcome tell(const SolvedTube& tube, Detail detail) {
     Stream there = tube.at(z);
     T.push_back(there.temperature_K);
     outcome.coldest_K = std::min(outcome.coldest_K, there.temperature_K);
-    outcome.hottest_K = std::max(outcome.hottest_K, there.temperature_K);
+    if (there.temperature_K > outcome.hottest_K) outcome.hottest_K = there.temperature_K, outcome.hottest_at = z;
     if (detail != Detail::map) outcome.inside.push_back(std::move(there));
   }
   if (detail == Detail::map) return outcome;
@@ -145,6 +176,7 @@ VesselOutcome tell(const SolvedTube& tube, Detail detail) {
     outcome.heat = given_off(tube, outcome.outlet);
   }
   if (setup.is_held && setup.heat_known()) outcome.heat = heat_of(tube, outcome.outlet, places, outcome.inside);
+  if (cooling_can_fail(setup)) tell_uncooled(tube, places, outcome);
   if (detail == Detail::profile) outcome.profile = profile_of(tube);
   return outcome;
 }

@@ -18,7 +18,11 @@ TEST_CASE("limits stand in one order, each name once", "[limits]") {
                                              "pressure drop",
                                              "feed line",
                                              "utility total",
-                                             "steady state stable"};
+                                             "steady state stable",
+                                             "start-up peak",
+                                             "runaway sensitivity",
+                                             "temperature if cooling fails",
+                                             "glass temperature step"};
   std::vector<std::string> names;
   for (const auto& listed : all_limits()) names.emplace_back(listed.name);
   CHECK(names == expected);

@@ -30,6 +30,7 @@ struct Limit {
   std::optional<double> margin =
       {};  ///< (bound - value)/|bound| (1 if 0); a lower bound counts value - bound; K: plain difference
   State state = State::holds;
+  bool of_difference = false;  ///< value and bound in "K" are differences of temperature
   std::string why = {};  ///< for people: what stands in the way, or what is missing; empty where it holds
   /// What the search for windows follows: the margin over its scale (temperatures too), running on smoothly to where a
   /// direction of heat is no longer needed; -1 where the limit is broken without a number; absent where it can not be
@@ -61,8 +62,9 @@ struct LimitInput {
 /// nullopt: not asked.
 using LimitCheck = std::optional<Limit> (*)(const LimitInput&);
 
-/// What a check reads: `files` can be judged even where the vessel could not be calculated.
-enum class Reads { files, outcome };
+/// What a check reads: `files` can be judged even where the vessel could not be calculated, `start` where its start-up
+/// ends in no steady state.
+enum class Reads { files, start, outcome };
 
 /// The one list, in the order of every answer.
 struct ListedLimit {
@@ -72,7 +74,7 @@ struct ListedLimit {
 };
 const std::vector<ListedLimit>& all_limits();
 
-/// All limits that are asked, in the order of the list.
+/// All limits that are asked, in the order of the list; of an outcome that is a cycle those of files and start alone.
 std::vector<Limit> check_limits(const LimitInput& input);
 /// Those of them that need no outcome (input.outcome is not read).
 std::vector<Limit> check_limits_of_files(const LimitInput& input);

@@ -15,12 +15,12 @@ enum class Thermal { hold, adiabatic, jacketed };
 /// How one vessel is run in a duty, after all overrides.
 struct Operation {
   Thermal thermal = Thermal::hold;
-  double hold_K = 0;                   ///< for hold
-  std::optional<double> pressure_Pa;   ///< given for this vessel; it is a let-down on a later vessel
-  double fill = 1;                     ///< of a tank with liquid, fraction of the brimful volume
-  double catalyst_kg_m3 = 0;           ///< loading of a stirred tank, per m3 of working fluid
-  std::optional<std::string> utility;  ///< asked for by name
-  const Utility* medium = nullptr;     ///< jacketed: what flows in the jacket; null: nothing does
+  double hold_K = 0;                       ///< for hold
+  std::optional<double> pressure_Pa;       ///< given for this vessel; it is a let-down on a later vessel
+  double fill = 1;                         ///< of a tank with liquid, fraction of the brimful volume
+  double catalyst_kg_m3 = 0;               ///< loading of a stirred tank, per m3 of working fluid
+  std::optional<std::string> utility;      ///< asked for by name
+  const Utility* medium = nullptr;         ///< jacketed: what flows in the jacket; null: nothing does
   std::optional<double> medium_flow_m3_s;  ///< jacketed: how much of it; absent: nothing limits it
 };
 
@@ -54,30 +54,38 @@ struct HeatNeed {
   double least_flux_W_m2 = 0;  ///< tubes: greatest heating flux along it as a negative number (<= 0)
 };
 
-/// The place where the fluid is nearest to boiling; absent: cannot be told (why) or not asked.
-struct BubbleMargin {
-  double temperature_K = 0;  ///< hottest, at that place
-  double bubble_K = 0;       ///< bubble point there
+/// How far contents that give off heat are above what takes it, and how far they may be before a small upset is no
+/// longer self-correcting.
+struct DrivingDifference {
+  double contents_K = 0;  ///< temperature of the contents less that of the medium beside them (held: Q/(U A))
+  double most_K = 0;      ///< 1/(d ln q/dT), q the heat released per volume; of one rate by Arrhenius R T^2/E
 };
 
 /// Everything one vessel does with one inlet at one feed rate.
 struct VesselOutcome {
   Stream outlet;
+  double enters_K = 0;                     ///< of what comes into the vessel (a held tube: after its preheater)
   double conversion = 0;                   ///< cumulative, from the mixed feed
   double coldest_K = 0, hottest_K = 0;     ///< inside (a tube's inlet included; what arrives at a tank not)
+  double hottest_at = 0;                   ///< tubes: where, as a fraction of the length
   double lowest_Pa = 0, highest_Pa = 0;    ///< inside
   std::optional<double> pressure_drop_Pa;  ///< tubes; absent where viscosity (gas: or a molar mass) is missing
   std::optional<double>
       let_down_above_Pa;  ///< a let-down was asked to more than what arrives: that much (ruled: does not pass)
-  std::optional<double> start_peak_K;  ///< tanks: the hottest while it comes on line
-  std::vector<SteadyState> states;     ///< tanks, rising conversion; tubes: where counter-current has several
-  bool states_complete = true;         ///< tanks: certain in the range searched
-  bool cycle = false;                  ///< tanks: the start ends in a cycle; there is no outlet to speak of
-  std::optional<HeatNeed> heat;        ///< absent where heat is not asked or not known, and in adiabatic vessels
-  std::vector<Stream> inside;          ///< states to check limits at: tank: its contents; tube: places along it, rising
-  std::optional<Profile> profile;      ///< tubes, where Detail::profile was asked
-  double residual = 0;                 ///< ruling 37, reckoned apart from the solver
-  bool isothermal = true;              ///< decides the bound on the residual: 1e-9 or 1e-6
+  std::optional<double> start_peak_K;        ///< tanks: the hottest while it comes on line
+  std::vector<SteadyState> states;           ///< tanks, rising conversion; tubes: where counter-current has several
+  bool states_complete = true;               ///< tanks: certain in the range searched
+  bool cycle = false;                        ///< tanks: the start ends in a cycle; there is no outlet to speak of
+  std::optional<double> uncooled_K;          ///< the hottest that the contents can become if cooling fails at the worst
+                                             ///< moment (start-up counted) and the feed stops; held and jacketed alone
+  std::optional<DrivingDifference> driving;  ///< at the worst place, where heat must be removed
+  std::optional<double> runaway_share;  ///< tubes on their jackets that release heat: the share of its U at which a
+                                        ///< tube's hot spot is most sensitive to it; 0: nowhere sensitive
+  std::optional<HeatNeed> heat;    ///< absent where heat is not asked or not known, and in adiabatic vessels
+  std::vector<Stream> inside;      ///< states to check limits at: tank: its contents; tube: places along it, rising
+  std::optional<Profile> profile;  ///< tubes, where Detail::profile was asked
+  double residual = 0;             ///< ruling 37, reckoned apart from the solver
+  bool isothermal = true;          ///< decides the bound on the residual: 1e-9 or 1e-6
 };
 
 enum class Detail {
