@@ -145,6 +145,14 @@ std::optional<double> jump_between(const std::function<std::optional<double>(dou
 }
 }  // namespace
 
+std::optional<Caution> caution_window_at_fold(const Windows& windows) {
+  if (windows.jumps_m3_s.empty()) return std::nullopt;
+  std::string text = "The window ends where the state that the start reaches jumps, at ";
+  for (std::size_t i = 0; i < windows.jumps_m3_s.size(); ++i)
+    text += (i == 0 ? "" : " and ") + show(windows.jumps_m3_s[i], Shown::feed);
+  return Caution{"near-fold", text + ": a little beyond, the vessel does something else altogether."};
+}
+
 std::optional<Caution> caution_near_fold(const std::function<std::optional<double>(double feed_m3_s)>& conversion_at,
                                          double feed_m3_s) {
   const auto X = conversion_at(feed_m3_s);

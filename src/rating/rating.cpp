@@ -61,8 +61,9 @@ void tell_windows(Rating& rating, const VesselPlace& place, VesselRun& run) {
     rating.unsolved = true;
     rating.stands_in_the_way.push_back("window not wholly known, " + windows.why);
   }
-  if (trials.any_answer() || windows.why.empty())
-    rating.windows = windows;  // nothing answered: nothing is known of a window
+  if (!trials.any_answer() && !windows.why.empty()) return;  // nothing answered: nothing is known of a window
+  rating.windows = windows;
+  if (auto fold = caution_window_at_fold(windows)) rating.cautions.push_back(*fold);
 }
 
 Stream arriving_first(const Duty& duty, const Operation& operation) {

@@ -14,6 +14,8 @@ constexpr double per_decade = 8;            // samples: margins of real vessels 
 constexpr double end_width = 1e-10;         // an end is known to this, relative
 constexpr double one_rate = 1e-6;           // two ends this near count as one
 constexpr double turned_negative = -1e-11;  // a margin that has left zero, not rounding
+constexpr double worth_a_look = 0.1;        // squeezed margin: less than this between two samples is no jump
+constexpr double is_a_jump = 1e-3;          // squeezed margin, left over at the width of an end
 constexpr double look_between = 4;          // how much further than the neighbours differ a turning point may reach
 
 /// One trial, as the search sees it: x = ln(feed rate), m the smallest margin squeezed into (-1, 1), a failed trial -1.
@@ -47,6 +49,7 @@ class Search {
 
   Windows run() {
     sample_grid();
+    look_for_jumps();
     look_between_samples();
     collect();
     return std::move(windows_);
@@ -86,6 +89,31 @@ class Search {
     samples_.push_back(sample(b, hi_m3_s_));
   }
 
+  /// Where the smallest margin jumps between two samples on one side, both sides of the jump are samples too: a window
+  /// may open right behind it.
+  void look_for_jumps() {
+    std::vector<Sample> found;
+    for (std::size_t i = 1; i < samples_.size(); ++i) {
+      Sample a = samples_[i - 1], b = samples_[i];
+      if (a.inside != b.inside || std::abs(a.m - b.m) < worth_a_look) continue;
+      while (b.x - a.x > end_width && a.inside == b.inside && std::abs(a.m - b.m) >= worth_a_look) {
+        const double middle = a.x + (b.x - a.x) / 2;
+        if (middle == a.x || middle == b.x) break;
+        const Sample c = sample(middle);
+        (std::abs(c.m - a.m) > std::abs(b.m - c.m) ? b : a) = c;
+      }
+      if (std::abs(a.m - b.m) < worth_a_look) continue;
+      found.push_back(a);
+      found.push_back(b);
+    }
+    put_in(found);
+  }
+
+  void put_in(const std::vector<Sample>& found) {
+    samples_.insert(samples_.end(), found.begin(), found.end());
+    std::sort(samples_.begin(), samples_.end(), [](const Sample& a, const Sample& b) { return a.x < b.x; });
+  }
+
   /// Where three samples lie on one side and the middle one is nearest to the other, the turning point may lie beyond
   /// it.
   void look_between_samples() {
@@ -99,8 +127,7 @@ class Search {
       if (std::abs(c.m) > look_between * std::max(left, right)) continue;
       if (auto other = beyond(l, c, r, sign)) found.push_back(*other);
     }
-    samples_.insert(samples_.end(), found.begin(), found.end());
-    std::sort(samples_.begin(), samples_.end(), [](const Sample& a, const Sample& b) { return a.x < b.x; });
+    put_in(found);
   }
 
   std::optional<Sample> beyond(const Sample& l, const Sample& c, const Sample& r, double sign) {
@@ -138,6 +165,7 @@ class Search {
       if (middle == in.x || middle == out.x) break;
       narrow(middle);
     }
+    if (std::abs(in.m - out.m) > is_a_jump && out.m > -1) windows_.jumps_m3_s.push_back(in.feed_m3_s);
     return {in, out};
   }
 

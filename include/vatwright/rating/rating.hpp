@@ -27,6 +27,7 @@ struct Windows {
   std::string why;        ///< not empty: where and why trials gave no answer, in words
   bool unsolved = false;  ///< one of those was a failure of the numerics
   int trials = 0;         ///< how many feed rates were tried
+  std::vector<double> jumps_m3_s;  ///< ends where a margin jumps instead of passing zero: the reached state changes there
 };
 
 /// What a target item asks, and what is reached.
@@ -80,7 +81,8 @@ struct Trial {
 };
 /// A margin is scaled, and not negative from -holds_within on (Limit::search_margin, TargetItem::margin).
 /// Finds every interval of [lo, hi] in which no margin is negative: a grid in log(rate), the greatest of the smallest
-/// margin between grid points looked for, each end refined to 1e-10 relative. Steps (jumps) count as ends.
+/// margin between grid points looked for, and what lies beside a jump of the smallest margin between two of them; each
+/// end refined to 1e-10 relative. Steps (jumps) count as ends.
 Windows find_windows(const std::function<Trial(double feed_m3_s)>& trial, double lo_m3_s, double hi_m3_s);
 
 /// The targets at an outlet. conversions and yields are those of the whole (1 m3 of mixed feed).
@@ -154,6 +156,9 @@ std::vector<Caution> cautions_of(const VesselPlace& place, const VesselOutcome& 
 /// rate, absent where there is none. Costs two trials where nothing jumps.
 std::optional<Caution> caution_near_fold(const std::function<std::optional<double>(double feed_m3_s)>& conversion_at,
                                          double feed_m3_s);
+
+/// near-fold: a window ends where the reached state jumps.
+std::optional<Caution> caution_window_at_fold(const Windows& windows);
 
 /// What no vessel was asked, in words, once for the whole answer ("decomposition", "spread", ..).
 std::vector<std::string> not_asked(const Problem& problem);
