@@ -42,7 +42,7 @@ Rating tell_part(const Problem& problem, Network& network, const JudgedHookup& j
   rating.stands_in_the_way = finding.stands_in_the_way;
   rating.unsolved = finding.unsolved;
   rating.feed_fraction = judged.passes.vessels[i].feed_m3_s / judged.feed_m3_s;
-  if (outcome && judged.vessels[i].figures) rating.cautions = cautions_of(place, *outcome);
+  if (outcome && judged.vessels[i].figures) rating.cautions = cautions_of(place, *outcome, judged.vessels[i].limits);
   return rating;
 }
 

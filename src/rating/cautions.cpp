@@ -110,16 +110,54 @@ std::vector<Caution> cautions_of(const Problem& problem) {
   return cautions;
 }
 
-std::vector<Caution> cautions_of(const VesselPlace& place, const VesselOutcome& outcome) {
+namespace {
+constexpr double glass_used = 0.8;     // of the step that a lining bears at once (a supplier's advice, from memory)
+constexpr double peak_to_mind_K = 10;  // above what it then stays at (common practice, no source)
+
+std::optional<Caution> driving_caution(const VesselOutcome& outcome) {
+  if (!outcome.driving || outcome.driving->contents_K <= outcome.driving->most_K) return std::nullopt;
+  return Caution{"driving-difference",
+                 "The contents stand " + show(outcome.driving->contents_K, Shown::difference) +
+                     " above what cools them; above R T^2/E, here " + show(outcome.driving->most_K, Shown::difference) +
+                     ", heat made grows faster with temperature than heat removed: a small upset is not corrected by "
+                     "itself, and a control loop must do it."};
+}
+
+std::optional<Caution> glass_caution(const std::vector<Limit>& limits) {
+  const auto at = std::find_if(limits.begin(), limits.end(), [](const Limit& l) { return l.of_difference; });
+  if (at == limits.end() || *at->value <= glass_used * *at->bound) return std::nullopt;
+  return Caution{"glass-step", "Across the glass lining " + show(*at->value, Shown::difference) + " come at once, of " +
+                                   show(*at->bound, Shown::difference) +
+                                   " that it bears: warm up and cool down in steps, and ask its maker."};
+}
+
+std::optional<Caution> peak_caution(const VesselOutcome& outcome) {
+  if (!outcome.start_peak_K || *outcome.start_peak_K <= outcome.hottest_K + peak_to_mind_K) return std::nullopt;
+  return Caution{"start-peak", "While it comes on line it passes " + show(*outcome.start_peak_K, Shown::temperature) +
+                                   ", " + show(*outcome.start_peak_K - outcome.hottest_K, Shown::difference) +
+                                   " above what it then stays at."};
+}
+
+std::optional<Caution> measured_caution(const VesselPlace& place, const VesselOutcome& outcome) {
   std::vector<std::string> texts;
   const Kinetics& k = place.problem.duty.chemistry.kinetics;
   for (int j = 0; j < k.reactions(); ++j) {
     if (k.reaction(j).measured) add_measured(texts, k.reaction(j), place, outcome);
   }
-  if (texts.empty()) return {};
+  if (texts.empty()) return std::nullopt;
   std::string text = "Beyond what was measured: ";
   for (std::size_t i = 0; i < texts.size(); ++i) text += (i == 0 ? "" : "; ") + texts[i];
-  return {{"beyond-measured", text + "."}};
+  return Caution{"beyond-measured", text + "."};
+}
+}  // namespace
+
+std::vector<Caution> cautions_of(const VesselPlace& place, const VesselOutcome& outcome,
+                                 const std::vector<Limit>& limits) {
+  std::vector<Caution> cautions;
+  for (const auto& caution :
+       {driving_caution(outcome), glass_caution(limits), measured_caution(place, outcome), peak_caution(outcome)})
+    if (caution) cautions.push_back(*caution);
+  return cautions;
 }
 
 namespace {

@@ -85,6 +85,7 @@ void tell_vessel(Rating& rating, const VesselPlace& place, const Judged& judged,
     rating.steady_states = outcome->states;
     rating.states_complete = outcome->states_complete;
   }
+  rating.heat_curve = outcome->heat_curve;
   if (!judged.figures) return;
   rating.residual = outcome->residual;
   tell_figures(rating, place, *outcome);
@@ -107,7 +108,7 @@ Rating rate(const Problem& problem, const Vessel& vessel, const RateOptions& opt
   rating.stands_in_the_way = finding.stands_in_the_way;
   rating.unsolved = finding.unsolved;
   if (judged.figures) {
-    rating.cautions = cautions_of(place, *answered);
+    rating.cautions = cautions_of(place, *answered, judged.limits);
     const auto conversion_at = [&](double v) -> std::optional<double> {
       const auto there = run.at(v, Detail::map);
       const auto* o = answer(there);

@@ -194,6 +194,10 @@ void Page::items(const std::vector<Item>& items) {
   }
 }
 
+void Page::lines(const std::vector<std::string>& lines) {
+  for (const std::string& each : lines) line(each);
+}
+
 void Page::table(const Table& given) {
   Table table = given;
   for (auto& row : table.rows)

@@ -2,6 +2,7 @@
 #include <cmath>
 
 #include "page_parts.hpp"
+#include "plot.hpp"
 #include "vatwright/report/page.hpp"
 
 namespace vatwright {
@@ -173,6 +174,18 @@ std::vector<std::size_t> places_along(const std::vector<double>& length_m) {
   return places;
 }
 
+constexpr double worth_a_plot_K = 1;
+
+/// A plot with its ends labelled.
+void add_plot(Page& page, Plot plot, Shown x, Shown y, const Look& look) {
+  if (plot.x.empty()) return;
+  const auto [low, high] = range_of(plot.series);
+  const auto label = [&](double value, Shown shown) { return figure_with_unit(value, shown, look); };
+  plot.ends_x = {label(plot.x.front(), x), label(plot.x.back(), x)};
+  plot.ends_y = {label(low, y), label(high, y)};
+  page.lines(lines_of(plot));
+}
+
 void add_profile(Page& page, const Rating& vessel, const Look& look) {
   const Profile& profile = *vessel.profile;
   Table table;
@@ -189,6 +202,28 @@ void add_profile(Page& page, const Rating& vessel, const Look& look) {
                           figure(profile.medium_K[at], Shown::temperature, look)});
   page.heading("Along " + vessel.tag);
   page.table(table);
+  const auto [coldest, hottest] = std::ranges::minmax(profile.temperature_K);
+  if (hottest - coldest < worth_a_plot_K) return;
+  Plot plot{profile.length_m, {}, "the length", {}, {}};
+  std::vector<double> medium;
+  for (const auto& T : profile.medium_K)
+    if (T) medium.push_back(*T);
+  if (medium.size() == profile.length_m.size()) plot.series.push_back({'.', "medium", medium});
+  plot.series.push_back({'o', "temperature inside", profile.temperature_K});
+  page.blank();
+  add_plot(page, std::move(plot), Shown::length, Shown::temperature, look);
+}
+
+void add_heat_curve(Page& page, const Rating& vessel, const Look& look) {
+  const HeatCurve& curve = *vessel.heat_curve;
+  page.heading("Heat made and removed in " + vessel.tag + "; a steady state is where they meet");
+  add_plot(page,
+           {curve.temperature_K,
+            {{'-', "heat removed", curve.removed_W}, {'o', "heat made", curve.made_W}},
+            "the temperature",
+            {},
+            {}},
+           Shown::temperature, Shown::heat, look);
 }
 
 void add_cases(Page& page, const ExamineAnswer& answer, const Look& look) {
@@ -217,6 +252,8 @@ std::string to_page(const ExamineAnswer& answer, const Look& look) {
   add_states(page, answer.rating, look);
   for (const Rating& vessel : answer.rating.vessels)
     if (vessel.profile && !vessel.profile->length_m.empty()) add_profile(page, vessel, look);
+  for (const Rating& vessel : answer.rating.vessels)
+    if (vessel.heat_curve) add_heat_curve(page, vessel, look);
   add_cases(page, answer, look);
   add_vessel_cautions(page, answer.rating.vessels);
   add_tail(page, answer.head, answer.rating.whole.cautions);

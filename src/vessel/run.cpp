@@ -2,6 +2,7 @@
 
 #include <sstream>
 
+#include "heat_curve.hpp"
 #include "solver.hpp"
 #include "tube_balance.hpp"
 
@@ -45,7 +46,10 @@ Outcome<VesselOutcome> VesselRun::at(double feed_m3_s, Detail detail) {
   if (!model_->solver) return std::get<NoAnswer>(model_->setup);
   if (!(feed_m3_s > 0)) return cannot_tell("a feed rate above zero is needed");
   auto outcome = model_->solver->at(feed_m3_s, detail);
-  const auto* told = answer(outcome);
+  auto* told = std::get_if<VesselOutcome>(&outcome);
+  const Setup& setup = std::get<Setup>(model_->setup);
+  if (told != nullptr && detail == Detail::profile && setup.is_tank && setup.T_moves())
+    told->heat_curve = heat_curve(setup, feed_m3_s, told->states);
   if (told == nullptr || told->cycle) return outcome;
   const double bound = told->isothermal ? most_residual_isothermal : most_residual;
   if (!(told->residual <= bound)) return imbalance(told->residual, bound);

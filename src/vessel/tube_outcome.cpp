@@ -131,10 +131,13 @@ void tell_uncooled(const SolvedTube& tube, const std::vector<double>& places, Ve
   }
 }
 
-Profile profile_of(const SolvedTube& tube) {
+Profile profile_of(const SolvedTube& tube, double hottest_at) {
   Profile profile;
   const double length = length_of(tube.setup.vessel.kind);
-  for (double z : standing_places(40)) {
+  auto places = places_of(tube, 40);
+  places.insert(std::ranges::lower_bound(places, hottest_at), hottest_at);
+  places.erase(std::unique(places.begin(), places.end()), places.end());
+  for (double z : places) {
     const Stream there = tube.at(z);
     profile.length_m.push_back(z * length);
     profile.volume_m3.push_back(z * tube.setup.volume_m3);
@@ -177,7 +180,7 @@ VesselOutcome tell(const SolvedTube& tube, Detail detail) {
   }
   if (setup.is_held && setup.heat_known()) outcome.heat = heat_of(tube, outcome.outlet, places, outcome.inside);
   if (cooling_can_fail(setup)) tell_uncooled(tube, places, outcome);
-  if (detail == Detail::profile) outcome.profile = profile_of(tube);
+  if (detail == Detail::profile) outcome.profile = profile_of(tube, outcome.hottest_at);
   return outcome;
 }
 

@@ -27,7 +27,8 @@ struct Windows {
   std::string why;        ///< not empty: where and why trials gave no answer, in words
   bool unsolved = false;  ///< one of those was a failure of the numerics
   int trials = 0;         ///< how many feed rates were tried
-  std::vector<double> jumps_m3_s;  ///< ends where a margin jumps instead of passing zero: the reached state changes there
+  std::vector<double>
+      jumps_m3_s;  ///< ends where a margin jumps instead of passing zero: the reached state changes there
 };
 
 /// What a target item asks, and what is reached.
@@ -60,6 +61,7 @@ struct Rating {
   std::optional<double> residual;
   std::vector<Caution> cautions;
   std::optional<Profile> profile;
+  std::optional<HeatCurve> heat_curve;
   std::optional<double> feed_fraction;
   bool unsolved = false;  ///< exit status 3
 };
@@ -150,8 +152,10 @@ Trial trial_of(const std::vector<NamedJudged>& judged, const std::vector<Limit>&
 void tell_vessel(Rating& rating, const VesselPlace& place, const Judged& judged, const VesselOutcome* outcome);
 /// Every species at an outlet, mol/s (kg/s under amounts by mass), in the order of species.
 std::vector<std::pair<std::string, double>> outlet_flows(const Duty& duty, const Stream& outlet);
-/// Cautions that belong to one vessel at one outcome: beyond-measured. near-fold: see caution_near_fold.
-std::vector<Caution> cautions_of(const VesselPlace& place, const VesselOutcome& outcome);
+/// Cautions that belong to one vessel at one outcome: driving-difference, glass-step, beyond-measured, start-peak.
+/// near-fold: see caution_near_fold. limits: as judged at that outcome.
+std::vector<Caution> cautions_of(const VesselPlace& place, const VesselOutcome& outcome,
+                                 const std::vector<Limit>& limits);
 /// near-fold: the reached state jumps within 5 % of the feed rate. conversion_at: the reached conversion at a feed
 /// rate, absent where there is none. Costs two trials where nothing jumps.
 std::optional<Caution> caution_near_fold(const std::function<std::optional<double>(double feed_m3_s)>& conversion_at,

@@ -49,6 +49,8 @@ class Page {
   };
   void items(const std::vector<Item>& items);
   void table(const Table& table);
+  /// Lines as they are.
+  void lines(const std::vector<std::string>& lines);
 
   /// All of it; ASCII where the look says so.
   [[nodiscard]] std::string text() const;

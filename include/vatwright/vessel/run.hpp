@@ -46,6 +46,11 @@ struct Profile {
   std::vector<std::optional<double>> medium_K;
 };
 
+/// Heat made and heat removed by a tank over its temperature, arrays of equal length.
+struct HeatCurve {
+  std::vector<double> temperature_K, made_W, removed_W;
+};
+
 /// Heat that a held vessel needs to stay as it is run, or that a jacketed one gives off, + = removed.
 struct HeatNeed {
   double cooling_W = 0;        ///< of the whole vessel, agitator counted (held tank: warming of the feed too)
@@ -81,11 +86,12 @@ struct VesselOutcome {
   std::optional<DrivingDifference> driving;  ///< at the worst place, where heat must be removed
   std::optional<double> runaway_share;  ///< tubes on their jackets that release heat: the share of its U at which a
                                         ///< tube's hot spot is most sensitive to it; 0: nowhere sensitive
-  std::optional<HeatNeed> heat;    ///< absent where heat is not asked or not known, and in adiabatic vessels
+  std::optional<HeatNeed> heat;         ///< absent where heat is not asked or not known, and in adiabatic vessels
   std::vector<Stream> inside;      ///< states to check limits at: tank: its contents; tube: places along it, rising
   std::optional<Profile> profile;  ///< tubes, where Detail::profile was asked
-  double residual = 0;             ///< ruling 37, reckoned apart from the solver
-  bool isothermal = true;          ///< decides the bound on the residual: 1e-9 or 1e-6
+  std::optional<HeatCurve> heat_curve;  ///< tanks whose temperature moves, where Detail::profile was asked
+  double residual = 0;                  ///< ruling 37, reckoned apart from the solver
+  bool isothermal = true;               ///< decides the bound on the residual: 1e-9 or 1e-6
 };
 
 enum class Detail {
