@@ -14,6 +14,7 @@ struct Found {
   double xi = 0, distance_out = 0;  // distance from the inlet, signed as xi, to full digits
   double left = 0;                  // distance from the end of the way, to full digits
   bool stable = false, at_end = false;
+  double growth = 0;  // of small departures, per space time; without a jacket its sign alone
 };
 
 /// All states of a tank with one reaction: those along the way that the reaction goes, and the inlet itself where the
@@ -31,6 +32,7 @@ class OneReactionTank final : public Solver {
     bool confined = false;
     std::vector<Found> found;
     if (auto failed = find_states(tau, found, confined)) return *failed;
+    for (Found& state : found) state.growth = state.stable ? -1 : 1;
     if (setup_.is_jacketed()) judge_stability(feed_m3_s, found);
     const auto reached = reached_of(tau, feed_m3_s, found, confined, detail);
     if (const auto* no = std::get_if<NoAnswer>(&reached)) return *no;
@@ -126,11 +128,8 @@ class OneReactionTank final : public Solver {
       const auto place = place_of(state);
       std::vector<double> y = place.C;
       y.push_back(place.temperature_K);
-      if (setup_.is_gas) {
-        state.stable = is_stable(transient, y);
-      } else {
-        state.stable = is_stable(balance, y);
-      }
+      state.growth = setup_.is_gas ? growth(transient, y) : growth(balance, y);
+      state.stable = state.growth < 0;
     }
     calls_before_ += balance.calls();
   }
@@ -141,7 +140,7 @@ class OneReactionTank final : public Solver {
     const double sign = curve_ ? curve_->way().sign() : 1;
     const Anchor there =
         from_end ? path_->at(curve_->way().end(), -sign * state.left) : path_->at(path_->inlet(), state.distance_out);
-    RestingPlace place{there.c, path_->temperature(state.xi), state.stable};
+    RestingPlace place{there.c, path_->temperature(state.xi), state.growth};
     for (double& c : place.C) c = std::max(c, 0.0);
     setup_.chemistry.concentrations_of_amounts(place.C, place.temperature_K, setup_.inlet_Pa, place.C);
     return place;

@@ -50,8 +50,7 @@ RatePath::RatePath(const Setup& setup, const Exchange& exchange)
   if (!setup.T_moves()) return;
   linear_ = heat_is_constant(chemistry);
   if (!linear_) return;
-  const double capacity =
-      heat_capacity(chemistry, setup.arrives.xi_mol_m3, setup.inlet_K) + exchange.per_K_J_m3_K;
+  const double capacity = heat_capacity(chemistry, setup.arrives.xi_mol_m3, setup.inlet_K) + exchange.per_K_J_m3_K;
   T_at_inlet_ += (exchange.added_J_m3 - exchange.per_K_J_m3_K * (setup.inlet_K - exchange.medium_K)) / capacity;
   dT_dxi_ = -setup.dH(0, setup.inlet_K) / capacity;
 }

@@ -21,7 +21,8 @@ struct Anchor {
   std::vector<double> c;
 };
 
-/// One reaction, held, adiabatic or in a tank on its jacket, at constant pressure: T is a function of the extent, so there is one scalar rate
+/// One reaction, held, adiabatic or in a tank on its jacket, at constant pressure: T is a function of the extent, so
+/// there is one scalar rate
 ///   R(xi) = capacity r(C(xi), T(xi)),   mol per m3 of the coordinate volume per s
 class RatePath {
  public:

@@ -33,6 +33,7 @@ std::vector<double> extents_of(const Setup& setup, std::span<const double> C) {
   return b;
 }
 
+constexpr double small_swing = 0.02;   // of the scale: near enough to a state for its own growth to rule
 constexpr double rests_within = 1e-4;  // of the scale: nearer than that a start-up has come to a stable state
 constexpr double first_stretch = 30, longest = 1e7;  // space times: near a fold a start-up creeps long
 constexpr double at_rest = 1e-5;                     // largest change of the scale per space time
@@ -75,7 +76,9 @@ class StartUp {
       if (auto failed = go(stretch)) return *failed;
       if (path_.ended_by()) return arrived();
       if (drift() < at_rest && rests()) return end_;
-      if (cycles()) {
+      const double before = swing(0.5, 0.75), last = swing(0.75, 1);
+      if (shrinks_around_a_state(before, last)) return end_;
+      if (goes_on(before, last)) {
         end_.cycle = true;
         return end_;
       }
@@ -89,7 +92,7 @@ class StartUp {
   double away_from_states(std::span<const double> y) const {
     double least = 1;
     for (std::size_t s = 0; s < states_.size(); ++s)
-      if (places_[s].stable) least = std::min(least, apart(y, states_[s], scale_) - within_[s]);
+      if (places_[s].stable()) least = std::min(least, apart(y, states_[s], scale_) - within_[s]);
     return least;
   }
 
@@ -147,12 +150,27 @@ class StartUp {
   }
 
   /// The last quarter of the stretch swings as far as the one before it and as that of the last stretch.
-  bool cycles() {
-    const double before = swing(0.5, 0.75), last = swing(0.75, 1);
-    const bool goes_on = last > 100 * rests_within && std::abs(before - last) <= 0.002 * last &&
-                         std::abs(last - last_swing_) <= 0.01 * last;
+  bool goes_on(double before, double last) {
+    const bool same = last > 100 * rests_within && std::abs(before - last) <= 0.002 * last &&
+                      std::abs(last - last_swing_) <= 0.01 * last;
     last_swing_ = last;
-    return goes_on;
+    return same;
+  }
+  /// Small swings around one state that shrink: around a stable one at least half as fast as small ones do, so that
+  /// they die down; around one that is not stable they end in a cycle.
+  bool shrinks_around_a_state(double before, double last) {
+    if (!(last > 0) || last > small_swing || !(last < before)) return false;
+    const double rate = std::log(last / before) / (path_.end() / 4);
+    for (std::size_t s = 0; s < states_.size(); ++s) {
+      if (apart(y_, states_[s], scale_) > last) continue;
+      if (places_[s].stable() && rate > places_[s].growth / 2) return false;
+      if (places_[s].stable())
+        end_.at = s;
+      else
+        end_.cycle = true;
+      return true;
+    }
+    return false;
   }
   /// Where the temperature (a held tank: the last species) turns more than once: how far the contents swing.
   double swing(double from, double to) const {
@@ -184,7 +202,7 @@ class StartUp {
   StartEnd arrived() {
     double nearest = std::numeric_limits<double>::infinity();
     for (std::size_t s = 0; s < states_.size(); ++s)
-      if (const double d = apart(y_, states_[s], scale_); places_[s].stable && d < nearest) {
+      if (const double d = apart(y_, states_[s], scale_); places_[s].stable() && d < nearest) {
         nearest = d;
         end_.at = s;
       }

@@ -10,7 +10,8 @@ namespace vatwright {
 struct RestingPlace {
   std::vector<double> C;  ///< mol per m3 of fluid
   double temperature_K = 0;
-  bool stable = false;
+  double growth = 0;  ///< of small departures, per space time; below zero: stable
+  [[nodiscard]] bool stable() const { return growth < 0; }
 };
 
 /// Whether the places named are all there are.
@@ -28,8 +29,9 @@ struct StartEnd {
                                      ///< absent where that is no question
 };
 /// The start-up integrated, feed open and medium on, until it is within 1e-4 (of all that is fed, and of 300 K) of a
-/// stable place, or hardly moves, or swings as far in one quarter of the time as in the one before. NoAnswer::unsolved:
-/// none of these within 1e7 space times.
+/// stable place; or small swings shrink around one place, which they settle in if it is stable and circle if not; or it
+/// swings as far in one quarter of the time as in the one before; or it rests. NoAnswer::unsolved: none of these within
+/// 1e7 space times.
 Outcome<StartEnd> follow_start(const Setup& setup, const StartState& start, double feed_m3_s,
                                std::span<const RestingPlace> places, Places known);
 

@@ -40,8 +40,7 @@ std::vector<double> TankBalance::contents(std::span<const double> xi) const {
   std::vector<double> y(n_);
   setup_.chemistry.kinetics.amounts(setup_.chemistry.feed.c_mol_m3, xi, y);
   for (double& c : y) c = std::max(c, 0.0);
-  if (moves_)
-    y.push_back(mixed_temperature(setup_.chemistry, setup_.arrives.xi_mol_m3, setup_.inlet_K, xi, exchange_));
+  if (moves_) y.push_back(mixed_temperature(setup_.chemistry, setup_.arrives.xi_mol_m3, setup_.inlet_K, xi, exchange_));
   return y;
 }
 
@@ -76,8 +75,8 @@ bool TankBalance::operator()(std::span<const double> y, std::span<double> F) {
     for (std::size_t j = 0; j < R_; ++j) F[i] -= tau_ * nu(i, j) * r_[j];
   }
   if (moves_) {
-    double heat = sensible_heat(setup_.chemistry, setup_.arrives.xi_mol_m3, setup_.inlet_K, T) -
-                  exchange_.added_J_m3 + exchange_.per_K_J_m3_K * (T - exchange_.medium_K);
+    double heat = sensible_heat(setup_.chemistry, setup_.arrives.xi_mol_m3, setup_.inlet_K, T) - exchange_.added_J_m3 +
+                  exchange_.per_K_J_m3_K * (T - exchange_.medium_K);
     for (std::size_t j = 0; j < R_; ++j) heat += tau_ * r_[j] * setup_.dH(j, T);
     F[n_] = heat / heat_capacity(setup_.chemistry, setup_.arrives.xi_mol_m3, T);
   }
@@ -124,7 +123,8 @@ bool TankBalance::jacobian(std::span<const double> y, std::span<double> J) {
     J[n_ * m + k] = heat / capacity;
   }
   double heat = capacity + exchange_.per_K_J_m3_K;
-  for (std::size_t j = 0; j < R_; ++j) heat += tau_ * (dr_dT_[j] * setup_.dH(j, T) + r_[j] * (setup_.dH(j, T + h) - setup_.dH(j, T)) / h);
+  for (std::size_t j = 0; j < R_; ++j)
+    heat += tau_ * (dr_dT_[j] * setup_.dH(j, T) + r_[j] * (setup_.dH(j, T + h) - setup_.dH(j, T)) / h);
   J[n_ * m + n_] = heat / capacity;
   return true;
 }

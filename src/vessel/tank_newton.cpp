@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <limits>
 
 #include "vatwright/numeric/matrix.hpp"
 
@@ -101,25 +102,30 @@ std::optional<std::vector<double>> settle(TankBalance& balance, std::vector<doub
   return Settling(balance, std::move(y)).run();
 }
 
-bool is_stable(TankBalance& balance, std::span<const double> y) {
+namespace {
+constexpr double no_value = std::numeric_limits<double>::infinity();
+}
+
+double growth(TankBalance& balance, std::span<const double> y) {
   const std::size_t m = balance.size();
   std::vector<double> J(m * m);
-  if (!balance.jacobian(y, J)) return false;
+  if (!balance.jacobian(y, J)) return no_value;
   const double warms = balance.warms_slower(y);
   for (std::size_t k = 0; k < m && m > balance.species(); ++k) J[(m - 1) * m + k] *= warms;
   const auto all = eigenvalues(J, static_cast<int>(m));
-  return !all.empty() && std::ranges::all_of(all, [](const auto& l) { return l.real() > 0; });
+  if (all.empty()) return no_value;
+  return -std::ranges::min(all, {}, [](const auto& l) { return l.real(); }).real();
 }
 
-bool is_stable(Transient& transient, std::span<const double> y) {
+double growth(Transient& transient, std::span<const double> y) {
   const std::size_t m = transient.size();
   std::vector<double> J(m * m);
   transient.jacobian(y, J);
   auto all = eigenvalues(J, static_cast<int>(m));
-  if (all.empty()) return false;
+  if (all.size() < 2) return no_value;
   // a gas keeps sum C = P/(R T): the direction across that is neither left nor sought, its eigenvalue is rounding
   all.erase(std::ranges::min_element(all, {}, [](const auto& l) { return std::abs(l); }));
-  return std::ranges::all_of(all, [](const auto& l) { return l.real() < 0; });
+  return std::ranges::max(all, {}, [](const auto& l) { return l.real(); }).real();
 }
 
 }  // namespace vatwright

@@ -10,10 +10,11 @@ namespace vatwright {
 /// close better each time; where that stalls, steps of the transient (implicit Euler, growing). nullopt: none found.
 std::optional<std::vector<double>> settle(TankBalance& balance, std::vector<double> y);
 
-/// Whether the transient balances of a liquid, or of a gas at one temperature, return to the state: every eigenvalue of
-/// -dF/dy has a real part below zero, the heat balance over what the contents take up.
-bool is_stable(TankBalance& balance, std::span<const double> y);
+/// How fast the transient balances of a liquid, or of a gas at one temperature, leave the state, per space time: the
+/// largest real part of the eigenvalues of -dF/dy, the heat balance over what the contents take up. Below zero: stable.
+/// Infinite where it can not be had.
+double growth(TankBalance& balance, std::span<const double> y);
 /// The same of a gas whose temperature moves, y as the transient has it.
-bool is_stable(Transient& transient, std::span<const double> y);
+double growth(Transient& transient, std::span<const double> y);
 
 }  // namespace vatwright

@@ -102,20 +102,20 @@ class TankOfReactions final : public Solver {
                                       double feed_m3_s) const {
     std::vector<RestingPlace> places;
     for (const Contents& y : found) {
-      RestingPlace place{std::vector<double>(balance.species()), balance.temperature(y), false};
+      RestingPlace place{std::vector<double>(balance.species()), balance.temperature(y), 0};
       setup_.chemistry.concentrations_of_amounts(std::span(y).first(balance.species()), place.temperature_K,
                                                  setup_.inlet_Pa, place.C);
-      place.stable = stable(balance, y, place, feed_m3_s);
+      place.growth = growth_at(balance, y, place, feed_m3_s);
       places.push_back(std::move(place));
     }
     return places;
   }
-  bool stable(TankBalance& balance, const Contents& y, const RestingPlace& place, double feed_m3_s) const {
-    if (!(setup_.is_gas && setup_.T_moves())) return is_stable(balance, y);
+  double growth_at(TankBalance& balance, const Contents& y, const RestingPlace& place, double feed_m3_s) const {
+    if (!(setup_.is_gas && setup_.T_moves())) return growth(balance, y);
     Transient transient(setup_, feed_m3_s);
     std::vector<double> at = place.C;
     at.push_back(place.temperature_K);
-    return is_stable(transient, at);
+    return growth(transient, at);
   }
 
   /// Follows the start-up until it rests at a state (which may be one not found before: it is added).
@@ -136,7 +136,7 @@ class TankOfReactions final : public Solver {
     outcome.start_peak_K = setup_.inlet_K;
     auto places = places_of(balance, found, feed_m3_s);
     std::optional<std::size_t> reached;
-    if (found.size() == 1 && places[0].stable && (setup_.is_held || detail == Detail::map)) {
+    if (found.size() == 1 && places[0].stable() && (setup_.is_held || detail == Detail::map)) {
       reached = 0;
       if (!setup_.is_held) outcome.start_peak_K.reset();
     } else {
@@ -152,7 +152,7 @@ class TankOfReactions final : public Solver {
     for (std::size_t s = 0; s < found.size(); ++s) {
       Extents xi = balance.extents(found[s]);
       const double X = setup_.chemistry.kinetics.conversion(xi);
-      outcome.states.push_back({std::move(xi), X, balance.temperature(found[s]), places[s].stable, s == reached});
+      outcome.states.push_back({std::move(xi), X, balance.temperature(found[s]), places[s].stable(), s == reached});
     }
     if (!reached) {
       outcome.cycle = true;

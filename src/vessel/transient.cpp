@@ -83,8 +83,7 @@ double Transient::warming(std::span<const double> y, double T) const {
   const Chemistry& chemistry = setup_.chemistry;
   double heat = exchange_.added_J_m3 - exchange_.per_K_J_m3_K * (T - exchange_.medium_K) -
                 sensible_heat(chemistry, setup_.arrives.xi_mol_m3, setup_.arrives.temperature_K, T);
-  for (std::size_t j = 0; j < r_.size(); ++j)
-    heat -= tau_ * r_[j] * setup_.dH(j, T);
+  for (std::size_t j = 0; j < r_.size(); ++j) heat -= tau_ * r_[j] * setup_.dH(j, T);
   return heat / capacity(y, T);
 }
 
