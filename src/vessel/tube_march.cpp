@@ -28,25 +28,48 @@ void TubeMarch::read(double s, std::span<double> y) const {
   at->track.read(std::clamp(s, at->track.begin(), at->track.end()), y);
 }
 
+/// The slip of one step from a to b (which may lie inside it), as the shift that closes it.
+TubeMarch::Rates TubeMarch::slip_of(const Stretch& stretch, double a, double b) {
+  balance_.set_exhausted(stretch.exhausted);
+  Rates slip(balance_.size()), from(balance_.size()), to(balance_.size());
+  add_integral(stretch.track, a, b, gauss(stretch.track, a, b), 14, slip);
+  stretch.track.read(a, from);
+  stretch.track.read(b, to);
+  for (std::size_t i = 0; i < slip.size(); ++i) slip[i] = to[i] - from[i] - slip[i];
+  close_by_shift(to, b - a, slip);
+  return slip;
+}
+
+/// The sum of all slips up to s. Those of whole steps are kept: one march serves many readings.
+TubeMarch::Rates TubeMarch::slips(double s) {
+  const auto kept = balance_.exhausted();
+  for (; checked_.stretch < stretches_.size(); ++checked_.stretch, checked_.step = 0) {
+    const Stretch& stretch = stretches_[checked_.stretch];
+    const auto& nodes = stretch.track.nodes();
+    for (; checked_.step + 1 < nodes.size() && nodes[checked_.step + 1] <= s; ++checked_.step) {
+      Rates total = slip_of(stretch, nodes[checked_.step], nodes[checked_.step + 1]);
+      if (!sums_.empty())
+        for (std::size_t i = 0; i < total.size(); ++i) total[i] += sums_.back().total[i];
+      sums_.push_back({nodes[checked_.step + 1], std::move(total)});
+    }
+    if (checked_.step + 1 < nodes.size()) break;
+  }
+  const auto after = std::ranges::upper_bound(sums_, s, {}, &Sum::end);
+  Rates total = after == sums_.begin() ? Rates(balance_.size()) : std::prev(after)->total;
+  const double whole = after == sums_.begin() ? start_s_ : std::prev(after)->end;
+  for (const Stretch& stretch : stretches_)
+    if (s > whole && stretch.track.begin() <= whole && whole < stretch.track.end()) {
+      const Rates rest = slip_of(stretch, whole, s);
+      for (std::size_t i = 0; i < total.size(); ++i) total[i] += rest[i];
+    }
+  balance_.set_exhausted(kept);
+  return total;
+}
+
 double TubeMarch::residual(double s) {
   const std::size_t R = balance_.extents(), rows = balance_.size() - (balance_.with_pressure() ? 1 : 0);
-  Rates total(rows), from(balance_.size()), to(balance_.size());
-  const auto kept = balance_.exhausted();
-  for (const Stretch& stretch : stretches_) {
-    balance_.set_exhausted(stretch.exhausted);
-    const auto& nodes = stretch.track.nodes();
-    for (std::size_t k = 0; k + 1 < nodes.size() && nodes[k] < s; ++k) {
-      const double a = nodes[k], b = std::min(nodes[k + 1], s);
-      Rates slip(balance_.size());
-      add_integral(stretch.track, a, b, gauss(stretch.track, a, b), 14, slip);
-      stretch.track.read(a, from);
-      stretch.track.read(b, to);
-      for (std::size_t i = 0; i < slip.size(); ++i) slip[i] = to[i] - from[i] - slip[i];
-      close_by_shift(to, b - a, slip);
-      for (std::size_t j = 0; j < rows; ++j) total[j] += slip[j];
-    }
-  }
-  balance_.set_exhausted(kept);
+  const Rates total = slips(s);
+  Rates to(balance_.size());
   read(s, to);
   double worst = 0, terms = balance_.scale()[0];  // of what is fed
   for (std::size_t j = 0; j < R; ++j) {

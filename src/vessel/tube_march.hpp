@@ -45,6 +45,13 @@ class TubeMarch {
     std::vector<bool> exhausted;
   };
 
+  /// The sum of slips up to the end of a step.
+  struct Sum {
+    double end;
+    Rates total;
+  };
+  Rates slip_of(const Stretch& stretch, double a, double b);
+  Rates slips(double s);
   Rates gauss(const Track& track, double a, double b);
   void add_integral(const Track& track, double a, double b, const Rates& whole, int depth, Rates& sum);
   void close_by_shift(const Rates& y, double h, Rates& slip);
@@ -57,6 +64,11 @@ class TubeMarch {
   std::optional<std::pair<double, double>> medium_range_;
   double s_ = 0;
   std::vector<Stretch> stretches_;
+  struct {
+    std::size_t stretch = 0, step = 0;
+  } checked_;  // the first step whose slip is not in sums_
+  std::vector<Sum> sums_;
+  static constexpr double start_s_ = 0;
   std::optional<NoAnswer> failed_;
   bool used_up_ = false;
   int medium_left_ = 0;
