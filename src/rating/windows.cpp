@@ -16,12 +16,14 @@ constexpr double one_rate = 1e-6;           // two ends this near count as one
 constexpr double turned_negative = -1e-11;  // a margin that has left zero, not rounding
 constexpr double worth_a_look = 0.1;        // squeezed margin: less than this between two samples is no jump
 constexpr double is_a_jump = 1e-3;          // squeezed margin, left over at the width of an end
+constexpr double rests_on_zero = -1e-14;    // a margin of zero but for rounding
 constexpr double look_between = 4;          // how much further than the neighbours differ a turning point may reach
 
 /// One trial, as the search sees it: x = ln(feed rate), m the smallest margin squeezed into (-1, 1), a failed trial -1.
 struct Sample {
   double x = 0, feed_m3_s = 0, m = -1;
   bool inside = false;
+  std::vector<std::optional<double>> margins = {};  ///< each by itself, in the order of the trial; none where it failed
 };
 
 double squeeze(double margin) { return margin / (1 + std::abs(margin)); }
@@ -64,7 +66,8 @@ class Search {
   Trial try_at(double feed_m3_s) {
     ++windows_.trials;
     Trial trial = trial_(feed_m3_s);
-    if (trial.fails && !trial.fails_why.empty() && windows_.why.empty()) {
+    const bool first_unsolved = trial.unsolved && !windows_.unsolved;  // goes before what only lacks data
+    if (trial.fails && !trial.fails_why.empty() && (windows_.why.empty() || first_unsolved)) {
       windows_.why = "at " + show(feed_m3_s, Shown::feed) + ": " + trial.fails_why;
     }
     windows_.unsolved = windows_.unsolved || trial.unsolved;
@@ -76,7 +79,9 @@ class Search {
     if (trial.fails) return {x, feed_m3_s, -1, false};
     const double least = smallest_margin(trial);
     const double m = std::isinf(least) && least > 0 ? 1 : squeeze(least);
-    return {x, feed_m3_s, m, least >= -holds_within};
+    Sample s{x, feed_m3_s, m, least >= -holds_within};
+    for (const auto& [name, margin] : trial.margins) s.margins.push_back(margin);
+    return s;
   }
   Sample sample(double x) { return sample(x, std::exp(x)); }
 
@@ -89,20 +94,35 @@ class Search {
     samples_.push_back(sample(b, hi_m3_s_));
   }
 
-  /// Where the smallest margin jumps between two samples on one side, both sides of the jump are samples too: a window
-  /// may open right behind it.
+  /// How far apart two samples on one side lie: outside by the smallest margin, inside by the one that differs most
+  /// (one that rests near zero, such as the most working fill, would hide the others).
+  static double apart(const Sample& a, const Sample& b) {
+    double most = std::abs(a.m - b.m);
+    if (!a.inside || a.margins.size() != b.margins.size()) return most;
+    for (std::size_t k = 0; k < a.margins.size(); ++k)
+      if (a.margins[k] && b.margins[k])
+        most = std::max(most, std::abs(squeeze(*a.margins[k]) - squeeze(*b.margins[k])));
+    return most;
+  }
+
+  /// Where the margins jump between two samples on one side, both sides of the jump are samples too: a window may open
+  /// or close right behind it.
   void look_for_jumps() {
     std::vector<Sample> found;
     for (std::size_t i = 1; i < samples_.size(); ++i) {
       Sample a = samples_[i - 1], b = samples_[i];
-      if (a.inside != b.inside || std::abs(a.m - b.m) < worth_a_look) continue;
-      while (b.x - a.x > end_width && a.inside == b.inside && std::abs(a.m - b.m) >= worth_a_look) {
+      if (a.inside != b.inside || apart(a, b) < worth_a_look) continue;
+      while (b.x - a.x > end_width && apart(a, b) >= worth_a_look) {
         const double middle = a.x + (b.x - a.x) / 2;
         if (middle == a.x || middle == b.x) break;
         const Sample c = sample(middle);
-        (std::abs(c.m - a.m) > std::abs(b.m - c.m) ? b : a) = c;
+        if (c.inside != a.inside) {
+          found.push_back(c);
+          break;
+        }
+        (apart(c, a) > apart(b, c) ? b : a) = c;
       }
-      if (std::abs(a.m - b.m) < worth_a_look) continue;
+      if (apart(a, b) < worth_a_look) continue;
       found.push_back(a);
       found.push_back(b);
     }
@@ -115,39 +135,49 @@ class Search {
   }
 
   /// Where three samples lie on one side and the middle one is nearest to the other, the turning point may lie beyond
-  /// it.
+  /// it. Outside, all margins must be met at once: the smallest is followed. Inside, one that is broken ends it: each
+  /// is followed by itself, as one that rests near zero (the most working fill) would hide the others.
   void look_between_samples() {
     std::vector<Sample> found;
     for (std::size_t i = 1; i + 1 < samples_.size(); ++i) {
       const Sample &l = samples_[i - 1], &c = samples_[i], &r = samples_[i + 1];
       if (l.inside != c.inside || r.inside != c.inside) continue;
-      const double sign = c.inside ? -1 : 1;  // outside: the greatest is looked for; inside: the least
-      const double left = sign * (c.m - l.m), right = sign * (c.m - r.m);
-      if (left < 0 || right < 0 || (left == 0 && right == 0)) continue;
-      if (std::abs(c.m) > look_between * std::max(left, right)) continue;
-      if (auto other = beyond(l, c, r, sign)) found.push_back(*other);
+      if (!c.inside) {
+        look_beyond(found, l, c, r, [](const Sample& s) { return s.m; });
+        continue;
+      }
+      for (std::size_t k = 0; k < c.margins.size(); ++k) {
+        look_beyond(found, l, c, r,
+                    [k](const Sample& s) { return k < s.margins.size() ? squeeze(s.margins[k].value_or(1)) : s.m; });
+      }
     }
     put_in(found);
   }
 
-  std::optional<Sample> beyond(const Sample& l, const Sample& c, const Sample& r, double sign) {
+  template <typename MarginOf>
+  void look_beyond(std::vector<Sample>& found, const Sample& l, const Sample& c, const Sample& r, MarginOf margin_of) {
+    const double sign = c.inside ? -1 : 1;  // outside: the greatest is looked for; inside: the least
+    const double at = margin_of(c), left = sign * (at - margin_of(l)), right = sign * (at - margin_of(r));
+    if (left < 0 || right < 0 || std::max(left, right) <= -turned_negative) return;
+    if (std::abs(at) > look_between * std::max(left, right)) return;
     std::optional<Sample> best;
     const auto height = [&](double x) {
       const Sample s = sample(x);
       if (s.inside != c.inside && (!best || sign * s.m > sign * best->m)) best = s;
-      return sign * s.m;
+      return sign * margin_of(s);
     };
     find_peak(height, l.x, r.x, 1e-7);
-    return best;
+    if (best) found.push_back(*best);
   }
 
   struct End {
     Sample in, out;
   };
   /// The end between a sample inside and one outside: a crossing of zero, or a jump. A margin that rests on zero (a
-  /// hold temperature that equals the rating) is followed to the edge of what still holds.
+  /// hold temperature that equals the rating, a conversion of 1) is followed to where it leaves zero, one that is a
+  /// little below to the edge of what still holds.
   End refine(Sample in, Sample out) {
-    const double shift = in.m > 0 ? 0 : 2 * holds_within;
+    const double shift = in.m > 0 ? 0 : in.m >= rests_on_zero ? -rests_on_zero : 2 * holds_within;
     const auto narrow = [&](double x) {
       const Sample s = sample(x);
       if ((s.x - in.x) * (s.x - out.x) < 0) (s.inside && s.m + shift >= 0 ? in : out) = s;
@@ -228,7 +258,8 @@ std::pair<double, double> search_range(double fluid_volume_m3) {
   return {1e-6 * fluid_volume_m3 / 3600, 1e8 * fluid_volume_m3 / 3600};
 }
 Assumed assumed_search() {
-  return {"windows", "1e-6 to 1e8 fluid volumes per hour", "the range of feed rates searched; an end that reaches it is left open"};
+  return {"windows", "1e-6 to 1e8 fluid volumes per hour",
+          "the range of feed rates searched; an end that reaches it is left open"};
 }
 
 Windows find_windows(const std::function<Trial(double feed_m3_s)>& trial, double lo_m3_s, double hi_m3_s) {

@@ -100,9 +100,12 @@ class OneReactionTube final : public Solver {
     const bool cancels =
         way.kind() == EndKind::equilibrium;  // its rate loses digits as e^u, which the extent does not see
     const double u_sound = cancels ? std::clamp(30 - std::log(track_->cancels()), 0.0, u_out) : u_out;
+    const std::vector<double> kinks = path_.kinks(way.sign());
     double total = 0, at = 0;
     while (at < u_sound) {
-      const double next = std::min(u_sound, at + 2);
+      double next = std::min(u_sound, at + 2);
+      for (const double d : kinks)  // the rule expects a smooth rate on every piece
+        if (const double u = d < L ? -std::log1p(-d / L) : u_sound; u > at) next = std::min(next, u);
       const double rel_tol = cancels ? std::clamp(1e-14 * track_->cancels() * std::exp(next), 1e-11, 0.1) : 1e-11;
       const auto piece = integrate(slowness, at, next, {.rel_tol = rel_tol, .abs_tol = 1e-12 * t});
       if (const auto* sum = answer(piece))

@@ -88,6 +88,29 @@ TEST_CASE("a gap far narrower than the samples is found", "[windows]") {
   CHECK(*w.intervals[1].lo == Approx(3.3 * std::exp(1e-3)).epsilon(1e-9));
 }
 
+TEST_CASE("a margin that rests on zero hides no gap and moves no end", "[windows]") {
+  const double least = std::exp(1.01), most = std::exp(1.05);  // zeros of the target, far nearer than two samples
+  const auto w = windows_of([&](double v) {
+    const double x = std::log(v);
+    return Margins{{"target", (7 - x) / 7}, {"fill", 0.0}, {"heat removal", (x - 1.01) * (x - 1.05)}};
+  });
+  REQUIRE(w.intervals.size() == 2);
+  CHECK(*w.intervals[0].hi == Approx(least).epsilon(1e-9));
+  CHECK(*w.intervals[1].lo == Approx(most).epsilon(1e-9));
+  CHECK(*w.ceiling_m3_s == Approx(std::exp(7.0)).epsilon(1e-9));
+}
+
+TEST_CASE("a margin that leaves zero as a square ends where it leaves", "[windows]") {
+  // order 1/2 in a tube: 1 - X = (1 - v1/v)^2 above the rate v1 at which all is used up (closed form)
+  const auto w = windows_of([](double v) {
+    const double left = v > 2 ? 1 - 2 / v : 0;
+    return Margins{{"target", -left * left}};
+  });
+  REQUIRE(w.ceiling_m3_s);
+  CHECK(*w.ceiling_m3_s == Approx(2).epsilon(2e-7));
+  CHECK(*w.ends.ceiling == "target");
+}
+
 TEST_CASE("a jump is an end, and the end given out is inside", "[windows]") {
   const auto w = windows_of([](double v) { return Margins{{"target", v < 0.7 ? 0.05 : -0.4}}; });
   REQUIRE(w.intervals.size() == 1);

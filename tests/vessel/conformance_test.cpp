@@ -191,6 +191,22 @@ TEST_CASE("a measured table ends where it was measured", "[vessel][table]") {
   }
 }
 
+TEST_CASE("a measured table with sharp bends is answered at every feed rate within it", "[vessel][table]") {
+  Plant plant({2000, 0});
+  Reaction& r = plant.react({{0, -1}, {1, 1}}, 1, {{0, 1}});
+  r.forward = RateTable{{0, 0.2, 0.4, 0.6, 0.8}, {9.1 / 60, 11.6 / 60, 5.9 / 60, 4.0 / 60, 2.05 / 60}, {}};
+  Rated tube(plant, tube_of(1));
+  // space times from scipy 1.10's PchipInterpolator through 1/consumption (its end slopes are the ones wanted here)
+  CHECK(tube.conversion(1 / 8653.826817113199) == Approx(0.55).epsilon(1e-10));
+  CHECK(tube.conversion(1 / 17400.99761678746) == Approx(0.78).epsilon(1e-10));
+  for (double v = 1 / 17400.0; v < 0.1; v *= 1.003) {
+    INFO(v);
+    const auto outcome = tube.run().at(v, Detail::full);
+    REQUIRE(answer(outcome) != nullptr);  // the check of the balances heeds the bends too
+    REQUIRE(answer(outcome)->residual < 1e-10);
+  }
+}
+
 TEST_CASE("a let-down to more than arrives is kept for the limits", "[vessel][pressure]") {
   Plant plant = esterification();
   plant.feed.pressure_Pa = 3e5;
