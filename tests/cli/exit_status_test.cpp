@@ -1,5 +1,4 @@
-// Exit statuses: the first of 2, 4, 3, 1 that applies, else 0. (3 needs a failure of the numerics: none is known to
-// provoke.)
+// Exit statuses: the first of 2, 4, 3, 1 that applies, else 0.
 #include <fcntl.h>
 #include <unistd.h>
 
@@ -75,6 +74,28 @@ TEST_CASE("4 where the answer can not be written, before 1", "[cli][exit]") {
   std::ostream out(&full);
   std::string err;
   CHECK(run_into(out, {"--help"}, err) == Exit::unwritten);
+}
+
+TEST_CASE("3 where something can not be solved, said of which vessel, and the rest is answered", "[cli][exit]") {
+  // Two reactions in a circle that both take up heat: at a low feed rate no temperature above 0 K balances.
+  const std::vector<std::string> screen = {"screen", fixture("bay.toml"), fixture("circle.toml"), "--json"};
+  const Ran ran = run_program(screen);
+  CHECK(ran.exit == Exit::unsolved);
+  CHECK(ran.err.find("P-1: could not be solved") != std::string::npos);
+  CHECK(ran.out.find("\"conversion\": null") != std::string::npos);
+  auto fast = screen;  // at a high one there is: the tube's X = (1 - exp(-2 k tau))/2 by hand
+  fast.insert(fast.end(), {"--feed-rate", "18 m3/h"});
+  const Ran answered = run_program(fast);
+  CHECK(answered.exit == Exit::unsolved);  // its window reaches down to where nothing is solved
+  CHECK(answered.out.find("\"conversion\": 0.3051694313") != std::string::npos);
+
+  auto wanted = screen;
+  wanted.emplace_back("--require-fit");
+  CHECK(run_program(wanted).exit == Exit::unsolved);  // before 1
+  Full full;
+  std::ostream out(&full);
+  std::string err;
+  CHECK(run_into(out, screen, err) == Exit::unwritten);  // after 4
 }
 
 TEST_CASE("a reader that has gone is quiet, a full disk is not", "[cli][exit]") {
