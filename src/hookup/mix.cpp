@@ -45,8 +45,8 @@ Outcome<Stream> mix(const Chemistry& chemistry, std::span<const Stream> branches
     out.pressure_Pa = std::min(out.pressure_Pa, s.pressure_Pa);
   }
   for (std::size_t j = 0; j < out.xi_mol_m3.size(); ++j) {
-    out.xi_mol_m3[j] = 0;
-    for (const Stream& s : branches) out.xi_mol_m3[j] += s.feed_m3_s / out.feed_m3_s * s.xi_mol_m3[j];
+    const double first = branches.front().xi_mol_m3[j];  // counted from there, what is equal in all stays exactly that
+    for (const Stream& s : branches) out.xi_mol_m3[j] += s.feed_m3_s / out.feed_m3_s * (s.xi_mol_m3[j] - first);
   }
   const auto T = mixed_temperature(chemistry, branches, out.feed_m3_s);
   if (const auto* why = std::get_if<NoAnswer>(&T)) return NoAnswer{why->kind, "temperature after mixing: " + why->why};

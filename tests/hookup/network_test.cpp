@@ -22,6 +22,15 @@ TEST_CASE("branches mix by flow, at the lowest pressure", "[mix]") {
   CHECK(answer(out)->temperature_K == Approx(330).epsilon(1e-14));
 }
 
+TEST_CASE("branches in which all is used up mix to exactly that", "[mix]") {
+  Problem p = power_law({tank("A", 1)}, 1);  // shares that do not add to 1 in doubles must not make more than was fed
+  for (double share = 1e-4; share < 1; share += 1e-3) {
+    const std::vector<Stream> in = {stream(share, 0.7, 300, 1e5), stream(1 - share, 0.7, 300, 1e5)};
+    REQUIRE(answer(mix(p.duty.chemistry, in)));
+    CHECK(answer(mix(p.duty.chemistry, in))->xi_mol_m3[0] == 0.7);
+  }
+}
+
 TEST_CASE("mixing keeps the enthalpy where heat capacities differ", "[mix]") {
   // By hand: A 100 and B 200 J/mol/K, 1 mol/m3 of A in the feed. Stream 1: 1 m3/s unreacted at 300 K, 100 W/K; stream 2: 3 m3/s at
   // xi = 0.5, 3 (0.5 100 + 0.5 200) = 450 W/K at 350 K; T = (100 300 + 450 350)/550.
