@@ -33,6 +33,8 @@ std::vector<double> extents_of(const Setup& setup, std::span<const double> C) {
   return b;
 }
 
+constexpr double creeps_on = 1e5;      // space times
+constexpr double small_step = 1e-3;    // of the scale
 constexpr double small_swing = 0.02;   // of the scale: near enough to a state for its own growth to rule
 constexpr double rests_within = 1e-4;  // of the scale: nearer than that a start-up has come to a stable state
 constexpr double first_stretch = 30, longest = 1e7;  // space times: near a fold a start-up creeps long
@@ -75,10 +77,13 @@ class StartUp {
       if (away_from_states(y_) <= 0) return arrived();
       if (auto failed = go(stretch)) return *failed;
       if (path_.ended_by()) return arrived();
-      if (drift() < at_rest && rests()) return end_;
-      const double before = swing(0.5, 0.75), last = swing(0.75, 1);
+      if (drift() < at_rest) {
+        if (rests()) return end_;
+        if (done > creeps_on) step_past();
+      }
+      const double first = swing(0.25, 0.5), before = swing(0.5, 0.75), last = swing(0.75, 1);
       if (shrinks_around_a_state(before, last)) return end_;
-      if (goes_on(before, last)) {
+      if (goes_on(first, before, last)) {
         end_.cycle = true;
         return end_;
       }
@@ -149,12 +154,10 @@ class StartUp {
     return most;
   }
 
-  /// The last quarter of the stretch swings as far as the one before it and as that of the last stretch.
-  bool goes_on(double before, double last) {
-    const bool same = last > 100 * rests_within && std::abs(before - last) <= 0.002 * last &&
-                      std::abs(last - last_swing_) <= 0.01 * last;
-    last_swing_ = last;
-    return same;
+  /// Three quarters of the stretch swing equally far.
+  static bool goes_on(double first, double before, double last) {
+    return last > 100 * rests_within && std::abs(before - last) <= 0.002 * last &&
+           std::abs(first - last) <= 0.002 * last;
   }
   /// Small swings around one state that shrink: around a stable one at least half as fast as small ones do, so that
   /// they die down; around one that is not stable they end in a cycle.
@@ -209,6 +212,18 @@ class StartUp {
     end_.peak_K = std::max(end_.peak_K, places_[*end_.at].temperature_K);
     return end_;
   }
+  /// Where a state was until a fold took it away, the contents creep, slower than a march can tell from rest: a step on
+  /// towards the nearest stable state, which is where they go.
+  void step_past() {
+    const std::vector<double>* next = nullptr;
+    for (std::size_t s = 0; s < states_.size(); ++s)
+      if (places_[s].stable() && (next == nullptr || apart(y_, states_[s], scale_) < apart(y_, *next, scale_)))
+        next = &states_[s];
+    if (next == nullptr) return;
+    const double share = small_step / apart(y_, *next, scale_);
+    for (std::size_t i = 0; i < y_.size(); ++i) y_[i] += share * ((*next)[i] - y_[i]);
+  }
+
   /// At a state, if not at one told stable (a start right on it); or at rest where other states may be. Where none can
   /// be, it creeps past what was a state a little way before a fold.
   bool rests() {
@@ -216,9 +231,12 @@ class StartUp {
     end_.temperature_K = transient_.temperature(y_);
     end_.xi = extents_of(setup_, std::span(y_).first(n));
     double nearest = 10 * rests_within;
+    bool stable = false;
     for (std::size_t s = 0; s < states_.size(); ++s)
-      if (const double d = apart(y_, states_[s], scale_); d < nearest) {
+      if (const double d = apart(y_, states_[s], scale_);
+          d < 10 * rests_within && (places_[s].stable() > stable || (places_[s].stable() == stable && d < nearest))) {
         nearest = d;
+        stable = places_[s].stable();
         end_.at = s;
       }
     return end_.at || others_may_be_;
@@ -231,7 +249,6 @@ class StartUp {
   std::vector<std::vector<double>> states_;
   std::vector<double> within_;
   bool others_may_be_;
-  double last_swing_ = 0;
   Track path_;
   StartEnd end_;
 };

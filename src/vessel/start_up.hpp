@@ -30,7 +30,7 @@ struct StartEnd {
 };
 /// The start-up integrated, feed open and medium on, until it is within 1e-4 (of all that is fed, and of 300 K) of a
 /// stable place; or small swings shrink around one place, which they settle in if it is stable and circle if not; or it
-/// swings as far in one quarter of the time as in the one before; or it rests. NoAnswer::unsolved: none of these within
+/// swings equally far in three quarters of the time; or it rests. NoAnswer::unsolved: none of these within
 /// 1e7 space times.
 Outcome<StartEnd> follow_start(const Setup& setup, const StartState& start, double feed_m3_s,
                                std::span<const RestingPlace> places, Places known);

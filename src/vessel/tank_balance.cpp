@@ -160,7 +160,7 @@ double TankBalance::imbalance(std::span<const double> y) {
   }
   if (moves_) {
     const double capacity = heat_capacity(setup_.chemistry, setup_.arrives.xi_mol_m3, T);
-    double terms = T + std::abs(exchange_.per_K_J_m3_K * (T - exchange_.medium_K)) / capacity;
+    double terms = T + exchange_.per_K_J_m3_K * (T + exchange_.medium_K) / capacity;
     for (std::size_t j = 0; j < R_; ++j) terms += tau_ * both_ways[j] * std::abs(setup_.dH(j, T)) / capacity;
     worst = std::max(worst, std::abs(F[n_]) / terms);
   }

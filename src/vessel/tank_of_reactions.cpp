@@ -5,6 +5,7 @@
 #include "start_up.hpp"
 #include "tank_newton.hpp"
 #include "tank_outcome.hpp"
+#include "vatwright/thermal/adiabatic.hpp"
 
 namespace vatwright {
 namespace {
@@ -13,7 +14,8 @@ using Extents = std::vector<double>;
 using Contents = std::vector<double>;  // amounts and temperature, see TankBalance
 
 /// A tank with several reactions: every state found from a stated set of starts (the inlet, the start's fill, full
-/// extents of each reaction and of all in turn, the branches that come from very short and from very long space times),
+/// extents of each reaction and of all in turn, the branches that come from very short and from very long space times,
+/// the heat balance scanned over temperature where that moves),
 /// and where the start-up itself comes to rest. Which other states there are is not certain.
 class TankOfReactions final : public Solver {
  public:
@@ -86,10 +88,48 @@ class TankOfReactions final : public Solver {
     return at;
   }
 
+  /// The composition balances closed at one temperature after another, from cold to hot; where the heat balance changes
+  /// sign between two, a state lies there.
+  void scan_temperatures(TankBalance& balance, std::vector<Contents>& found) {
+    Setup held = setup_;
+    held.is_held = true;
+    const Exchange exchange = setup_.exchange(setup_.volume_m3 / balance.tau());
+    const auto& xi_in = setup_.arrives.xi_mol_m3;
+    double low = setup_.inlet_K, high = low;
+    if (setup_.is_jacketed()) low = std::min(low, exchange.medium_K), high = std::max(high, exchange.medium_K);
+    low = std::max(1.0, adiabatic_range(setup_.chemistry, xi_in, low).coldest_K - 1);
+    high = adiabatic_range(setup_.chemistry, xi_in, high).warmest_K + 1;
+    held.inlet_K = low;
+    TankBalance at(held, setup_.volume_m3 / balance.tau());
+    Contents c = at.contents(xi_in), F(balance.size()), before;
+    double excess_before = 0;
+    for (int k = 0; k <= scanned; ++k) {
+      held.inlet_K = low + (high - low) * k / scanned;
+      const auto closed = settle(at, c);
+      if (!closed) continue;
+      c = *closed;
+      Contents y = c;
+      y.push_back(held.inlet_K);
+      if (!balance(y, F)) continue;
+      if (!before.empty() && excess_before * F.back() <= 0) {
+        const double share = excess_before / (excess_before - F.back());
+        Contents between = y;
+        for (std::size_t i = 0; i < y.size(); ++i) between[i] = before[i] + share * (y[i] - before[i]);
+        add(balance, found, settle(balance, between));
+        add(balance, found, settle(balance, before));
+        add(balance, found, settle(balance, y));
+      }
+      before = y;
+      excess_before = F.back();
+    }
+    calls_ += at.calls();
+  }
+
   std::vector<Contents> find_states(TankBalance& balance) {
     std::vector<Contents> found;
     for (const Extents& xi : starts()) add(balance, found, settle(balance, balance.contents(xi)));
     add(balance, found, follow(balance, balance.contents(setup_.arrives.xi_mol_m3), 0.4, 10));
+    if (setup_.T_moves()) scan_temperatures(balance, found);
     if (!found.empty()) {
       const auto hottest = std::ranges::max(found, {}, [&](const Contents& y) { return balance.temperature(y); });
       add(balance, found, follow(balance, hottest, 4, 3));
@@ -167,6 +207,7 @@ class TankOfReactions final : public Solver {
   }
 
   const Setup& setup_;
+  static constexpr int scanned = 120;  // temperatures
   StartState start_;
   RateEvaluator tell_rate_;
   long calls_ = 0;

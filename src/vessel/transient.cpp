@@ -11,6 +11,7 @@ Transient::Transient(const Setup& setup, double feed_m3_s)
     : setup_(setup),
       evaluator_(setup.chemistry.kinetics),
       broken_(broken_orders(setup.chemistry.kinetics)),
+      mirror_(setup.chemistry.kinetics),
       exchange_(setup.exchange(feed_m3_s)),
       tau_(setup.volume_m3 / feed_m3_s),
       n_(static_cast<std::size_t>(setup.chemistry.kinetics.species())),
@@ -68,15 +69,17 @@ void Transient::jacobian(std::span<const double> y, std::span<double> J) {
 }
 
 void Transient::rates(std::span<const double> y, double T) {
-  for (std::size_t i = 0; i < n_; ++i) C_[i] = y[i];
+  std::ranges::copy(y.first(n_), C_.begin());
+  mirror_.turn_up(C_);
   const double X = 0;  // tables never come here: they are held and start on the line of their extents
   evaluator_(C_, T, X, r_);
   for (std::size_t j = 0; j < r_.size(); ++j) r_[j] *= setup_.capacity[j];
   for (const BrokenOrder& b : broken_) {
-    const double c = std::max(0.0, C_[b.species]), last = fade * c_scale_;
+    const double c = C_[b.species], last = fade * c_scale_;
     const double nu = setup_.chemistry.kinetics.nu(static_cast<int>(b.species), static_cast<int>(b.reaction));
     if (nu * r_[b.reaction] < 0) r_[b.reaction] *= c / (c + last);
   }
+  mirror_.turn_rates(r_);
 }
 
 double Transient::warming(std::span<const double> y, double T) const {

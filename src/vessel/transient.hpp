@@ -1,5 +1,6 @@
 #pragma once
 #include "broken_order.hpp"
+#include "mirror.hpp"
 #include "setup.hpp"
 
 namespace vatwright {
@@ -34,6 +35,7 @@ class Transient {
   const Setup& setup_;
   RateEvaluator evaluator_;
   std::vector<BrokenOrder> broken_;
+  Mirror mirror_;
   Exchange exchange_;
   double tau_ = 0, total_in_ = 0, c_scale_ = 1;
   std::size_t n_ = 0;

@@ -37,6 +37,7 @@ TubeBalance::TubeBalance(const Setup& setup, Coordinate coordinate, double feed_
     : setup_(setup),
       evaluator_(setup.chemistry.kinetics),
       broken_(broken_orders(setup.chemistry.kinetics)),
+      mirror_(setup.chemistry.kinetics),
       R_(setup.capacity.size()),
       coordinate_(coordinate),
       factor_(coordinate == Coordinate::length ? setup.volume_m3 / feed_m3_s : 1),
@@ -117,9 +118,11 @@ void TubeBalance::rates_just_above(std::span<const double> y, double T, std::opt
 
 /// From amounts in C_, which become concentrations.
 void TubeBalance::rates_of_amounts(double T, double X, double P) {
+  mirror_.turn_up(C_);
   setup_.chemistry.concentrations_of_amounts(C_, T, P, C_);
   evaluator_(C_, T, X, r_);
   for (std::size_t j = 0; j < R_; ++j) r_[j] *= setup_.capacity[j];
+  mirror_.turn_rates(r_);
 }
 
 double TubeBalance::made(std::size_t species) const {

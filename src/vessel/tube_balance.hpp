@@ -2,6 +2,7 @@
 #include <optional>
 
 #include "broken_order.hpp"
+#include "mirror.hpp"
 #include "setup.hpp"
 
 namespace vatwright {
@@ -72,6 +73,7 @@ class TubeBalance {
   const Setup& setup_;
   RateEvaluator evaluator_;
   std::vector<BrokenOrder> broken_;
+  Mirror mirror_;
   std::vector<std::size_t> can_run_out_;
   std::vector<bool> exhausted_;  // per species
   std::size_t R_ = 0, size_ = 0;
