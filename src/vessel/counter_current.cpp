@@ -26,13 +26,9 @@ class Shooting {
 
   Outcome<CounterCurrent> run() {
     CounterCurrent found;
-    std::vector<double> at;
-    for (int k = 0; k <= samples; ++k) at.push_back(low_ + (high_ - low_) * k / samples);
-    const auto roots = high_ > low_
-                           ? find_all_roots([this](double K) { return mismatch(K); }, at, 0, {.rel_tol = 1e-15})
-                           : Outcome<std::vector<double>>(std::vector<double>{low_});
-    if (const auto* no = std::get_if<NoAnswer>(&roots)) return failed_.value_or(*no);
-    for (double K : std::get<std::vector<double>>(roots)) add(K, found);
+    for (const double near : places()) {
+      if (const auto leaving = polish(near)) add(*leaving, found);
+    }
     found.calls = calls_;
     if (!found.solutions.empty()) return found;
     if (failed_) return *failed_;
@@ -40,8 +36,34 @@ class Shooting {
   }
 
  private:
-  TubeMarch shoot(double leaving_K) {
-    TubeMarch march(TubeBalance(setup_, TubeBalance::Coordinate::length, feed_m3_s_), leaving_K);
+  using Accuracy = TubeMarch::Accuracy;
+
+  /// About where the mismatch passes zero, by rough marches.
+  std::vector<double> places() {
+    if (!(high_ > low_)) return {low_};
+    std::vector<double> at;
+    for (int k = 0; k <= samples; ++k) at.push_back(low_ + (high_ - low_) * k / samples);
+    auto roots = find_all_roots([this](double K) { return mismatch(K, Accuracy::rough); }, at, 0, {.rel_tol = 1e-8});
+    if (auto* all = std::get_if<std::vector<double>>(&roots)) return std::move(*all);
+    if (!failed_) failed_ = std::get<NoAnswer>(roots);
+    return {};
+  }
+
+  /// The zero by full marches, in a bracket that grows around a rough one.
+  std::optional<double> polish(double near) {
+    const auto full = [this](double K) { return mismatch(K, Accuracy::full); };
+    if (!(high_ > low_)) return near;
+    for (double width = 1e-5; width < 1; width *= 8) {
+      const double a = near - width * (high_ - low_), b = near + width * (high_ - low_);
+      if (!(full(a) * full(b) <= 0)) continue;
+      const auto root = find_root(full, a, b, {.rel_tol = 1e-15});
+      if (const double* K = answer(root)) return *K;
+    }
+    return std::nullopt;
+  }
+
+  TubeMarch shoot(double leaving_K, Accuracy accuracy) {
+    TubeMarch march(TubeBalance(setup_, TubeBalance::Coordinate::length, feed_m3_s_), leaving_K, accuracy);
     const double room = 1 + 0.1 * (high_ - low_);
     march.keep_medium_within(low_ - room, high_ + room);
     march.go_to(1);
@@ -50,8 +72,8 @@ class Shooting {
   }
 
   /// Of the medium at the far end; where it left its range before that, as far as it got.
-  double mismatch(double leaving_K) {
-    const TubeMarch march = shoot(leaving_K);
+  double mismatch(double leaving_K, Accuracy accuracy) {
+    const TubeMarch march = shoot(leaving_K, accuracy);
     if (march.failed() || march.used_up()) {
       if (march.failed()) failed_ = march.failed();
       if (march.used_up()) failed_ = NoAnswer{NoAnswer::Kind::does_not_pass, "the pressure is used up on the way"};
@@ -61,7 +83,7 @@ class Shooting {
   }
 
   void add(double leaving_K, CounterCurrent& found) {
-    TubeMarch march = shoot(leaving_K);
+    TubeMarch march = shoot(leaving_K, Accuracy::full);
     const double off = std::abs(march.balance().medium(march.state()) / setup_.jacket.supply_K - 1);
     if (march.failed() || march.used_up() || march.medium_left() != 0 || !(off <= most_mismatch)) return;
     const auto conversion = [&](const TubeMarch& of) {

@@ -17,7 +17,7 @@ using Coordinate = TubeBalance::Coordinate;
 /// march, made in standing stages, serves all feed rates; else each rate is marched by itself.
 class MarchedTube final : public Solver {
  public:
-  explicit MarchedTube(const Setup& setup) : setup_(setup), tell_rate_(setup.chemistry.kinetics) {
+  explicit MarchedTube(const Setup& setup) : setup_(setup), tell_rate_(setup.chemistry.kinetics), runaway_(setup) {
     if (TubeBalance::serves_all_rates(setup))
       shared_.emplace(TubeBalance(setup, Coordinate::space_time, 1), setup.jacket.supply_K);
   }
@@ -95,23 +95,16 @@ class MarchedTube final : public Solver {
     VesselOutcome outcome = tell({setup_, feed_m3_s, stream_at, medium_at, places(march, end), tell_rate_}, detail);
     if (detail == Detail::map) return outcome;
     outcome.residual = march.residual(end);
-    if (setup_.is_jacketed() && setup_.heat_known())
-      tell_runaway(stream_at, medium_at, setup_.volume_m3 / feed_m3_s, outcome);
+    if (setup_.is_jacketed() && setup_.heat_known()) tell_runaway(stream_at, medium_at, outcome);
     return outcome;
   }
 
-  /// Where there is a hot spot inside: how much of its U it stands on. In V/v it is the same at every feed rate.
-  void tell_runaway(FunctionRef<Stream(double)> stream_at, FunctionRef<double(double)> medium_at, double space_time_s,
+  /// Where there is a hot spot inside: how much of its U it stands on.
+  void tell_runaway(FunctionRef<Stream(double)> stream_at, FunctionRef<double(double)> medium_at,
                     VesselOutcome& outcome) {
     const Stream inlet = stream_at(0);
     if (!(outcome.hottest_K > std::max(inlet.temperature_K, outcome.outlet.temperature_K))) return;
-    if (shared_ && runaway_share_) {
-      outcome.runaway_share = runaway_share_;
-      return;
-    }
-    const double hot_spot = outcome.hottest_at;
-    runaway_share_ = runaway_share(setup_, medium_at(hot_spot), hot_spot * space_time_s);
-    outcome.runaway_share = runaway_share_;
+    outcome.runaway_share = runaway_.share(medium_at(outcome.hottest_at));
   }
 
   /// Stages end at powers of 4 of a second, whatever was asked before: the same answer in any order of asking.
@@ -135,7 +128,7 @@ class MarchedTube final : public Solver {
   const Setup& setup_;
   RateEvaluator tell_rate_;
   std::optional<TubeMarch> shared_;
-  std::optional<double> runaway_share_;
+  Runaway runaway_;
   long calls_before_ = 0;
 };
 

@@ -3,6 +3,7 @@
 #include <array>
 #include <cmath>
 #include <limits>
+#include <optional>
 
 #include "tube_balance.hpp"
 #include "vatwright/numeric/march.hpp"
@@ -15,38 +16,93 @@ constexpr double least_share = 0.1, most_share = 2;
 constexpr int samples = 24;
 constexpr double worth_the_name = 2;
 
-/// ln of the greatest T - T_medium along the way at a share of U; -infinity where it is never above zero.
-double ln_rise(Setup setup, double medium_K, double share, double end_s) {
-  setup.jacket.UA_W_K *= share;
-  setup.jacket.supply_K = medium_K;
-  TubeBalance balance(setup, TubeBalance::Coordinate::space_time, 1);
-  const auto f = [&](double, std::span<const double> y, std::span<double> dy) { balance(y, dy); };
-  const auto by_amounts = [&](double, std::span<const double> y, std::span<double> J) { balance.jacobian(y, J); };
-  const Jacobian jacobian(by_amounts);
-  const auto scale = balance.scale();
-  const auto track = march(f, balance.at_inlet(medium_K), 0, end_s, {.rel_tol = 1e-8, .abs_tol = 1e-10, .scale = scale},
-                           {}, &jacobian);
-  const Track* path = answer(track);
-  if (path == nullptr) return std::numeric_limits<double>::quiet_NaN();
-  std::vector<double> y(scale.size());
-  const auto rise = [&](double s) {
-    path->read(s, y);
-    return balance.temperature(y) - medium_K;
-  };
-  const auto& nodes = path->nodes();
-  std::size_t hottest = 0;
-  double most = rise(0);
-  for (std::size_t k = 1; k < nodes.size(); ++k)
-    if (const double here = rise(nodes[k]); here > most) most = here, hottest = k;
-  if (hottest > 0 && hottest + 1 < nodes.size())
-    most = std::max(most, find_peak(rise, nodes[hottest - 1], nodes[hottest + 1], 1e-7).value);
-  return most > 0 ? std::log(most) : -std::numeric_limits<double>::infinity();
-}
+/// One march in V/v with the medium at one temperature and a share of U.
+class Trial {
+ public:
+  Trial(const Setup& setup, double medium_K, double share) : setup_(setup), medium_K_(medium_K) {
+    setup_.jacket.UA_W_K *= share;
+    setup_.jacket.supply_K = medium_K;
+  }
+
+  /// A space time by which the hot spot is well past: the rise has come back to half its greatest, or nothing is left
+  /// that could make one.
+  double past_hot_spot() {
+    double most = 0, end = 1e-3;
+    for (int stage = 0; stage < 40; ++stage, end *= 2) {
+      const auto track = march_to(end);
+      if (!track) return end;
+      path_ = &*track;
+      const double greatest = greatest_rise(), last = rise(end);
+      most = std::max(most, greatest);
+      if (stage > 4 && most > 0 && last < most / 2) break;
+    }
+    return end;
+  }
+
+  /// ln of the greatest T - T_medium up to end_s; -infinity where it is never above zero.
+  double ln_rise(double end_s) {
+    const auto track = march_to(end_s);
+    if (!track) return std::numeric_limits<double>::quiet_NaN();
+    path_ = &*track;
+    const double most = greatest_rise();
+    return most > 0 ? std::log(most) : -std::numeric_limits<double>::infinity();
+  }
+
+ private:
+  std::optional<Track> march_to(double end_s) {
+    TubeBalance balance(setup_, TubeBalance::Coordinate::space_time, 1);
+    const auto f = [&](double, std::span<const double> y, std::span<double> dy) { balance(y, dy); };
+    const auto by_amounts = [&](double, std::span<const double> y, std::span<double> J) { balance.jacobian(y, J); };
+    const Jacobian jacobian(by_amounts);
+    const auto scale = balance.scale();
+    auto track = march(f, balance.at_inlet(medium_K_), 0, end_s, {.rel_tol = 1e-8, .abs_tol = 1e-10, .scale = scale},
+                       {}, &jacobian);
+    if (std::holds_alternative<NoAnswer>(track)) return std::nullopt;
+    return std::get<Track>(std::move(track));
+  }
+  double rise(double s) const {
+    std::vector<double> y(static_cast<std::size_t>(path_->size()));
+    path_->read(s, y);
+    return y[setup_.capacity.size()] - medium_K_;  // the temperature stands behind the extents
+  }
+  double greatest_rise() const {
+    const auto& nodes = path_->nodes();
+    std::size_t hottest = 0;
+    double most = rise(0);
+    for (std::size_t k = 1; k < nodes.size(); ++k)
+      if (const double here = rise(nodes[k]); here > most) most = here, hottest = k;
+    if (hottest > 0 && hottest + 1 < nodes.size())
+      most = std::max(
+          most, find_peak([this](double s) { return rise(s); }, nodes[hottest - 1], nodes[hottest + 1], 1e-7).value);
+    return most;
+  }
+
+  Setup setup_;
+  double medium_K_;
+  const Track* path_ = nullptr;
+};
 
 }  // namespace
 
-double runaway_share(const Setup& setup, double medium_K, double hot_spot_s) {
-  const auto at = [&](double ln_share) { return ln_rise(setup, medium_K, std::exp(ln_share), 4 * hot_spot_s); };
+double Runaway::share(double medium_K) {
+  if (TubeBalance::serves_all_rates(setup_)) {
+    const auto [at, is_new] = at_kelvin_.try_emplace(0);
+    if (is_new) at->second = share_at(setup_.jacket.supply_K);
+    return at->second;
+  }
+  const auto kelvin = [this](int K) {
+    const auto [at, is_new] = at_kelvin_.try_emplace(K);
+    if (is_new) at->second = share_at(K);
+    return at->second;
+  };
+  const int below = static_cast<int>(std::floor(medium_K));
+  const double between = medium_K - below;
+  return (1 - between) * kelvin(below) + between * kelvin(below + 1);
+}
+
+double Runaway::share_at(double medium_K) {
+  const double end_s = Trial(setup_, medium_K, 1).past_hot_spot();
+  const auto at = [&](double ln_share) { return Trial(setup_, medium_K, std::exp(ln_share)).ln_rise(end_s); };
   const double lo = std::log(least_share), step = (std::log(most_share) - lo) / samples;
   int steepest = -1;
   double most = worth_the_name, before = at(lo);

@@ -168,9 +168,8 @@ void TubeMarch::step_to(double s) {
   }
 
   const auto scale = balance_.scale();
-  const bool isothermal = balance_.setup().is_held;
-  const MarchOptions options{
-      .rel_tol = isothermal ? 1e-11 : 1e-10, .abs_tol = isothermal ? 1e-13 : 1e-12, .scale = scale};
+  const double rel_tol = accuracy_ == Accuracy::rough ? 1e-6 : balance_.setup().is_held ? 1e-11 : 1e-10;
+  const MarchOptions options{.rel_tol = rel_tol, .abs_tol = 0.01 * rel_tol, .scale = scale};
   const auto by_amounts = [&](double, std::span<const double> y, std::span<double> J) { balance_.jacobian(y, J); };
   const Jacobian jacobian(by_amounts);
   auto track = march(f, y_, s_, s, options, events, &jacobian);

@@ -11,9 +11,10 @@ namespace vatwright {
 /// marched.
 class TubeMarch {
  public:
+  enum class Accuracy { full, rough };  ///< rough: to look around with, relative 1e-6
   /// medium_K: at the feed's end, where it moves.
-  TubeMarch(TubeBalance balance, double medium_K)
-      : balance_(std::move(balance)), start_(balance_.at_inlet(medium_K)), y_(start_) {}
+  TubeMarch(TubeBalance balance, double medium_K, Accuracy accuracy = Accuracy::full)
+      : balance_(std::move(balance)), start_(balance_.at_inlet(medium_K)), y_(start_), accuracy_(accuracy) {}
   /// The march ends where a medium that moves leaves this range, K.
   void keep_medium_within(double lowest_K, double highest_K) { medium_range_ = {lowest_K, highest_K}; }
 
@@ -61,6 +62,7 @@ class TubeMarch {
 
   TubeBalance balance_;
   std::vector<double> start_, y_;
+  Accuracy accuracy_;
   std::optional<std::pair<double, double>> medium_range_;
   double s_ = 0;
   std::vector<Stretch> stretches_;
