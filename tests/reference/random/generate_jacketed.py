@@ -47,7 +47,8 @@ class Duty:
             self.cA = self.yA * self.c_total
             self.cp_mol = sig(rnd.uniform(30, 60))
         capacity = self.cp if phase == "liquid" else self.cp_mol * self.c_total
-        self.n = [sig(rnd.choice([1, 1, 1, rnd.uniform(0.6, 2.2)]), 3) for _ in range(steps)]
+        # the second step, whose reactant is made as it goes, of order 1 or more: with a broken order it is checked elsewhere
+        self.n = [sig(rnd.choice([1, 1, 1, rnd.uniform(1.0 if j else 0.6, 2.2)]), 3) for j in range(steps)]
         self.E = [sig(rnd.uniform(5e4, 1.3e5)) for _ in range(steps)]
         self.at = 330.0 if phase == "liquid" else 550.0
         self.k = None
