@@ -70,6 +70,7 @@ class Marcher {
     }
     if (track_.t_.size() == 1) track_.coefficients_ = step_.y;
     track_.calls_ = f_.calls();
+    track_.ended_stiff_ = is_stiff_;
     return std::move(track_);
   }
 
@@ -88,6 +89,7 @@ class Marcher {
       if (!std::isfinite(level_.back())) return stuck("an event has no value there");
     }
     span_ = t1_ - step_.t;
+    is_stiff_ = options_.starts_stiff;
     next_h_ = options_.first_step > 0 ? options_.first_step : first_step();
     return std::nullopt;
   }

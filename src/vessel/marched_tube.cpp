@@ -107,11 +107,13 @@ class MarchedTube final : public Solver {
     outcome.runaway_share = runaway_.share(medium_at(outcome.hottest_at));
   }
 
-  /// Stages end at powers of 4 of a second, whatever was asked before: the same answer in any order of asking.
-  static void go_in_stages(TubeMarch& march, double end) {
-    double stage = 1e-6;
-    while (stage < end) stage *= 4;
-    for (double s = 1e-6; s <= stage; s *= 4)
+  /// Stages double from a hundredth of the time in which the inlet's rates would change everything, whatever was asked
+  /// before: the same answer in any order of asking.
+  void go_in_stages(TubeMarch& march, double end) {
+    if (!(first_stage_s_ > 0)) first_stage_s_ = 0.01 * march.time_scale();
+    double stage = first_stage_s_;
+    while (stage < end) stage *= 2;
+    for (double s = first_stage_s_; s <= stage; s *= 2)
       if (s > march.reached()) march.go_to(s);
   }
 
@@ -128,6 +130,7 @@ class MarchedTube final : public Solver {
   const Setup& setup_;
   RateEvaluator tell_rate_;
   std::optional<TubeMarch> shared_;
+  double first_stage_s_ = 0;
   Runaway runaway_;
   long calls_before_ = 0;
 };

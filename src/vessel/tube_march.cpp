@@ -18,6 +18,15 @@ void TubeMarch::go_to(double s) {
   }
 }
 
+double TubeMarch::time_scale() {
+  Rates dy(balance_.size());
+  balance_(start_, dy);
+  const auto scale = balance_.scale();
+  double fastest = 0;
+  for (std::size_t i = 0; i < dy.size(); ++i) fastest = std::max(fastest, std::abs(dy[i]) / scale[i]);
+  return fastest > 0 && std::isfinite(fastest) ? 1 / fastest : 1;
+}
+
 void TubeMarch::read(double s, std::span<double> y) const {
   if (stretches_.empty()) {
     std::ranges::copy(y_, y.begin());
@@ -155,13 +164,13 @@ void TubeMarch::step_to(double s) {
   std::vector<Watch> watches;
   for (std::size_t i : balance_.can_run_out()) watches.push_back({&balance_, i, exhausted[i]});
   const auto pressure = [&](double, std::span<const double> y) {
-    return balance_.with_pressure() ? balance_.pressure_left(y) - TubeBalance::no_pressure : 1;
+    return balance_.pressure_left(y) - TubeBalance::no_pressure;
   };
   const auto hotter = [&](double, std::span<const double> y) { return medium_range_->second - balance_.medium(y); };
   const auto colder = [&](double, std::span<const double> y) { return balance_.medium(y) - medium_range_->first; };
   std::vector<Event> events;
   for (Watch& watch : watches) events.emplace_back(watch);
-  events.emplace_back(pressure);
+  if (balance_.with_pressure()) events.emplace_back(pressure);
   if (medium_range_) {
     events.emplace_back(hotter);
     events.emplace_back(colder);
@@ -169,7 +178,8 @@ void TubeMarch::step_to(double s) {
 
   const auto scale = balance_.scale();
   const double rel_tol = accuracy_ == Accuracy::rough ? 1e-6 : balance_.setup().is_held ? 1e-11 : 1e-10;
-  const MarchOptions options{.rel_tol = rel_tol, .abs_tol = 0.01 * rel_tol, .scale = scale};
+  const MarchOptions options{
+      .rel_tol = rel_tol, .abs_tol = 0.01 * rel_tol, .scale = scale, .first_step = step_, .starts_stiff = stiff_};
   const auto by_amounts = [&](double, std::span<const double> y, std::span<double> J) { balance_.jacobian(y, J); };
   const Jacobian jacobian(by_amounts);
   auto track = march(f, y_, s_, s, options, events, &jacobian);
@@ -181,18 +191,22 @@ void TubeMarch::step_to(double s) {
   const Track& made = stretches_.back().track;
   s_ = made.end();
   made.read(s_, y_);
+  step_ = 0;
+  stiff_ = made.ended_stiff();
+  const auto& nodes = made.nodes();
+  for (std::size_t k = nodes.size(); k-- > 1 && k + 3 > nodes.size();) step_ = std::max(step_, nodes[k] - nodes[k - 1]);
   if (made.ended_by()) ended_by(static_cast<std::size_t>(*made.ended_by()), exhausted);
 }
 
 /// The events are what can run out, the pressure, the medium too hot, too cold.
 void TubeMarch::ended_by(std::size_t event, const std::vector<bool>& exhausted) {
-  const std::size_t watched = balance_.can_run_out().size();
-  if (event == watched) {
-    used_up_ = true;
+  const std::size_t watched = balance_.can_run_out().size(), pressure = balance_.with_pressure() ? 1 : 0;
+  if (event >= watched + pressure) {
+    medium_left_ = event == watched + pressure ? 1 : -1;
     return;
   }
-  if (event > watched) {
-    medium_left_ = event == watched + 1 ? 1 : -1;
+  if (event >= watched) {
+    used_up_ = true;
     return;
   }
   const std::size_t species = balance_.can_run_out()[event];

@@ -27,6 +27,8 @@ class TubeMarch {
   /// - h J) shift = slip.
   double residual(double s);
 
+  /// The least time in which a component would change by its scale at the inlet's rates, 1 where nothing happens there.
+  [[nodiscard]] double time_scale();
   [[nodiscard]] double reached() const { return s_; }
   /// What the march is at now.
   [[nodiscard]] const std::vector<double>& state() const { return y_; }
@@ -64,7 +66,8 @@ class TubeMarch {
   std::vector<double> start_, y_;
   Accuracy accuracy_;
   std::optional<std::pair<double, double>> medium_range_;
-  double s_ = 0;
+  double s_ = 0, step_ = 0;  // how far it is, and its last step
+  bool stiff_ = false;       // the last step was made by the stiff method
   std::vector<Stretch> stretches_;
   struct {
     std::size_t stretch = 0, step = 0;

@@ -14,6 +14,7 @@ struct MarchOptions {
   std::span<const double> scale = {};  ///< empty: 1 each
   long most_calls = 2'000'000;         ///< of f, those for differences of a Jacobian included
   double first_step = 0;               ///< 0: chosen
+  bool starts_stiff = false;           ///< goes on from a march that ended with the stiff method
 };
 
 /// g(t, y), whose first zero crossing from + to - ends a march.
@@ -36,6 +37,8 @@ class Track {
   [[nodiscard]] long calls() const { return calls_; }
   /// Steps made by the stiff method, of nodes().size() - 1.
   [[nodiscard]] long stiff_steps() const { return stiff_steps_; }
+  /// Whether the stiff method was at work at the end.
+  [[nodiscard]] bool ended_stiff() const { return ended_stiff_; }
   /// Why it ended before the wanted t, where an event did it: index of the event.
   [[nodiscard]] std::optional<int> ended_by() const { return ended_by_; }
 
@@ -45,6 +48,7 @@ class Track {
   std::vector<double> t_;
   std::vector<double> coefficients_;  // per step: 6 rows of n, powers of (t - t_i)/(t_(i+1) - t_i)
   long calls_ = 0, stiff_steps_ = 0;
+  bool ended_stiff_ = false;
   std::optional<int> ended_by_;
 };
 

@@ -1,7 +1,7 @@
 #!/usr/bin/env python3
 """Writes jacketed.txt: random duties of vessels on their jackets, reckoned apart from the program.
 
-Needs SciPy; not needed to run the tests.   python3 generate_jacketed.py > jacketed.txt
+Needs SciPy; not needed to run the tests.   python3 generate_jacketed.py | grep -a "^[t#]" > jacketed.txt
 
   tanks   at each of 20 000 temperatures the balances of A, then of B, are closed (each rate rises with its own species
           alone), and every change of sign of the heat balance is closed by Brent's method: all steady states there are.
