@@ -66,6 +66,20 @@ void tell_windows(Rating& rating, const VesselPlace& place, VesselRun& run) {
   if (auto fold = caution_window_at_fold(windows)) rating.cautions.push_back(*fold);
 }
 
+double start_K(const VesselPlace& place) {
+  const Duty& duty = place.problem.duty;
+  if (place.operation.thermal == Thermal::hold) return place.operation.hold_K;
+  return duty.start.temperature_K.value_or(duty.chemistry.feed.temperature_K);
+}
+
+std::string start_words(const VesselPlace& place) {
+  const Duty& duty = place.problem.duty;
+  const char* fill = "feed";
+  if (duty.start.filled_with == Start::Filled::product) fill = "product";
+  if (duty.start.filled_with == Start::Filled::solvent) fill = "solvent";
+  return "filled with " + std::string(fill) + " at " + show(start_K(place), Shown::temperature);
+}
+
 Stream arriving_first(const Duty& duty, const Operation& operation) {
   Stream arrives = whole_feed(duty);
   arrives.pressure_Pa =
@@ -84,6 +98,9 @@ void tell_vessel(Rating& rating, const VesselPlace& place, const Judged& judged,
   if (std::holds_alternative<StirredTank>(place.vessel.kind) || !outcome->states.empty()) {
     rating.steady_states = outcome->states;
     rating.states_complete = outcome->states_complete;
+    rating.started = start_words(place);
+    const double ends_K = std::max(outcome->hottest_K, start_K(place));
+    rating.peaks = outcome->start_peak_K && *outcome->start_peak_K > ends_K + 1;
   }
   rating.heat_curve = outcome->heat_curve;
   if (!judged.figures) return;

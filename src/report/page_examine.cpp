@@ -138,6 +138,22 @@ void add_limits(Page& page, const HookupRating& rating, const Look& look) {
   page.table(table);
 }
 
+/// Which of several states, and how it gets there, in words.
+void add_starts(Page& page, const Rating& vessel, const Look& look) {
+  const auto& states = vessel.steady_states;
+  if (!states || (states->size() < 2 && vessel.conversion)) return;
+  std::string text = vessel.tag + ", " + vessel.started + " before its feed is opened, ";
+  const auto reached = std::ranges::find(*states, true, &SteadyState::reached);
+  if (reached == states->end()) {
+    text += "comes to none of them: it ends in a cycle";
+  } else {
+    text += "comes to " + show(reached->conversion, Shown::percent, look.units) + " at " +
+            show(reached->temperature_K, Shown::temperature, look.units);
+    if (vessel.peaks) text += ", after a peak of " + show(*vessel.start_peak_K, Shown::temperature, look.units);
+  }
+  page.paragraph(text + ".", 2, 2);
+}
+
 void add_states(Page& page, const HookupRating& rating, const Look& look) {
   Table table;
   table.columns = {{"vessel", Align::left, true},
@@ -157,6 +173,7 @@ void add_states(Page& page, const HookupRating& rating, const Look& look) {
   if (table.rows.empty()) return;
   page.heading(complete ? "Steady states, all there are" : "Steady states that were found; there may be more");
   page.table(table);
+  for (const Rating& vessel : rating.vessels) add_starts(page, vessel, look);
 }
 
 /// Indices of a few places spread evenly along the length, both ends among them.
@@ -237,6 +254,7 @@ void add_cases(Page& page, const ExamineAnswer& answer, const Look& look) {
     if (whole.windows) items.push_back({"window", window_words(*whole.windows, look)});
     if (!whole.stands_in_the_way.empty()) items.push_back({"in the way", whole.stands_in_the_way});
     page.items(items);
+    for (const Rating& vessel : of_case.rating.vessels) add_starts(page, vessel, look);
   }
 }
 

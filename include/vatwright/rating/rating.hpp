@@ -55,6 +55,8 @@ struct Rating {
   std::optional<std::string> medium;
   std::optional<std::vector<SteadyState>> steady_states;
   std::optional<bool> states_complete;
+  std::string started;  ///< tanks: what it was filled with before its feed is opened, in words
+  bool peaks = false;   ///< hotter on the way than where it starts and where it ends
   std::optional<Windows> windows;  ///< absent where they belong to the whole
   std::vector<Limit> limits;
   std::vector<TargetItem> targets;
