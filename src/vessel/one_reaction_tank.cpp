@@ -21,7 +21,7 @@ struct Found {
 /// rate there is zero.
 class OneReactionTank final : public Solver {
  public:
-  explicit OneReactionTank(const Setup& setup) : setup_(setup), tell_rate_(setup.chemistry.kinetics) {
+  explicit OneReactionTank(const Setup& setup) : setup_(setup) {
     if (!moves_with_feed()) build({});
   }
 
@@ -56,7 +56,7 @@ class OneReactionTank final : public Solver {
     return feed;
   }
 
-  [[nodiscard]] long rate_calls() const override { return calls_before_ + path_->calls() + tell_rate_.calls(); }
+  [[nodiscard]] long rate_calls() const override { return calls_before_ + path_->calls(); }
 
  private:
   struct Arrival {
@@ -210,7 +210,7 @@ class OneReactionTank final : public Solver {
     outcome.cycle = !arrival.state;
     if (arrival.state) outcome.residual = residual_of(found[*arrival.state], setup_.volume_m3 / feed_m3_s);
     outcome.uncooled_K = arrival.uncooled_K;
-    tell_of_tank(setup_, feed_m3_s, outcome, detail, tell_rate_);
+    tell_of_tank(setup_, feed_m3_s, outcome, detail, path_->evaluator());
     std::ranges::stable_sort(outcome.states, {}, &SteadyState::conversion);
     return outcome;
   }
@@ -218,7 +218,6 @@ class OneReactionTank final : public Solver {
   const Setup& setup_;
   std::optional<RatePath> path_;
   std::optional<TankCurve> curve_;
-  RateEvaluator tell_rate_;
   bool idle_inlet_ = false;
   long calls_before_ = 0;
 };

@@ -12,7 +12,7 @@ namespace {
 /// A tube or packed tube with one reaction whose rate does not feel the pressure drop: one track serves all feed rates.
 class OneReactionTube final : public Solver {
  public:
-  explicit OneReactionTube(const Setup& setup) : setup_(setup), path_(setup, {}), tell_rate_(setup.chemistry.kinetics) {
+  explicit OneReactionTube(const Setup& setup) : setup_(setup), path_(setup, {}) {
     if (path_.rate(path_.inlet(), 0) == 0) return;  // nothing happens, even where a seed would start it
     for (double sign : {1.0, -1.0})
       if (!track_)
@@ -35,7 +35,7 @@ class OneReactionTube final : public Solver {
       return Stream{feed_m3_s, {xi}, path_.temperature(xi), setup_.inlet_Pa - loss * length * z};
     };
     const auto no_medium = [](double) { return 0.0; };
-    VesselOutcome outcome = tell({setup_, feed_m3_s, stream_at, no_medium, end_place(t), tell_rate_}, detail);
+    VesselOutcome outcome = tell({setup_, feed_m3_s, stream_at, no_medium, end_place(t), path_.evaluator()}, detail);
     if (detail != Detail::map) outcome.residual = residual(out, t);
     return outcome;
   }
@@ -60,7 +60,7 @@ class OneReactionTube final : public Solver {
     return setup_.volume_m3 / *t;
   }
 
-  [[nodiscard]] long rate_calls() const override { return path_.calls() + tell_rate_.calls(); }
+  [[nodiscard]] long rate_calls() const override { return path_.calls(); }
 
  private:
   TubeTrack::Reading read(double t) {
@@ -120,7 +120,6 @@ class OneReactionTube final : public Solver {
 
   const Setup& setup_;
   RatePath path_;
-  RateEvaluator tell_rate_;
   std::optional<TubeTrack> track_;
 };
 

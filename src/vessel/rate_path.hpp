@@ -50,6 +50,7 @@ class RatePath {
   [[nodiscard]] bool falls() const { return falls_; }
   [[nodiscard]] const Setup& setup() const { return setup_; }
   [[nodiscard]] double nu(std::size_t i) const { return nu_[i]; }
+  RateEvaluator& evaluator() { return evaluator_; }
   [[nodiscard]] long calls() const { return evaluator_.calls(); }
   [[nodiscard]] long no_value() const { return evaluator_.no_value(); }
   /// Distances from the inlet (in the direction sign) where the rate is not smooth: nodes of a measured table.

@@ -54,7 +54,12 @@ Sloped sloped_chebyshev_sum(const std::array<double, n>& a, double z) {
 
 Place TubeTrack::place_of(double u) const {
   const double L = way_.length();
-  return {-L * std::expm1(-u), L * std::exp(-u)};
+  if (u > 1) {  // what is left loses no digit in the difference
+    const double s = L * std::exp(-u);
+    return {L - s, s};
+  }
+  const double d = -std::expm1(-u);
+  return {L * d, L * (1 - d)};
 }
 
 double TubeTrack::slowness(double u) {
@@ -71,9 +76,19 @@ bool TubeTrack::add_panel(double u0, double u1) {
     if (!(g[k] > 0) || !std::isfinite(g[k])) return false;
     largest = std::max(largest, g[k]);
   }
+  // cos(pi j (n - k)/n) = (-1)^j cos(pi j k/n): places that lie opposite go together, even j by sums, odd j by
+  // differences
+  std::array<double, degree / 2 + 1> sums{}, differences{};
+  for (std::size_t k = 0; k < degree / 2; ++k) {
+    const double end = k == 0 ? 0.5 : 1;
+    sums[k] = end * (g[k] + g[degree - k]);
+    differences[k] = end * (g[k] - g[degree - k]);
+  }
+  sums[degree / 2] = g[degree / 2];
   for (std::size_t j = 0; j <= degree; ++j) {
-    double sum = (g[0] + cosines.at[j][degree] * g[degree]) / 2;
-    for (std::size_t k = 1; k < degree; ++k) sum += cosines.at[j][k] * g[k];
+    const auto& pairs = j % 2 == 0 ? sums : differences;
+    double sum = 0;
+    for (std::size_t k = 0; k <= degree / 2; ++k) sum += cosines.at[j][k] * pairs[k];
     a[j] = sum * 2 / degree;
   }
   a[0] /= 2;
@@ -134,7 +149,7 @@ bool TubeTrack::extend() {
     }
     u1 = u0 + (u1 - u0) / 2;
   }
-  width_ = std::min((at_once ? 2 : 1) * (u1 - u0), 2.0);
+  width_ = std::min((at_once ? 2 : 1) * (u1 - u0), widest);
   return true;
 }
 

@@ -8,13 +8,15 @@ namespace vatwright {
 
 /// Space time along a way of one reaction, t = V/v = integral of d xi / R, kept as it grows: it serves every feed rate.
 ///   u = -ln(s/L), s what is left of the way:  dt/du = s/R(s)
-/// In panels of u, each a Chebyshev series of degree 16 through as many places (C. W. Clenshaw and A. R. Curtis, Numer.
+/// In panels of u, each a Chebyshev series of degree 20 through as many places (C. W. Clenshaw and A. R. Curtis, Numer.
 /// Math. 2 (1960) 197, from memory), halved until its last terms are below 1e-12 of the largest value. A first order
 /// reaction has a constant dt/du, a power law an exponential: one panel goes a long way.
 class TubeTrack {
  public:
   explicit TubeTrack(Way way)
-      : way_(std::move(way)), kinks_(way_.path().kinks(way_.sign())), cancels_(cancellation(way_)) {}
+      : way_(std::move(way)), kinks_(way_.path().kinks(way_.sign())), cancels_(cancellation(way_)) {
+    if (way_.kind() == EndKind::depleted) width_ = widest;
+  }
 
   /// Where the fluid is after the space time t; d = length at or beyond the end (then `through` is true).
   struct Reading {
@@ -34,7 +36,8 @@ class TubeTrack {
   Way& way() { return way_; }
 
  private:
-  static constexpr int degree = 16;
+  static constexpr int degree = 20;
+  static constexpr double widest = 3;  // of a panel: one of it takes a power law from nothing to 95 %
   struct Panel {
     double u0 = 0, u1 = 0, t0 = 0, t1 = 0;
     std::array<double, degree + 1> Q{};  // t - t0 = w Q(w - 1), w = 2 (u - u0)/(u1 - u0): exact for small steps
