@@ -1,3 +1,4 @@
+#include <algorithm>
 #include <cmath>
 #include <limits>
 
@@ -8,17 +9,39 @@
 namespace vatwright {
 namespace {
 
-double power(double C, double order) {
-  if (order == 1) return C;
-  if (order == 2) return C * C;
-  if (order == 0.5) return std::sqrt(C);
-  return std::pow(C, order);
-}
+/// C to an order; the usual ones without the general function.
+struct Power {
+  enum class Kind { one, two, half, other };
+  Power(int of, double n) : species(static_cast<std::size_t>(of)), order(n) {
+    if (n == 1) kind = Kind::one;
+    if (n == 2) kind = Kind::two;
+    if (n == 0.5) kind = Kind::half;
+  }
+  double operator()(double C) const {
+    switch (kind) {
+      case Kind::one:
+        return C;
+      case Kind::two:
+        return C * C;
+      case Kind::half:
+        return std::sqrt(C);
+      case Kind::other:
+        break;
+    }
+    return std::pow(C, order);
+  }
+  std::size_t species;
+  double order;
+  Kind kind = Kind::other;
+};
 
 /// One direction of a reaction, its text and its maps gone: factor and constants belong to the temperature set last.
 class Direction {
  public:
-  explicit Direction(RatePart part) : part_(std::move(part)), half_(part_.half), adsorption_(part_.adsorption) {}
+  explicit Direction(RatePart part)
+      : part_(std::move(part)), half_(part_.half), adsorption_(part_.adsorption), whole_(0, part_.adsorption_power) {
+    for (const auto& [species, order] : part_.orders) powers_.emplace_back(species, order);
+  }
 
   void set_temperature(double T_K) {
     factor_ = part_.k.at(T_K) / part_.divisor;
@@ -36,7 +59,7 @@ class Direction {
     for (int i : part_.needs)
       if (C[static_cast<std::size_t>(i)] <= 0) return 0;
     double rate = factor_;
-    for (const auto& [i, order] : part_.orders) rate *= power(above_zero(C, i), order);
+    for (const Power& power : powers_) rate *= power(std::max(C[power.species], 0.0));
     for (const SpeciesFigure& h : half_) rate /= h.value + above_zero(C, h.species);
     if (!adsorption_.empty()) rate /= adsorbed(C);
     if (std::isfinite(rate)) return rate;
@@ -52,11 +75,13 @@ class Direction {
   double adsorbed(std::span<const double> C) const {
     double sum = 1;
     for (const SpeciesFigure& K : adsorption_) sum += K.value * above_zero(C, K.species);
-    return power(sum, part_.adsorption_power);
+    return whole_(sum);
   }
 
   RatePart part_;
+  std::vector<Power> powers_;
   std::vector<SpeciesFigure> half_, adsorption_;
+  Power whole_;  // of the adsorption term
   double factor_ = 0;
 };
 
