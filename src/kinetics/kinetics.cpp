@@ -19,6 +19,7 @@ Kinetics::Kinetics(std::vector<Reaction> reactions, int species, int of, double 
       nu_[static_cast<std::size_t>(part.species) * width + j] += part.value;
     }
   independent_ = rank_of(nu_, species_, static_cast<int>(width));
+  compiled_ = std::make_shared<const RateEvaluator>(*this);
   if (fed.empty() || of < 0) return;
   std::vector<std::optional<double>> needed;
   for (int i = 0; i < species; ++i) needed.push_back(moles_needed(*this, fed, i));

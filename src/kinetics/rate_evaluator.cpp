@@ -40,7 +40,12 @@ class Direction {
  public:
   explicit Direction(RatePart part)
       : part_(std::move(part)), half_(part_.half), adsorption_(part_.adsorption), whole_(0, part_.adsorption_power) {
-    for (const auto& [species, order] : part_.orders) powers_.emplace_back(species, order);
+    powers_.reserve(part_.orders.size());
+    for (const auto& [species, order] : part_.orders) {
+      powers_.emplace_back(species, order);
+      sum_of_orders_ += order;
+    }
+    part_.orders = {};
   }
 
   void set_temperature(double T_K) {
@@ -48,9 +53,7 @@ class Direction {
     if (part_.over) factor_ /= part_.over->at(T_K);
     if (part_.basis == Basis::concentration) return;
     const double RT = gas_constant * T_K;  // p_i = C_i R T, gathered into the constants
-    double order = -static_cast<double>(half_.size());
-    for (const auto& n : part_.orders) order += n.second;
-    factor_ *= std::pow(RT, order);
+    factor_ *= std::pow(RT, sum_of_orders_ - static_cast<double>(half_.size()));
     for (std::size_t i = 0; i < half_.size(); ++i) half_[i].value = part_.half[i].value / RT;
     for (std::size_t i = 0; i < adsorption_.size(); ++i) adsorption_[i].value = part_.adsorption[i].value * RT;
   }
@@ -82,7 +85,7 @@ class Direction {
   std::vector<Power> powers_;
   std::vector<SpeciesFigure> half_, adsorption_;
   Power whole_;  // of the adsorption term
-  double factor_ = 0;
+  double factor_ = 0, sum_of_orders_ = 0;
 };
 
 }  // namespace
@@ -94,6 +97,10 @@ struct RateEvaluator::Compiled {
 };
 
 RateEvaluator::RateEvaluator(const Kinetics& kinetics) {
+  if (kinetics.compiled_) {
+    laws_ = kinetics.compiled_->laws_;
+    return;
+  }
   for (int j = 0; j < kinetics.reactions(); ++j) {
     Compiled law;
     for (RatePart& part : parts_of(kinetics, j)) law.directions.emplace_back(std::move(part));

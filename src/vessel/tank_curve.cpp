@@ -18,18 +18,25 @@ TankCurve::TankCurve(Way way) : way_(std::move(way)) {
   refine_extrema();
 }
 
-double TankCurve::log_time(double y) {
-  const Place p = place_at(y, way_.length());
+double TankCurve::log_time(double y) { return log_time(place_at(y, way_.length())); }
+
+double TankCurve::log_time(Place p) {
   const double rate = way_.rate(p.d, p.s);
   return rate > 0 ? std::log(p.d / rate) : std::numeric_limits<double>::infinity();
 }
 
 void TankCurve::sample() {
   y_ = graded_places();
-  for (double d : way_.path().kinks(way_.sign()))
-    if (d < way_.length()) y_.push_back(std::log(d / (way_.length() - d)));
-  std::ranges::sort(y_);
-  for (double y : y_) f_.push_back(log_time(y));
+  f_.reserve(y_.size() + 8);
+  const double L = way_.length();
+  for (const Place& share : graded_shares()) f_.push_back(log_time(Place{L * share.d, L * share.s}));
+  for (double d : way_.path().kinks(way_.sign())) {
+    if (!(d < L)) continue;
+    const double y = std::log(d / (L - d));
+    const auto at = std::ranges::upper_bound(y_, y) - y_.begin();
+    y_.insert(y_.begin() + at, y);
+    f_.insert(f_.begin() + at, log_time(y));
+  }
   // equilibrium: the last samples are rounding of the rate
   while (y_.size() > 2 && way_.kind() == EndKind::equilibrium && y_[y_.size() - 2] > 28) {
     y_.pop_back();
@@ -63,7 +70,7 @@ void TankCurve::refine_extrema() {
     const double up = f_[i] - f_[i - 1], down = f_[i] - f_[i + 1];
     const double sign = up > noise && down > -noise ? 1 : up < -noise && down < noise ? -1 : 0;
     if (sign == 0 || !std::isfinite(f_[i - 1]) || !std::isfinite(f_[i + 1])) continue;
-    const Peak peak = find_peak([&](double y) { return sign * log_time(y); }, y_[i - 1], y_[i + 1], 1e-9);
+    const Peak peak = find_peak([&](double y) { return sign * log_time(y); }, y_[i - 1], y_[i + 1], 1e-7);
     found.emplace_back(peak.at, sign * peak.value);
   }
   for (const auto& [y, f] : found) {

@@ -26,6 +26,7 @@ class TankCurve {
   Answer states(double tau);
   /// ln h at a place.
   double log_time(double y);
+  double log_time(Place place);
   Way& way() { return way_; }
   /// Local extrema of h by their extents' distances and values, rising d.
   struct Fold {

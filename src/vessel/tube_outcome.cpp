@@ -163,17 +163,19 @@ VesselOutcome tell(const SolvedTube& tube, Detail detail) {
   outcome.lowest_Pa = outcome.outlet.pressure_Pa;
   if (loss_per_length(setup, tube.feed_m3_s, setup.arrives.xi_mol_m3, setup.inlet_K, setup.inlet_Pa))
     outcome.pressure_drop_Pa = setup.inlet_Pa - outcome.outlet.pressure_Pa;
-  const auto places = places_of(tube, detail == Detail::map ? 1 : 24);
-  outcome.coldest_K = outcome.hottest_K = setup.inlet_K;
+  outcome.coldest_K = std::min(setup.inlet_K, outcome.outlet.temperature_K);
+  outcome.hottest_K = std::max(setup.inlet_K, outcome.outlet.temperature_K);
+  outcome.hottest_at = outcome.outlet.temperature_K > setup.inlet_K ? 1 : 0;
+  if (detail == Detail::map) return outcome;
+  const auto places = places_of(tube, 24);
   std::vector<double> T;
   for (double z : places) {
     Stream there = tube.at(z);
     T.push_back(there.temperature_K);
     outcome.coldest_K = std::min(outcome.coldest_K, there.temperature_K);
     if (there.temperature_K > outcome.hottest_K) outcome.hottest_K = there.temperature_K, outcome.hottest_at = z;
-    if (detail != Detail::map) outcome.inside.push_back(std::move(there));
+    outcome.inside.push_back(std::move(there));
   }
-  if (detail == Detail::map) return outcome;
   if (setup.is_jacketed()) {
     refine_extremes(tube, places, T, outcome);
     outcome.heat = given_off(tube, outcome.outlet);

@@ -11,15 +11,23 @@ constexpr double u_most = y_most;
 constexpr double narrowest = 1e-15;
 constexpr std::size_t most_panels = 4000;
 
-/// cos(pi j k/n), the places and the transform at once.
+/// cos(pi j k/n), the places and the transform at once, even and odd j apart: by columns of k, so that one column goes
+/// to all j at a time.
 template <int n>
 struct Cosines {
-  std::array<std::array<double, n + 1>, n + 1> at{};
+  static constexpr std::size_t half = n / 2;
+  std::array<double, n + 1> place{};
+  std::array<std::array<double, half + 1>, half + 1> even{}, odd{};
   Cosines() {
-    for (int j = 0; j <= n; ++j)
-      for (int k = 0; k <= n; ++k)
-        at[static_cast<std::size_t>(j)][static_cast<std::size_t>(k)] =
-            std::cos(std::numbers::pi * (j * k % (2 * n)) / n);
+    for (int k = 0; k <= n; ++k) place[static_cast<std::size_t>(k)] = std::cos(std::numbers::pi * k / n);
+    for (std::size_t k = 0; k <= half; ++k)
+      for (std::size_t m = 0; m <= half; ++m) {
+        const auto angle = [&](std::size_t order) {
+          return std::numbers::pi * static_cast<double>(order * k % (2 * n)) / n;
+        };
+        even[k][m] = std::cos(angle(2 * m));
+        odd[k][m] = std::cos(angle(2 * m + 1));
+      }
   }
 };
 
@@ -72,25 +80,24 @@ bool TubeTrack::add_panel(double u0, double u1) {
   std::array<double, degree + 1> g{}, a{};
   double largest = 0;
   for (std::size_t k = 0; k <= degree; ++k) {
-    g[k] = slowness(u0 + (u1 - u0) * (1 + cosines.at[1][k]) / 2);
+    g[k] = slowness(u0 + (u1 - u0) * (1 + cosines.place[k]) / 2);
     if (!(g[k] > 0) || !std::isfinite(g[k])) return false;
     largest = std::max(largest, g[k]);
   }
   // cos(pi j (n - k)/n) = (-1)^j cos(pi j k/n): places that lie opposite go together, even j by sums, odd j by
   // differences
-  std::array<double, degree / 2 + 1> sums{}, differences{};
-  for (std::size_t k = 0; k < degree / 2; ++k) {
-    const double end = k == 0 ? 0.5 : 1;
-    sums[k] = end * (g[k] + g[degree - k]);
-    differences[k] = end * (g[k] - g[degree - k]);
+  constexpr std::size_t half = degree / 2;
+  std::array<double, half + 1> even{}, odd{};
+  for (std::size_t k = 0; k <= half; ++k) {
+    const double share = (k == 0 ? 0.5 : 1) * 2 / degree;
+    const double sum = share * (k == half ? g[k] : g[k] + g[degree - k]);
+    const double difference = k == half ? 0 : share * (g[k] - g[degree - k]);
+    for (std::size_t m = 0; m <= half; ++m) {
+      even[m] += cosines.even[k][m] * sum;
+      odd[m] += cosines.odd[k][m] * difference;
+    }
   }
-  sums[degree / 2] = g[degree / 2];
-  for (std::size_t j = 0; j <= degree; ++j) {
-    const auto& pairs = j % 2 == 0 ? sums : differences;
-    double sum = 0;
-    for (std::size_t k = 0; k <= degree / 2; ++k) sum += cosines.at[j][k] * pairs[k];
-    a[j] = sum * 2 / degree;
-  }
+  for (std::size_t j = 0; j <= degree; ++j) a[j] = j % 2 == 0 ? even[j / 2] : odd[j / 2];
   a[0] /= 2;
   a[degree] /= 2;
   const double last = std::max({std::abs(a[degree]), std::abs(a[degree - 1]), std::abs(a[degree - 2])});

@@ -31,6 +31,15 @@ const std::vector<double>& graded_places() {
   return places;
 }
 
+const std::vector<Place>& graded_shares() {
+  static const std::vector<Place> shares = [] {
+    std::vector<Place> all;
+    for (const double y : graded_places()) all.push_back(place_at(y, 1));
+    return all;
+  }();
+  return shares;
+}
+
 std::optional<Way> Way::find(RatePath& path, double sign) {
   if (!path.reversible() && sign < 0) return std::nullopt;
   const double at_inlet = sign * path.rate(path.inlet(), 0);

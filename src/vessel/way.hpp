@@ -49,5 +49,7 @@ Place place_at(double y, double length);
 inline constexpr double y_most = 36.8;
 /// Rising places y from -y_most to y_most, dense in the middle and at equal ratios in the tails.
 const std::vector<double>& graded_places();
+/// The same as places on a way of length 1.
+const std::vector<Place>& graded_shares();
 
 }  // namespace vatwright

@@ -1,4 +1,5 @@
 #pragma once
+#include <memory>
 #include <optional>
 #include <span>
 #include <string>
@@ -12,14 +13,15 @@ namespace vatwright {
 /// R in J/mol/K.
 inline constexpr double gas_constant = 8.314462618;
 
+class RateEvaluator;
+
 /// The reactions of a duty, compiled for evaluation: dense stoichiometry, orders sorted by kind, no text.
 class Kinetics {
  public:
   Kinetics() = default;
   /// species: how many there are. of: index of conversion_of. c_of_feed: its concentration in the mixed feed (mol/m3).
   /// fed: for every species whether it is fed; where given, moles_needed is worked out here, once for all.
-  Kinetics(std::vector<Reaction> reactions, int species, int of, double c_of_feed_mol_m3,
-           std::vector<bool> fed = {});
+  Kinetics(std::vector<Reaction> reactions, int species, int of, double c_of_feed_mol_m3, std::vector<bool> fed = {});
 
   [[nodiscard]] int reactions() const { return static_cast<int>(reactions_.size()); }
   [[nodiscard]] int species() const { return species_; }
@@ -49,8 +51,9 @@ class Kinetics {
   std::vector<double> nu_;  // species x reactions, row by species
   int species_ = 0, of_ = -1, independent_ = 0;
   double c_of_feed_ = 0;
-  std::vector<bool> fed_;                            // as `needed_` was worked out for; empty: not
+  std::vector<bool> fed_;  // as `needed_` was worked out for; empty: not
   std::vector<std::optional<double>> needed_;
+  std::shared_ptr<const RateEvaluator> compiled_;  // copied by every evaluator; absent: no reactions
 };
 
 /// Evaluates all rates at one state. Keeps the rate constants of the last temperature, so a held vessel pays no
