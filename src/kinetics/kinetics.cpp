@@ -26,10 +26,6 @@ Kinetics::Kinetics(std::vector<Reaction> reactions, int species, int of, double 
   needed_ = std::move(needed), fed_ = std::move(fed);
 }
 
-double Kinetics::nu(int species, int reaction) const {
-  return nu_[static_cast<std::size_t>(species) * reactions_.size() + static_cast<std::size_t>(reaction)];
-}
-
 bool Kinetics::has_table() const {
   return std::ranges::any_of(reactions_,
                              [](const Reaction& r) { return std::holds_alternative<RateTable>(r.forward); });

@@ -114,6 +114,12 @@ Outcome<Setup> make_setup(const Vessel& vessel, const Chemistry& chemistry, cons
   if (setup.is_jacketed() && !setup.heat_known())
     if (const auto missing = missing_heat_capacity(chemistry); !missing.empty())
       return cannot_tell("a vessel run on its jacket needs a heat capacity: " + missing);
+  if (setup.T_moves() && heat_is_constant(chemistry)) {
+    std::vector<double> dH;
+    for (int j = 0; j < chemistry.kinetics.reactions(); ++j)
+      dH.push_back(setup.dH(static_cast<std::size_t>(j), setup.inlet_K));
+    setup.constant_heat = {heat_capacity(chemistry, arrives.xi_mol_m3, setup.inlet_K), std::move(dH)};
+  }
   if (auto refused = add_capacities(setup)) return *refused;
   if (auto refused = table_does_not_serve(setup)) return *refused;
   return setup;

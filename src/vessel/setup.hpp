@@ -35,17 +35,33 @@ struct Setup {
   double agitator_W = 0;
   HeatKnowledge heat;
   JacketSide jacket;
+  /// Where heat capacity and heats of reaction are the same at any temperature: J/K per m3 of mixed feed, J/mol.
+  struct ConstantHeat {
+    double capacity_J_m3_K = 0;
+    std::vector<double> dH_J_mol;
+  };
+  std::optional<ConstantHeat> constant_heat;
 
   [[nodiscard]] bool heat_known() const { return heat.state == HeatKnowledge::State::known; }
   [[nodiscard]] bool is_jacketed() const { return jacket.UA_W_K > 0; }
   /// The temperature is a result.
   [[nodiscard]] bool T_moves() const { return !is_held && (heat_known() || is_jacketed()); }
+  /// Heat capacity of what 1 m3 of mixed feed has become at xi and T, J/K.
+  [[nodiscard]] double capacity_at(std::span<const double> xi, double T_K) const {
+    return constant_heat ? constant_heat->capacity_J_m3_K : heat_capacity(chemistry, xi, T_K);
+  }
+  /// Heat that what arrives takes up from its temperature to T, J per m3 of mixed feed.
+  [[nodiscard]] double warming_of_inlet(double T_K) const {
+    return constant_heat ? constant_heat->capacity_J_m3_K * (T_K - arrives.temperature_K)
+                         : sensible_heat(chemistry, arrives.xi_mol_m3, arrives.temperature_K, T_K);
+  }
   /// What a tank exchanges with agitator and jacket.
   [[nodiscard]] Exchange exchange(double feed_m3_s) const {
     return {agitator_W / feed_m3_s, jacket.mixed_W_K() / feed_m3_s, jacket.supply_K};
   }
   /// Heat of reaction j, J/mol; 0 where none has one.
   [[nodiscard]] double dH(std::size_t j, double T_K) const {
+    if (constant_heat) return constant_heat->dH_J_mol[j];
     const auto& heat_of = chemistry.kinetics.reaction(static_cast<int>(j)).heat;
     return heat_of ? heat_of->at(T_K) : 0;
   }

@@ -75,10 +75,9 @@ bool TankBalance::operator()(std::span<const double> y, std::span<double> F) {
     for (std::size_t j = 0; j < R_; ++j) F[i] -= tau_ * nu(i, j) * r_[j];
   }
   if (moves_) {
-    double heat = sensible_heat(setup_.chemistry, setup_.arrives.xi_mol_m3, setup_.inlet_K, T) - exchange_.added_J_m3 +
-                  exchange_.per_K_J_m3_K * (T - exchange_.medium_K);
+    double heat = setup_.warming_of_inlet(T) - exchange_.added_J_m3 + exchange_.per_K_J_m3_K * (T - exchange_.medium_K);
     for (std::size_t j = 0; j < R_; ++j) heat += tau_ * r_[j] * setup_.dH(j, T);
-    F[n_] = heat / heat_capacity(setup_.chemistry, setup_.arrives.xi_mol_m3, T);
+    F[n_] = heat / setup_.capacity_at(setup_.arrives.xi_mol_m3, T);
   }
   return std::ranges::all_of(F, [](double f) { return std::isfinite(f); });
 }
@@ -116,7 +115,7 @@ bool TankBalance::jacobian(std::span<const double> y, std::span<double> J) {
     for (std::size_t j = 0; j < R_; ++j) J[i * m + n_] -= tau_ * nu(i, j) * dr_dT_[j];
   }
   if (!moves_) return true;
-  const double capacity = heat_capacity(setup_.chemistry, setup_.arrives.xi_mol_m3, T), h = 1e-5 * T;
+  const double capacity = setup_.capacity_at(setup_.arrives.xi_mol_m3, T), h = 1e-5 * T;
   for (std::size_t k = 0; k < n_; ++k) {
     double heat = 0;
     for (std::size_t j = 0; j < R_; ++j) heat += tau_ * dr_dc_[k * R_ + j] * setup_.dH(j, T);
@@ -135,7 +134,7 @@ double TankBalance::warms_slower(std::span<const double> y) const {
   double contents = 0;
   for (std::size_t i = 0; i < n_; ++i)
     if (const auto& cp = setup_.chemistry.feed.species[i].heat_capacity) contents += y[i] * cp->at(T);
-  return contents > 0 ? heat_capacity(setup_.chemistry, setup_.arrives.xi_mol_m3, T) / contents : 1;
+  return contents > 0 ? setup_.capacity_at(setup_.arrives.xi_mol_m3, T) / contents : 1;
 }
 
 double TankBalance::allowed(std::span<const double> step) const {
@@ -159,7 +158,7 @@ double TankBalance::imbalance(std::span<const double> y) {
     if (terms > 0) worst = std::max(worst, std::abs(F[i]) / terms);
   }
   if (moves_) {
-    const double capacity = heat_capacity(setup_.chemistry, setup_.arrives.xi_mol_m3, T);
+    const double capacity = setup_.capacity_at(setup_.arrives.xi_mol_m3, T);
     double terms = T + exchange_.per_K_J_m3_K * (T + exchange_.medium_K) / capacity;
     for (std::size_t j = 0; j < R_; ++j) terms += tau_ * both_ways[j] * std::abs(setup_.dH(j, T)) / capacity;
     worst = std::max(worst, std::abs(F[n_]) / terms);

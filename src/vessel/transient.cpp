@@ -83,9 +83,7 @@ void Transient::rates(std::span<const double> y, double T) {
 }
 
 double Transient::warming(std::span<const double> y, double T) const {
-  const Chemistry& chemistry = setup_.chemistry;
-  double heat = exchange_.added_J_m3 - exchange_.per_K_J_m3_K * (T - exchange_.medium_K) -
-                sensible_heat(chemistry, setup_.arrives.xi_mol_m3, setup_.arrives.temperature_K, T);
+  double heat = exchange_.added_J_m3 - exchange_.per_K_J_m3_K * (T - exchange_.medium_K) - setup_.warming_of_inlet(T);
   for (std::size_t j = 0; j < r_.size(); ++j) heat -= tau_ * r_[j] * setup_.dH(j, T);
   return heat / capacity(y, T);
 }
@@ -94,7 +92,7 @@ double Transient::warming(std::span<const double> y, double T) const {
 double Transient::capacity(std::span<const double> y, double T) const {
   const Feed& feed = setup_.chemistry.feed;
   if (feed.heat_capacity_J_kg_K) {
-    const double of_feed = heat_capacity(setup_.chemistry, setup_.arrives.xi_mol_m3, T);
+    const double of_feed = setup_.capacity_at(setup_.arrives.xi_mol_m3, T);
     return setup_.is_gas ? of_feed * setup_.inlet_Pa / (gas_constant * T) / total_in_ : of_feed;
   }
   double sum = 0;

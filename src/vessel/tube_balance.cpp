@@ -199,7 +199,7 @@ void TubeBalance::operator()(std::span<const double> y, std::span<double> dy) {
 double TubeBalance::warming(std::span<const double> y, double T) const {
   double heat = -u_ * (T - medium(y));
   for (std::size_t j = 0; j < R_; ++j) heat -= r_[j] * setup_.dH(j, T);
-  return heat / heat_capacity(setup_.chemistry, y.first(R_), T);
+  return heat / setup_.capacity_at(y.first(R_), T);
 }
 
 /// By differences in the amount of each species, in proportion to it, so that what is nearly gone is felt at its own
@@ -240,12 +240,12 @@ void TubeBalance::jacobian(std::span<const double> y, std::span<double> J) {
       for (std::size_t j = 0; j < R_; ++j) J[j * m + *temperature_] = factor_ * (r_[j] - r[j]) / h;
       J[*temperature_ * m + *temperature_] = factor_ * (warming(y, T + h) - warms) / h;
     } else {
-      const double capacity = heat_capacity(setup_.chemistry, y.first(R_), T);
+      const double capacity = setup_.capacity_at(y.first(R_), T);
       for (std::size_t k = 0; k < R_; ++k) add_column(k, h, -setup_.dH(k, T) / capacity);
     }
   }
   if (medium_) {
-    J[*temperature_ * m + *medium_] = factor_ * u_ / heat_capacity(setup_.chemistry, y.first(R_), T);
+    J[*temperature_ * m + *medium_] = factor_ * u_ / setup_.capacity_at(y.first(R_), T);
     J[*medium_ * m + *temperature_] = factor_ * medium_u_;
     J[*medium_ * m + *medium_] = -factor_ * medium_u_;
   }

@@ -28,8 +28,11 @@ class Kinetics {
   [[nodiscard]] int of() const { return of_; }  ///< index of conversion_of
   [[nodiscard]] double c_of_feed() const { return c_of_feed_; }
   [[nodiscard]] const Reaction& reaction(int j) const { return reactions_[static_cast<std::size_t>(j)]; }
-  [[nodiscard]] double nu(int species, int reaction) const;  ///< net coefficient nu_ij
-  [[nodiscard]] bool has_table() const;                      ///< a measured table (then there is one reaction)
+  /// Net coefficient nu_ij.
+  [[nodiscard]] double nu(int species, int reaction) const {
+    return nu_[static_cast<std::size_t>(species) * reactions_.size() + static_cast<std::size_t>(reaction)];
+  }
+  [[nodiscard]] bool has_table() const;  ///< a measured table (then there is one reaction)
   /// Rank of the matrix nu: the number of independent reactions.
   [[nodiscard]] int independent() const { return independent_; }
   /// Change of moles by reaction j, sum_i nu_ij.
