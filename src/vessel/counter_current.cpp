@@ -64,8 +64,9 @@ class Shooting {
 
   TubeMarch shoot(double leaving_K, Accuracy accuracy) {
     TubeMarch march(TubeBalance(setup_, TubeBalance::Coordinate::length, feed_m3_s_), leaving_K, accuracy);
-    const double room = 1 + 0.1 * (high_ - low_);
-    march.keep_medium_within(low_ - room, high_ + room);
+    // a trial may leave what is possible and come back; only one that runs away is cut short
+    const double room = 50 + 3 * (high_ - low_);
+    march.keep_medium_within(std::max(low_ / 2, low_ - room), high_ + room);
     march.go_to(1);
     calls_ += march.balance().calls();
     return march;

@@ -182,3 +182,17 @@ TEST_CASE("the range searched: 1e-6 to 1e8 times the volume in one hour", "[wind
   CHECK(lo == Approx(1e-9).epsilon(1e-14));
   CHECK(hi == Approx(1e5).epsilon(1e-14));
 }
+
+TEST_CASE("a window that opens at a jump between two samples is found, and the jump is told", "[windows]") {
+  // below 2.003 the state is cold (-0.5); there it ignites, and falls to miss the target at 2.05: far narrower than
+  // samples
+  const auto w = windows_of([](double v) { return Margins{{"target", v < 2.003 ? -0.5 : 2.05 - v}}; });
+  REQUIRE(w.intervals.size() == 1);
+  CHECK(*w.floor_m3_s == Approx(2.003).epsilon(1e-9));
+  CHECK(*w.ceiling_m3_s == Approx(2.05).epsilon(1e-9));
+  REQUIRE(w.jumps_m3_s.size() == 1);
+  CHECK(w.jumps_m3_s[0] == Approx(2.003).epsilon(1e-9));
+  REQUIRE(caution_window_at_fold(w));
+  CHECK(caution_window_at_fold(w)->id == "near-fold");
+  CHECK_FALSE(caution_window_at_fold(windows_of([](double v) { return Margins{{"target", 3.0 - v}}; })));
+}
