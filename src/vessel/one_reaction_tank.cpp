@@ -183,7 +183,7 @@ class OneReactionTank final : public Solver {
     const double xi_in = setup_.arrives.xi_mol_m3[0];
     if (state.at_end && curve_) {  // a reactant is gone: the rate just before must be enough
       const double L = curve_->way().length();
-      const double made = tau * curve_->way().rate(L, 1e-16 * L);
+      const double made = tau * curve_->way().rate(L, place_at(y_most, L).s);
       if (curve_->way().kind() == EndKind::equilibrium) return 0;
       return std::max(0.0, L - made) / (L + made);
     }

@@ -85,19 +85,15 @@ class Trial {
 }  // namespace
 
 double Runaway::share(double medium_K) {
-  if (TubeBalance::serves_all_rates(setup_)) {
-    const auto [at, is_new] = at_kelvin_.try_emplace(0);
-    if (is_new) at->second = share_at(setup_.jacket.supply_K);
-    return at->second;
-  }
-  const auto kelvin = [this](int K) {
-    const auto [at, is_new] = at_kelvin_.try_emplace(K);
+  const auto kept = [this](int step, double K) {
+    const auto [at, is_new] = at_step_.try_emplace(step);
     if (is_new) at->second = share_at(K);
     return at->second;
   };
-  const int below = static_cast<int>(std::floor(medium_K));
-  const double between = medium_K - below;
-  return (1 - between) * kelvin(below) + between * kelvin(below + 1);
+  if (TubeBalance::serves_all_rates(setup_)) return kept(0, setup_.jacket.supply_K);
+  const double steps = medium_K / step_K, below = std::floor(steps), between = steps - below;
+  const auto step = static_cast<int>(below);
+  return (1 - between) * kept(step, step_K * below) + between * kept(step + 1, step_K * (below + 1));
 }
 
 double Runaway::share_at(double medium_K) {

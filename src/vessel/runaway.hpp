@@ -22,7 +22,8 @@ class Runaway {
   double share_at(double medium_K);
 
   const Setup& setup_;
-  std::map<int, double> at_kelvin_;
+  static constexpr double step_K = 5;
+  std::map<int, double> at_step_;
 };
 
 }  // namespace vatwright
