@@ -205,18 +205,21 @@ void add_plot(Page& page, Plot plot, Shown x, Shown y, const Look& look) {
 
 void add_profile(Page& page, const Rating& vessel, const Look& look) {
   const Profile& profile = *vessel.profile;
+  const bool held = profile.flux_W_m2.size() == profile.length_m.size();  // what the wall must take is told instead
   Table table;
   table.columns = {{with_unit("from inlet", Shown::length, look), Align::point},
                    {"X\n%", Align::point},
                    {with_unit("temperature", Shown::temperature, look), Align::point},
                    {with_unit("pressure", Shown::pressure, look), Align::point},
-                   {with_unit("medium", Shown::temperature, look), Align::point}};
+                   held ? Column{with_unit("to remove", Shown::heat_flux, look), Align::point}
+                        : Column{with_unit("medium", Shown::temperature, look), Align::point}};
   for (std::size_t at : places_along(profile.length_m))
     table.rows.push_back({figure(profile.length_m[at], Shown::length, look),
                           figure(profile.conversion[at], Shown::percent, look),
                           figure(profile.temperature_K[at], Shown::temperature, look),
                           figure(profile.pressure_Pa[at], Shown::pressure, look),
-                          figure(profile.medium_K[at], Shown::temperature, look)});
+                          held ? figure(profile.flux_W_m2[at], Shown::heat_flux, look)
+                               : figure(profile.medium_K[at], Shown::temperature, look)});
   page.heading("Along " + vessel.tag);
   page.table(table);
   const auto [coldest, hottest] = std::ranges::minmax(profile.temperature_K);

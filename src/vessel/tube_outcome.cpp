@@ -145,6 +145,7 @@ Profile profile_of(const SolvedTube& tube, double hottest_at) {
     profile.temperature_K.push_back(there.temperature_K);
     profile.pressure_Pa.push_back(there.pressure_Pa);
     profile.medium_K.push_back(tube.setup.is_jacketed() ? std::optional(tube.medium_at(z)) : std::nullopt);
+    if (tube.setup.is_held && tube.setup.heat_known()) profile.flux_W_m2.push_back(flux_at(tube, there));
   }
   return profile;
 }

@@ -69,7 +69,7 @@ Rating sample_tube() {
   wetted.state = Limit::State::broken;
   tube.limits = {wetted};
   tube.residual = 0;
-  tube.profile = Profile{{0, 1}, {0, 0.1}, {0, 0.4}, {343.15, 343.15}, {4e5, 3.5e5}, {std::nullopt, 300.0}};
+  tube.profile = Profile{{0, 1}, {0, 0.1}, {0, 0.4}, {343.15, 343.15}, {4e5, 3.5e5}, {std::nullopt, 300.0}, {}};
   return tube;
 }
 

@@ -44,6 +44,7 @@ struct SteadyState {
 struct Profile {
   std::vector<double> length_m, volume_m3, conversion, temperature_K, pressure_Pa;
   std::vector<std::optional<double>> medium_K;
+  std::vector<double> flux_W_m2;  ///< held: heat that the wall must take there (+); empty where heat is not known
 };
 
 /// Heat made and heat removed by a tank over its temperature, arrays of equal length.
