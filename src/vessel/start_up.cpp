@@ -109,7 +109,7 @@ class StartUp {
     const Jacobian jacobian(by_amounts);
     const auto near = [&](double, std::span<const double> at) { return away_from_states(at); };
     const Event event(near);
-    const MarchOptions options{.rel_tol = 1e-8, .abs_tol = 1e-11, .scale = scale_, .most_calls = 300'000};
+    const MarchOptions options{.rel_tol = 1e-8, .abs_tol = 1e-11, .scale = scale_, .most_calls = 2'000'000};
     auto track = march(f, y_, 0, space_times, options, {&event, 1}, &jacobian);
     if (const auto* no = std::get_if<NoAnswer>(&track))
       return unsolved("the start-up could not be followed: " + no->why);
