@@ -1,6 +1,8 @@
 #include "vatwright/kinetics/kinetics.hpp"
 
 #include <algorithm>
+#include <cmath>
+#include <limits>
 
 #include "rate_part.hpp"
 #include "vatwright/error/expects.hpp"
@@ -24,6 +26,13 @@ Kinetics::Kinetics(std::vector<Reaction> reactions, int species, int of, double 
   std::vector<std::optional<double>> needed;
   for (int i = 0; i < species; ++i) needed.push_back(moles_needed(*this, fed, i));
   needed_ = std::move(needed), fed_ = std::move(fed);
+}
+
+double Kinetics::left_to_run(int j, std::span<const double> c) const {
+  double extent = std::numeric_limits<double>::infinity();
+  for (int i = 0; i < species_; ++i)
+    if (const double net = nu(i, j); net < 0) extent = std::min(extent, c[static_cast<std::size_t>(i)] / -net);
+  return std::isfinite(extent) ? std::max(extent, 0.0) : 0;
 }
 
 bool Kinetics::has_table() const {

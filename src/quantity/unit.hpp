@@ -23,6 +23,9 @@ struct Unit {
   double zero = 0;  ///< temperature: absolute zero lies at minus this number
 };
 
+/// The one list of units.
+std::span<const Unit> all_units();
+
 /// Null where the word is not a unit; capitals count.
 const Unit* find_unit(std::string_view word);
 

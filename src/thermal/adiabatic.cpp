@@ -1,8 +1,6 @@
 #include "vatwright/thermal/adiabatic.hpp"
 
 #include <algorithm>
-#include <cmath>
-#include <limits>
 #include <numeric>
 #include <vector>
 
@@ -11,23 +9,13 @@ namespace vatwright {
 namespace {
 constexpr int most_permuted = 5;
 
-/// Extent that reaction j can still run from c, mol per m3 of mixed feed; 0 where a reactant is missing.
-double left_to_run(const Kinetics& k, int j, const std::vector<double>& c) {
-  double extent = std::numeric_limits<double>::infinity();
-  for (int i = 0; i < k.species(); ++i) {
-    const double nu = k.nu(i, j);
-    if (nu < 0) extent = std::min(extent, c[static_cast<std::size_t>(i)] / -nu);
-  }
-  return std::isfinite(extent) ? std::max(extent, 0.0) : 0;
-}
-
 void widen(const Chemistry& chemistry, std::span<const double> xi_in, double T_in_K, const std::vector<int>& order,
            AdiabaticRange& range) {
   const Kinetics& k = chemistry.kinetics;
   std::vector<double> xi(xi_in.begin(), xi_in.end()), c(chemistry.feed.c_mol_m3.size());
   for (const int j : order) {
     k.amounts(chemistry.feed.c_mol_m3, xi, c);
-    xi[static_cast<std::size_t>(j)] += left_to_run(k, j, c);
+    xi[static_cast<std::size_t>(j)] += k.left_to_run(j, c);
     const double T_K = adiabatic_temperature(chemistry, xi_in, T_in_K, xi);
     if (T_K > range.warmest_K) range.warmest_K = T_K;  // false for NaN
     if (T_K < range.coldest_K) range.coldest_K = T_K;

@@ -1,7 +1,6 @@
 #include "start_state.hpp"
 
 #include <algorithm>
-#include <limits>
 
 namespace vatwright {
 namespace {
@@ -11,11 +10,7 @@ std::vector<double> extents_of_product(const Chemistry& chemistry) {
   std::vector<double> xi(static_cast<std::size_t>(kinetics.reactions()));
   for (int j = 0; j < kinetics.reactions(); ++j) {
     if (!(kinetics.nu(kinetics.of(), j) < 0)) continue;
-    double most = std::numeric_limits<double>::infinity();
-    for (int i = 0; i < kinetics.species(); ++i)
-      if (const double nu = kinetics.nu(i, j); nu < 0)
-        most = std::min(most, chemistry.feed.c_mol_m3[static_cast<std::size_t>(i)] / -nu);
-    xi[static_cast<std::size_t>(j)] = most;
+    xi[static_cast<std::size_t>(j)] = kinetics.left_to_run(j, chemistry.feed.c_mol_m3);
     break;
   }
   return xi;

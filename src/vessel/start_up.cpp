@@ -4,10 +4,10 @@
 #include <cmath>
 #include <numeric>
 
+#include "least_squares.hpp"
 #include "transient.hpp"
 #include "uncooled.hpp"
 #include "vatwright/numeric/march.hpp"
-#include "vatwright/numeric/matrix.hpp"
 
 namespace vatwright {
 namespace {
@@ -17,20 +17,15 @@ namespace {
 std::vector<double> extents_of(const Setup& setup, std::span<const double> C) {
   const Kinetics& kinetics = setup.chemistry.kinetics;
   const auto R = static_cast<std::size_t>(kinetics.reactions());
-  const std::size_t m = R + (setup.is_gas ? 1 : 0);
-  std::vector<double> A(m * m), b(m), row(m);
+  std::vector<double> A, b;
   for (std::size_t i = 0; i < C.size(); ++i) {  // e C_i - nu xi = c_feed,i, e = 1 for a liquid
-    for (std::size_t j = 0; j < R; ++j) row[j] = -kinetics.nu(static_cast<int>(i), static_cast<int>(j));
-    if (setup.is_gas) row[R] = C[i];
-    const double right = setup.chemistry.feed.c_mol_m3[i] - (setup.is_gas ? 0 : C[i]);
-    for (std::size_t j = 0; j < m; ++j) {
-      for (std::size_t k = 0; k < m; ++k) A[j * m + k] += row[j] * row[k];
-      b[j] += row[j] * right;
-    }
+    for (std::size_t j = 0; j < R; ++j) A.push_back(-kinetics.nu(static_cast<int>(i), static_cast<int>(j)));
+    if (setup.is_gas) A.push_back(C[i]);
+    b.push_back(setup.chemistry.feed.c_mol_m3[i] - (setup.is_gas ? 0 : C[i]));
   }
-  if (kinetics.independent() < kinetics.reactions() || !solve_linear(A, b)) return {};
-  b.resize(R);
-  return b;
+  auto xi = least_squares(A, b, R + (setup.is_gas ? 1 : 0));
+  if (!xi.empty()) xi.resize(R);
+  return xi;
 }
 
 constexpr double creeps_on = 1e5;      // space times

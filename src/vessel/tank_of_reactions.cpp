@@ -50,11 +50,7 @@ class TankOfReactions final : public Solver {
   Extents run_on(Extents xi, std::size_t j, double share) const {
     std::vector<double> c(static_cast<std::size_t>(setup_.chemistry.kinetics.species()));
     setup_.chemistry.kinetics.amounts(setup_.chemistry.feed.c_mol_m3, xi, c);
-    double most = std::numeric_limits<double>::infinity();
-    for (std::size_t i = 0; i < c.size(); ++i)
-      if (const double nu = setup_.chemistry.kinetics.nu(static_cast<int>(i), static_cast<int>(j)); nu < 0)
-        most = std::min(most, std::max(0.0, c[i]) / -nu);
-    if (std::isfinite(most)) xi[j] += share * most;
+    xi[j] += share * setup_.chemistry.kinetics.left_to_run(static_cast<int>(j), c);
     return xi;
   }
 

@@ -1,7 +1,6 @@
 #include "uncooled.hpp"
 
 #include <algorithm>
-#include <cmath>
 
 #include "vatwright/thermal/adiabatic.hpp"
 
@@ -22,18 +21,11 @@ double warmest_uncooled(const Setup& setup, std::span<const double> C, double T_
 }
 
 double potential_K(const Setup& setup, std::span<const double> C, double T_K) {
-  const Kinetics& kinetics = setup.chemistry.kinetics;
-  double heat = 0, capacity = 0;
-  for (std::size_t j = 0; j < setup.capacity.size(); ++j) {
-    double extent = std::numeric_limits<double>::infinity();
-    for (std::size_t i = 0; i < C.size(); ++i)
-      if (const double nu = kinetics.nu(static_cast<int>(i), static_cast<int>(j)); nu < 0)
-        extent = std::min(extent, std::max(0.0, C[i]) / -nu);
-    heat += std::max(0.0, -setup.dH(j, T_K)) * (std::isfinite(extent) ? extent : 0);
-  }
+  double heat = 0;
+  for (std::size_t j = 0; j < setup.capacity.size(); ++j)
+    heat += std::max(0.0, -setup.dH(j, T_K)) * setup.chemistry.kinetics.left_to_run(static_cast<int>(j), C);
   const std::vector<double> none(setup.capacity.size(), 0.0);
-  capacity = heat_capacity(setup.chemistry, none, T_K);
-  return T_K + heat / capacity;
+  return T_K + heat / setup.capacity_at(none, T_K);
 }
 
 std::optional<double> most_driving_K(const Setup& setup, RateEvaluator& evaluator, const Stream& there) {

@@ -30,6 +30,14 @@ TEST_CASE("of A -> B, B -> C, A -> C two are independent", "[kinetics]") {
   CHECK(kinetics.independent() == 2);
 }
 
+TEST_CASE("a reaction runs until its limiting reactant is gone", "[kinetics]") {
+  // A + 3 B -> 6 R of 100 A, 200 B: B is gone at 200/3
+  const Kinetics kinetics({elementary({{0, -1}, {1, -3}, {2, 6}}, 1)}, 4, 0, 100);
+  CHECK(kinetics.left_to_run(0, std::vector<double>{100, 200, 0, 100}) == Approx(200.0 / 3));
+  CHECK(kinetics.left_to_run(0, std::vector<double>{100, 0, 0, 100}) == 0);
+  CHECK(kinetics.left_to_run(0, std::vector<double>{-1e-12, 5, 0, 100}) == 0);
+}
+
 TEST_CASE("amounts and conversion of a gas with several species", "[kinetics]") {
   // O. Levenspiel, Chemical Reaction Engineering, 3rd ed., example 4.1: A + 3 B -> 6 R; 100 A, 200 B, 100 inert. At X_A
   // = 0.5: A 50, B 50, R 300, inert 100; X_B = 0.75.

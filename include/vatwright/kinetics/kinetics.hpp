@@ -43,6 +43,10 @@ class Kinetics {
   /// c_i = c_feed,i + sum_j nu_ij xi_j, per m3 of mixed feed. c: one per species.
   void amounts(std::span<const double> c_feed, std::span<const double> xi, std::span<double> c) const;
 
+  /// The extent that reaction j can still run forward from amounts c, until its limiting reactant is gone: 0 where one is
+  /// missing, or where it has no reactant. In the unit of c, one per species.
+  [[nodiscard]] double left_to_run(int j, std::span<const double> c) const;
+
   /// The first (reaction, species) whose rate has no value at these concentrations: a species with a negative order in
   /// a part that runs there (its reactants, or products, all above zero), itself at or below zero. Empty: all have one.
   [[nodiscard]] std::optional<std::pair<int, int>> absent_with_negative_order(std::span<const double> C) const;
