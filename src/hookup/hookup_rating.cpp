@@ -36,11 +36,7 @@ HookupRating rate_hookup(const Problem& problem, const Hookup& hookup, const Hoo
   if (!options.windows) return rating;
   bool any_answer = false;
   Windows windows = windows_of(chooser, any_answer);
-  if (windows.unsolved) {
-    rating.whole.unsolved = true;
-    rating.whole.stands_in_the_way.push_back("window not wholly known, " + windows.why);
-  }
-  if (any_answer || windows.why.empty()) rating.whole.windows = std::move(windows);
+  tell_windows(rating.whole, std::move(windows), any_answer);
   return rating;
 }
 

@@ -16,8 +16,9 @@ std::optional<Limit> check_steady_state_stable(const LimitInput& input) {
   if (input.outcome.cycle) {
     return broken(limit_name::steady_state_stable, "brought on line as the duty says, the vessel ends in a cycle");
   }
-  const auto reached = std::find_if(states.begin(), states.end(), [](const SteadyState& s) { return s.reached; });
-  if (reached != states.end() && !reached->stable) {
+  const auto reached =
+      std::find_if(states.begin(), states.end(), [](const SteadyState& s) { return s.reached == true; });
+  if (reached != states.end() && reached->stable == false) {
     return broken(limit_name::steady_state_stable, "the start lies on a state that is not stable");
   }
   return held(limit_name::steady_state_stable);

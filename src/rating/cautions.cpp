@@ -124,7 +124,8 @@ std::optional<Caution> driving_caution(const VesselOutcome& outcome) {
 }
 
 std::optional<Caution> glass_caution(const std::vector<Limit>& limits) {
-  const auto at = std::find_if(limits.begin(), limits.end(), [](const Limit& l) { return l.of_difference; });
+  const auto at =
+      std::find_if(limits.begin(), limits.end(), [](const Limit& l) { return l.name == "glass temperature step"; });
   if (at == limits.end() || *at->value <= glass_used * *at->bound) return std::nullopt;
   return Caution{"glass-step", "Across the glass lining " + show(*at->value, Shown::difference) + " come at once, of " +
                                    show(*at->bound, Shown::difference) +

@@ -18,21 +18,11 @@ std::string_view text_of(Verdict verdict) {
 
 namespace {
 constexpr std::string_view pressure_drop = "pressure drop";
-constexpr double residual_isothermal = 1e-9, residual_otherwise = 1e-6;
 
 LimitInput input_of(const VesselPlace& place, const VesselOutcome& outcome, const Utility* medium) {
   const Duty& duty = place.problem.duty;
   return {place.vessel,    duty.chemistry, place.operation, duty.limits,      place.problem.site.utilities,
           place.feed_m3_s, outcome,        medium,          place.arrives_Pa, place.stands};
-}
-
-/// An imbalance too large makes an outcome no answer.
-std::optional<NoAnswer> why_none(const Outcome<VesselOutcome>& outcome) {
-  if (const auto* none = std::get_if<NoAnswer>(&outcome)) return *none;
-  const VesselOutcome& o = std::get<VesselOutcome>(outcome);
-  const double most = o.isothermal ? residual_isothermal : residual_otherwise;
-  if (o.residual <= most) return std::nullopt;
-  return NoAnswer{NoAnswer::Kind::unsolved, "the balances do not close: residual " + show(o.residual, Shown::number)};
 }
 
 /// The limit "pressure drop" broken, in its place in the order.
@@ -94,7 +84,7 @@ Judged judge(const VesselPlace& place, const Outcome<VesselOutcome>& outcome) {
   static const VesselOutcome nothing;
   Judged judged;
   judged.lacking = lacking_utility(place.vessel, place.operation);
-  judged.no_answer = why_none(outcome);
+  if (const auto* none = std::get_if<NoAnswer>(&outcome)) judged.no_answer = *none;
   if (judged.no_answer) {
     judged.figures = false;
     judged.limits = check_limits_of_files(input_of(place, nothing, nullptr));

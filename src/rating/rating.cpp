@@ -53,17 +53,11 @@ double fluid_volume_of(const Duty& duty, const Vessel& vessel, const Operation& 
   return fluid_volume(vessel.kind, duty.chemistry.feed.phase == Phase::gas ? 1 : operation.fill);
 }
 
-void tell_windows(Rating& rating, const VesselPlace& place, VesselRun& run) {
+void add_windows(Rating& rating, const VesselPlace& place, VesselRun& run) {
   Trials trials(place.problem, place.vessel, place.operation, run);
   const auto [lo, hi] = search_range(fluid_volume_of(place.problem.duty, place.vessel, place.operation));
-  const Windows windows = find_windows([&](double v) { return trials(v); }, lo, hi);
-  if (windows.unsolved) {
-    rating.unsolved = true;
-    rating.stands_in_the_way.push_back("window not wholly known, " + windows.why);
-  }
-  if (!trials.any_answer() && !windows.why.empty()) return;  // nothing answered: nothing is known of a window
-  rating.windows = windows;
-  if (auto fold = caution_window_at_fold(windows)) rating.cautions.push_back(*fold);
+  Windows windows = find_windows([&](double v) { return trials(v); }, lo, hi);
+  tell_windows(rating, std::move(windows), trials.any_answer());
 }
 
 double start_K(const VesselPlace& place) {
@@ -88,6 +82,16 @@ Stream arriving_first(const Duty& duty, const Operation& operation) {
 }
 }  // namespace
 
+void tell_windows(Rating& rating, Windows windows, bool any_answer) {
+  if (windows.unsolved) {
+    rating.unsolved = true;
+    rating.stands_in_the_way.push_back("window not wholly known, " + windows.why);
+  }
+  if (!any_answer && !windows.why.empty()) return;
+  if (auto fold = caution_window_at_fold(windows)) rating.cautions.push_back(*fold);
+  rating.windows = std::move(windows);
+}
+
 void tell_vessel(Rating& rating, const VesselPlace& place, const Judged& judged, const VesselOutcome* outcome) {
   rating.tag = place.vessel.tag;
   rating.kind = std::string(kind_of(place.vessel));
@@ -95,9 +99,12 @@ void tell_vessel(Rating& rating, const VesselPlace& place, const Judged& judged,
   if (judged.medium) rating.medium = judged.medium->name;
   name_yields(rating, place.problem.duty);
   if (!outcome || judged.no_answer) return;
-  if (std::holds_alternative<StirredTank>(place.vessel.kind) || !outcome->states.empty()) {
+  const bool is_tank = std::holds_alternative<StirredTank>(place.vessel.kind);
+  if (is_tank || !outcome->states.empty()) {
     rating.steady_states = outcome->states;
     rating.states_complete = outcome->states_complete;
+  }
+  if (is_tank) {
     rating.started = start_words(place);
     const double ends_K = std::max(outcome->hottest_K, start_K(place));
     rating.peaks = outcome->start_peak_K && *outcome->start_peak_K > ends_K + 1;
@@ -133,7 +140,7 @@ Rating rate(const Problem& problem, const Vessel& vessel, const RateOptions& opt
     };
     if (auto fold = caution_near_fold(conversion_at, place.feed_m3_s)) rating.cautions.push_back(*fold);
   }
-  if (options.windows) tell_windows(rating, place, run);
+  if (options.windows) add_windows(rating, place, run);
   return rating;
 }
 

@@ -31,6 +31,8 @@ Json outlet_json(const Rating& rating, Amounts amounts) {
   return json;
 }
 
+Json truth(std::optional<bool> known) { return known ? Json(*known) : Json(nullptr); }
+
 Json states_json(const Rating& rating) {
   if (!rating.steady_states) return nullptr;
   Json json = Json::array();
@@ -38,8 +40,8 @@ Json states_json(const Rating& rating) {
     Json item;
     item["conversion"] = number(state.conversion);
     item["temperature_K"] = number(state.temperature_K);
-    item["stable"] = state.stable;
-    item["reached"] = state.reached;
+    item["stable"] = truth(state.stable);
+    item["reached"] = truth(state.reached);
     json.push_back(item);
   }
   return json;

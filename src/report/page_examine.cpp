@@ -141,9 +141,9 @@ void add_limits(Page& page, const HookupRating& rating, const Look& look) {
 /// Which of several states, and how it gets there, in words.
 void add_starts(Page& page, const Rating& vessel, const Look& look) {
   const auto& states = vessel.steady_states;
-  if (!states || (states->size() < 2 && vessel.conversion)) return;
+  if (!states || vessel.started.empty() || (states->size() < 2 && vessel.conversion)) return;
   std::string text = vessel.tag + ", " + vessel.started + " before its feed is opened, ";
-  const auto reached = std::ranges::find(*states, true, &SteadyState::reached);
+  const auto reached = std::ranges::find(*states, std::optional(true), &SteadyState::reached);
   if (reached == states->end()) {
     text += "comes to none of them: it ends in a cycle";
   } else {
@@ -153,6 +153,8 @@ void add_starts(Page& page, const Rating& vessel, const Look& look) {
   }
   page.paragraph(text + ".", 2, 2);
 }
+
+std::string yes_or_no(std::optional<bool> known) { return !known ? "-" : *known ? "yes" : "no"; }
 
 void add_states(Page& page, const HookupRating& rating, const Look& look) {
   Table table;
@@ -167,8 +169,8 @@ void add_states(Page& page, const HookupRating& rating, const Look& look) {
     complete = complete && vessel.states_complete.value_or(true);
     for (const SteadyState& state : *vessel.steady_states)
       table.rows.push_back({vessel.tag, figure(state.conversion, Shown::percent, look),
-                            figure(state.temperature_K, Shown::temperature, look), state.stable ? "yes" : "no",
-                            state.reached ? "yes" : "no"});
+                            figure(state.temperature_K, Shown::temperature, look), yes_or_no(state.stable),
+                            yes_or_no(state.reached)});
   }
   if (table.rows.empty()) return;
   page.heading(complete ? "Steady states, all there are" : "Steady states that were found; there may be more");

@@ -75,7 +75,7 @@ class Shooting {
   /// Of the medium at the far end; where it left its range before that, as far as it got.
   double mismatch(double leaving_K, Accuracy accuracy) {
     const TubeMarch march = shoot(leaving_K, accuracy);
-    // a march that freezes on the way shows a medium far too cold, one that blows up a medium far too hot
+    // a march that freezes on the way shows a medium far too cold
     if (march.failed() && march.balance().temperature(march.state()) < 0.7 * low_) return low_ - high_ - 1;
     if (march.failed() || march.used_up()) {
       if (march.failed()) failed_ = march.failed();

@@ -67,7 +67,7 @@ class MarchedTube final : public Solver {
       const TubeBalance& balance = solution.march.balance();
       std::vector<double> xi(y.begin(), y.begin() + static_cast<std::ptrdiff_t>(balance.extents()));
       const double X = setup_.chemistry.kinetics.conversion(xi);
-      told->states.push_back({std::move(xi), X, balance.temperature(y), true, told->states.empty()});
+      told->states.push_back({std::move(xi), X, balance.temperature(y), {}, {}});
     }
     return outcome;
   }

@@ -11,8 +11,8 @@ namespace vatwright {
 /// twice as strongly as that of a tube far from it, whose answer is 1.
 /// The medium is taken at one temperature all along, the one it has beside the hot spot, and the pressure as that of
 /// the inlet, so that the share depends on that temperature alone: where it moves it is worked out every five
-/// kelvins, and read between them by a straight line. M. Morbidelli, A. Varma, Chem. Eng. Sci. 43 (1988) 91 (the criterion of
-/// greatest sensitivity, from memory).
+/// kelvins, and read between them by a straight line. M. Morbidelli, A. Varma, Chem. Eng. Sci. 43 (1988) 91 (the
+/// criterion of greatest sensitivity, from memory).
 class Runaway {
  public:
   explicit Runaway(const Setup& setup) : setup_(setup) {}

@@ -32,7 +32,7 @@ void tell_driving(const Setup& setup, RateEvaluator& evaluator, VesselOutcome& o
 
 void tell_of_tank(const Setup& setup, double feed_m3_s, VesselOutcome& outcome, Detail detail,
                   RateEvaluator& evaluator) {
-  const auto reached = std::ranges::find(outcome.states, true, &SteadyState::reached);
+  const auto reached = std::ranges::find(outcome.states, std::optional(true), &SteadyState::reached);
   if (reached == outcome.states.end()) return;
   const auto& xi_in = setup.arrives.xi_mol_m3;
   outcome.outlet = {feed_m3_s, reached->xi_mol_m3, reached->temperature_K, setup.inlet_Pa};
@@ -47,12 +47,12 @@ void tell_of_tank(const Setup& setup, double feed_m3_s, VesselOutcome& outcome, 
   if (setup.is_jacketed()) {
     const JacketSide& jacket = setup.jacket;
     outcome.heat = HeatNeed{jacket.mixed_W_K() * (reached->temperature_K - jacket.supply_K), 0, 0, 0};
+  } else if (setup.is_held && setup.heat_known()) {
+    const double warming = sensible_heat(setup.chemistry, xi_in, setup.arrives.temperature_K, setup.inlet_K);
+    const double released = released_heat(setup.chemistry, xi_in, reached->xi_mol_m3, setup.inlet_K);
+    outcome.heat = HeatNeed{feed_m3_s * (released - warming) + setup.agitator_W, 0, 0, 0};
   }
   if (cooling_can_fail(setup)) tell_uncooled(setup, outcome.outlet, outcome);
-  if (!setup.is_held || !setup.heat_known()) return tell_driving(setup, evaluator, outcome);
-  const double warming = sensible_heat(setup.chemistry, xi_in, setup.arrives.temperature_K, setup.inlet_K);
-  const double released = released_heat(setup.chemistry, xi_in, reached->xi_mol_m3, setup.inlet_K);
-  outcome.heat = HeatNeed{feed_m3_s * (released - warming) + setup.agitator_W, 0, 0, 0};
   tell_driving(setup, evaluator, outcome);
 }
 

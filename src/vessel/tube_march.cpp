@@ -65,7 +65,7 @@ TubeMarch::Rates TubeMarch::slips(double s) {
   }
   const auto after = std::ranges::upper_bound(sums_, s, {}, &Sum::end);
   Rates total = after == sums_.begin() ? Rates(balance_.size()) : std::prev(after)->total;
-  const double whole = after == sums_.begin() ? start_s_ : std::prev(after)->end;
+  const double whole = after == sums_.begin() ? 0 : std::prev(after)->end;
   for (const Stretch& stretch : stretches_)
     if (s > whole && stretch.track.begin() <= whole && whole < stretch.track.end()) {
       const Rates rest = slip_of(stretch, whole, s);

@@ -73,7 +73,6 @@ class TubeMarch {
     std::size_t stretch = 0, step = 0;
   } checked_;  // the first step whose slip is not in sums_
   std::vector<Sum> sums_;
-  static constexpr double start_s_ = 0;
   std::optional<NoAnswer> failed_;
   bool used_up_ = false;
   int medium_left_ = 0;

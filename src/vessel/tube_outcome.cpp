@@ -1,11 +1,10 @@
 #include "tube_outcome.hpp"
 
-#include "uncooled.hpp"
-
 #include <algorithm>
 #include <cmath>
 #include <sstream>
 
+#include "uncooled.hpp"
 #include "vatwright/numeric/root.hpp"
 #include "vatwright/vessel/pressure_drop.hpp"
 

@@ -49,7 +49,7 @@ TEST_CASE("a tank with a power law follows its closed form", "[vessel][tank]") {
     CHECK(outcome.conversion == Approx(X).epsilon(1e-10));
     CHECK(outcome.residual < 1e-12);
     REQUIRE(outcome.states.size() == 1);
-    CHECK(outcome.states[0].stable);
+    CHECK(outcome.states[0].stable == true);
     CHECK(outcome.states_complete);
   }
 }
@@ -128,8 +128,8 @@ TEST_CASE("autocatalytic: a seed starts it, without one nothing happens", "[vess
   const auto tank = Rated(plant, tank_of(1)).at(0.1);  // C_A = 1/(k tau) is the other state
   CHECK(tank.conversion == 0);
   REQUIRE(tank.states.size() == 2);
-  CHECK_FALSE(tank.states[0].stable);
-  CHECK(tank.states[1].stable);
+  CHECK(tank.states[0].stable == false);
+  CHECK(tank.states[1].stable == true);
   CHECK(tank.states[1].conversion == Approx(0.9).epsilon(1e-12));
   CHECK(Rated(plant, tank_of(1)).at(2).states.size() == 1);
 }

@@ -32,7 +32,7 @@ TEST_CASE("an intermediate in tube and tank", "[vessel][several]") {
     const auto in_tank = tank.at(1 / t);
     CHECK(flow(tank, in_tank, 1) == Approx(20 * k1 * t / ((1 + k1 * t) * (1 + k2 * t))).epsilon(1e-9));
     CHECK(in_tank.states.size() == 1);
-    CHECK(in_tank.states[0].stable);
+    CHECK(in_tank.states[0].stable == true);
     CHECK_FALSE(in_tank.states_complete);
   }
 }

@@ -113,7 +113,7 @@ TEST_CASE("an adiabatic tank lights and goes out at the published space times", 
     CHECK(ten.states[i].conversion == Approx(X[i]).margin(1e-5));
     CHECK(ten.states[i].stable == (i != 1));
   }
-  CHECK(ten.states[0].reached);
+  CHECK(ten.states[0].reached == true);
   CHECK(ten.residual < 1e-9);
 }
 
@@ -122,7 +122,7 @@ TEST_CASE("a hot start lights an adiabatic tank, and its peak is kept", "[vessel
   plant.start.temperature_K = 360;
   const auto outcome = Rated(plant, tank_of(1)).at(1 / 600.0);
   REQUIRE(outcome.states.size() == 3);
-  CHECK(outcome.states[2].reached);
+  CHECK(outcome.states[2].reached == true);
   REQUIRE(outcome.start_peak_K);
   CHECK(*outcome.start_peak_K > 460);  // a fill at 360 K holds 150 K more in its reactant
   CHECK(*outcome.start_peak_K < 511);

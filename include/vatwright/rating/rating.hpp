@@ -55,8 +55,8 @@ struct Rating {
   std::optional<std::string> medium;
   std::optional<std::vector<SteadyState>> steady_states;
   std::optional<bool> states_complete;
-  std::string started;  ///< tanks: what it was filled with before its feed is opened, in words
-  bool peaks = false;   ///< hotter on the way than where it starts and where it ends
+  std::string started;             ///< tanks: what it was filled with before its feed is opened, in words
+  bool peaks = false;              ///< hotter on the way than where it starts and where it ends
   std::optional<Windows> windows;  ///< absent where they belong to the whole
   std::vector<Limit> limits;
   std::vector<TargetItem> targets;
@@ -121,7 +121,7 @@ struct Judged {
   std::vector<Limit> limits;  ///< in the order of all_limits(); those of the files alone where there is no outcome
   const Utility* medium = nullptr;
   std::optional<Draw> draw;           ///< for check_utility_totals over a hookup
-  std::optional<NoAnswer> no_answer;  ///< why there is no outcome (or its residual is too large: unsolved)
+  std::optional<NoAnswer> no_answer;  ///< why there is no outcome
   std::string lacking;                ///< a utility asked for that the vessel has not; not empty: does not fit
   bool figures = true;                ///< false: nothing to print (no outcome, or a cycle)
 };
@@ -152,6 +152,9 @@ Trial trial_of(const std::vector<NamedJudged>& judged, const std::vector<Limit>&
 /// limits, residual, medium, profile; figures stay absent where judged.figures is false. conversion and yields are
 /// cumulative.
 void tell_vessel(Rating& rating, const VesselPlace& place, const Judged& judged, const VesselOutcome* outcome);
+/// Puts windows into a rating of one vessel or of a whole hookup: what of them is not known, and a caution where one
+/// ends at a jump. any_answer: some trial had one; where none had, and says why, nothing is known of a window.
+void tell_windows(Rating& rating, Windows windows, bool any_answer);
 /// Every species at an outlet, mol/s (kg/s under amounts by mass), in the order of species.
 std::vector<std::pair<std::string, double>> outlet_flows(const Duty& duty, const Stream& outlet);
 /// Cautions that belong to one vessel at one outcome: driving-difference, glass-step, beyond-measured, start-peak.

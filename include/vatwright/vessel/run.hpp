@@ -31,13 +31,14 @@ struct Start {
   std::optional<double> temperature_K;  ///< left out: the feed's; a held tank starts at its hold temperature
 };
 
-/// One steady state of a stirred tank.
+/// One steady state: of a stirred tank, or of a tube against its medium where there are several.
 struct SteadyState {
   std::vector<double> xi_mol_m3;
   double conversion = 0;  ///< of conversion_of, cumulative from the mixed feed
   double temperature_K = 0;
-  bool stable = false;   ///< eigenvalues of the transient balances (held: at constant T)
-  bool reached = false;  ///< the start ends here
+  std::optional<bool>
+      stable;  ///< eigenvalues of the transient balances (held: at constant T); absent: a tube, not known
+  std::optional<bool> reached;  ///< the start ends here; absent: a tube, not known
 };
 
 /// Along a tube, arrays of equal length.
