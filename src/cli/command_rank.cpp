@@ -2,6 +2,7 @@
 
 #include "finish.hpp"
 #include "progress.hpp"
+#include "vatwright/hookup/objective.hpp"
 #include "vatwright/numeric/pool.hpp"
 
 namespace vatwright {
@@ -74,7 +75,7 @@ Exit run_rank(const Context& context) {
   options.by = settings.by;
   options.exact = settings.exact;
   options.threads = settings.threads;
-  if (settings.by == By::yield && !yield_ranked(problems.base.duty)) {
+  if (settings.by == By::yield && !yield_asked(problems.base.duty)) {
     context.err
         << "--by yield: the duty asks no yield; expected [target] with yield = { species = .., at_least = .. }\n";
     return Exit::refused;

@@ -4,7 +4,7 @@
 #include <string>
 #include <vector>
 
-#include "vatwright/hookup/hookup.hpp"
+#include "vatwright/ranking/rank.hpp"
 #include "vatwright/quantity/show.hpp"
 #include "vatwright/vessel/vessel.hpp"
 

@@ -1,4 +1,4 @@
-#include "chooser.hpp"
+#include "vatwright/hookup/chooser.hpp"
 
 #include <algorithm>
 

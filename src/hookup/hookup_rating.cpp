@@ -2,8 +2,8 @@
 
 #include <algorithm>
 
-#include "chooser.hpp"
-#include "told.hpp"
+#include "vatwright/hookup/chooser.hpp"
+#include "vatwright/hookup/told.hpp"
 
 namespace vatwright {
 namespace {

@@ -1,4 +1,4 @@
-#include "judged_hookup.hpp"
+#include "vatwright/hookup/judged_hookup.hpp"
 
 #include <algorithm>
 

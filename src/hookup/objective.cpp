@@ -2,11 +2,10 @@
 
 #include <algorithm>
 
-#include "vatwright/hookup/rank.hpp"
 
 namespace vatwright {
 
-std::optional<int> yield_ranked(const Duty& duty) {
+std::optional<int> yield_asked(const Duty& duty) {
   for (const Demand& d : duty.target.demands) {
     if (d.on == Demand::On::yield) return d.species;
   }
@@ -22,7 +21,7 @@ std::optional<Objective> yield_objective(const Duty& duty, int species) {
 }
 
 Objective objective_of(const Duty& duty) {
-  if (const auto species = yield_ranked(duty)) {
+  if (const auto species = yield_asked(duty)) {
     if (const auto yield = yield_objective(duty, *species)) return *yield;
   }
   if (duty.target.conversion || duty.target.demands.empty()) return {};

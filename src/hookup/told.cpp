@@ -1,4 +1,4 @@
-#include "told.hpp"
+#include "vatwright/hookup/told.hpp"
 
 #include <algorithm>
 

@@ -3,7 +3,7 @@
 
 #include "site.hpp"
 #include "support/catch.hpp"
-#include "vatwright/hookup/enumerate.hpp"
+#include "vatwright/ranking/enumerate.hpp"
 
 using namespace vatwright;
 using namespace vatwright::test;

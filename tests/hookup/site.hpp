@@ -6,7 +6,7 @@
 #include <string>
 #include <vector>
 
-#include "vatwright/hookup/hookup.hpp"
+#include "vatwright/hookup/hookup_rating.hpp"
 
 namespace vatwright::test {
 

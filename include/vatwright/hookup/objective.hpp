@@ -14,6 +14,9 @@ struct Objective {
   double moles_needed = 0;  ///< yield: n of the species
 };
 
+/// The species of the first yield that the target asks. Absent: none is asked.
+std::optional<int> yield_asked(const Duty& duty);
+
 /// What the target asks: its first yield, else its conversion, else its first demand.
 Objective objective_of(const Duty& duty);
 /// The yield of a species; absent where it has none.

@@ -5,7 +5,7 @@
 #include <vector>
 
 #include "vatwright/error/diagnostic.hpp"
-#include "vatwright/hookup/hookup.hpp"
+#include "vatwright/ranking/rank.hpp"
 #include "vatwright/rating/cases.hpp"
 
 namespace vatwright {

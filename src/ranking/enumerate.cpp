@@ -1,4 +1,4 @@
-#include "vatwright/hookup/enumerate.hpp"
+#include "vatwright/ranking/enumerate.hpp"
 
 #include <algorithm>
 #include <numeric>

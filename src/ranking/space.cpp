@@ -4,7 +4,7 @@
 #include <functional>
 #include <map>
 
-#include "vatwright/hookup/enumerate.hpp"
+#include "vatwright/ranking/enumerate.hpp"
 
 namespace vatwright {
 namespace {

@@ -2,7 +2,7 @@
 #include <optional>
 #include <string>
 
-#include "chooser.hpp"
+#include "vatwright/hookup/chooser.hpp"
 
 namespace vatwright {
 

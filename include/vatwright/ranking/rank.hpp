@@ -45,12 +45,9 @@ struct Ranking {
   bool unsolved = false;
 };
 
-/// The species whose yield `By::yield` ranks by: that of the first yield the target asks. Absent: none is asked.
-std::optional<int> yield_ranked(const Duty& duty);
-
 /// Rates every series-parallel hookup of up to `most` of the offered vessels (indices into Site::vessels), those that
 /// differ only in name once, and orders them as ruled: see order.hpp. Any number of threads gives the same answer.
-/// Precondition: for By::yield, yield_ranked(duty) is there.
+/// Precondition: for By::yield, yield_asked(duty) is there.
 Ranking rank(const Problem& problem, const std::vector<int>& offered, const RankOptions& options);
 
 }  // namespace vatwright

@@ -1,8 +1,8 @@
 #pragma once
 #include <vector>
 
-#include "vatwright/hookup/rank.hpp"
-#include "vatwright/hookup/twins.hpp"
+#include "vatwright/ranking/rank.hpp"
+#include "vatwright/ranking/twins.hpp"
 
 namespace vatwright {
 

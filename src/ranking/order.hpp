@@ -3,7 +3,7 @@
 #include <vector>
 
 #include "ceiling.hpp"
-#include "vatwright/hookup/rank.hpp"
+#include "vatwright/ranking/rank.hpp"
 
 namespace vatwright {
 

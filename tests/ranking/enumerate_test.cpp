@@ -1,9 +1,9 @@
 #include <numeric>
 #include <set>
 
-#include "site.hpp"
+#include "hookup/site.hpp"
 #include "support/catch.hpp"
-#include "vatwright/hookup/enumerate.hpp"
+#include "vatwright/ranking/enumerate.hpp"
 
 using namespace vatwright;
 using namespace vatwright::test;

@@ -5,9 +5,9 @@
 #include <cmath>
 #include <functional>
 
-#include "site.hpp"
+#include "hookup/site.hpp"
 #include "support/catch.hpp"
-#include "vatwright/hookup/rank.hpp"
+#include "vatwright/ranking/rank.hpp"
 
 using namespace vatwright;
 using namespace vatwright::test;

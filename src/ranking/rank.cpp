@@ -1,16 +1,16 @@
-#include "vatwright/hookup/rank.hpp"
+#include "vatwright/ranking/rank.hpp"
 
 #include <algorithm>
 #include <cmath>
 #include <functional>
 #include <mutex>
 
-#include "chooser.hpp"
+#include "vatwright/hookup/chooser.hpp"
 #include "order.hpp"
 #include "space.hpp"
-#include "told.hpp"
+#include "vatwright/hookup/told.hpp"
 #include "vatwright/error/expects.hpp"
-#include "vatwright/hookup/enumerate.hpp"
+#include "vatwright/ranking/enumerate.hpp"
 #include "vatwright/numeric/pool.hpp"
 
 namespace vatwright {
@@ -291,7 +291,7 @@ class Ranker {
 }  // namespace
 
 Ranking rank(const Problem& problem, const std::vector<int>& offered, const RankOptions& options) {
-  VATWRIGHT_EXPECTS(options.by != By::yield || yield_ranked(problem.duty));
+  VATWRIGHT_EXPECTS(options.by != By::yield || yield_asked(problem.duty));
   return Ranker(problem, offered, options).run();
 }
 

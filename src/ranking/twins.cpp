@@ -1,11 +1,11 @@
-#include "vatwright/hookup/twins.hpp"
+#include "vatwright/ranking/twins.hpp"
 
 #include <algorithm>
 #include <map>
 #include <set>
 
 #include "same_vessel.hpp"
-#include "vatwright/hookup/enumerate.hpp"
+#include "vatwright/ranking/enumerate.hpp"
 
 namespace vatwright {
 namespace {

@@ -1,5 +1,5 @@
 #pragma once
-#include "chooser.hpp"
+#include "vatwright/hookup/chooser.hpp"
 #include "vatwright/hookup/hookup_rating.hpp"
 
 namespace vatwright {

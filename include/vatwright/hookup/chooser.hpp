@@ -2,7 +2,7 @@
 #include <optional>
 #include <vector>
 
-#include "judged_hookup.hpp"
+#include "vatwright/hookup/judged_hookup.hpp"
 #include "vatwright/hookup/objective.hpp"
 #include "vatwright/hookup/share_space.hpp"
 
