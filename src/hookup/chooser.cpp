@@ -13,10 +13,21 @@ bool all_met(const std::vector<TargetItem>& items) {
   return std::all_of(items.begin(), items.end(), [](const TargetItem& i) { return i.met; });
 }
 
+bool breaks_feed_line(const JudgedHookup& judged) {
+  return std::any_of(judged.vessels.begin(), judged.vessels.end(), [](const Judged& j) {
+    return std::any_of(j.limits.begin(), j.limits.end(),
+                       [](const Limit& l) { return l.name == "feed line" && l.state == Limit::State::broken; });
+  });
+}
+
 }  // namespace
 
-Chooser::Chooser(const Problem& problem, const Hookup& hookup, const Objective& objective)
-    : problem_(problem), network_(problem, hookup), space_(hookup, network_.volumes()), objective_(objective) {}
+Chooser::Chooser(const Problem& problem, const Hookup& hookup, const Objective& objective, KnownShares known_shares)
+    : problem_(problem),
+      network_(problem, hookup),
+      space_(hookup, network_.volumes()),
+      objective_(objective),
+      known_shares_(std::move(known_shares)) {}
 
 std::optional<double> Chooser::value_at(double feed_m3_s, const std::vector<double>& shares) {
   const auto outlet = network_.outlet(feed_m3_s, shares);
@@ -24,24 +35,17 @@ std::optional<double> Chooser::value_at(double feed_m3_s, const std::vector<doub
   return stream ? value_of(objective_, problem_.duty, *stream) : std::nullopt;
 }
 
-// The coordinates of the best shares, no limit asked.
-std::optional<std::vector<double>> Chooser::tune(double feed_m3_s, double* value) {
+std::optional<Chooser::Free> Chooser::choose_free(double feed_m3_s, Purpose purpose) {
+  std::optional<std::vector<double>> shares;
+  if (space_.dimensions() == 0) shares = space_.shares({});
+  if (!shares && known_shares_) shares = known_shares_(feed_m3_s, purpose);
+  if (shares) {
+    const auto value = value_at(feed_m3_s, *shares);
+    return value ? std::optional(Free{*std::move(shares), *value}) : std::nullopt;
+  }
   const auto f = [&](std::span<const double> x) { return value_at(feed_m3_s, space_.shares(x)); };
   const auto tuned = tune_free(f, space_.in_proportion());
-  if (!tuned) return std::nullopt;
-  *value = tuned->score.objective;
-  return tuned->x;
-}
-
-std::optional<Chooser::Free> Chooser::choose_free(double feed_m3_s) {
-  if (space_.dimensions() == 0) {
-    const auto shares = space_.shares({});
-    const auto value = value_at(feed_m3_s, shares);
-    return value ? std::optional(Free{shares, *value}) : std::nullopt;
-  }
-  double value = 0;
-  const auto x = tune(feed_m3_s, &value);
-  return x ? std::optional(Free{space_.shares(*x), value}) : std::nullopt;
+  return tuned ? std::optional(Free{space_.shares(tuned->x), tuned->score.objective}) : std::nullopt;
 }
 
 bool Chooser::never_fits(double feed_m3_s) {
@@ -54,11 +58,12 @@ JudgedHookup Chooser::choose(double feed_m3_s, Purpose purpose, Detail detail) {
     return judge_hookup(problem_, network_, feed_m3_s, space_.shares(x), detail);
   };
   if (space_.dimensions() == 0) return judged_at({});
-  double value = 0;
-  const auto free = tune(feed_m3_s, &value);
-  JudgedHookup best = judged_at(free ? *free : space_.in_proportion());
+  const auto free = choose_free(feed_m3_s, purpose);
+  JudgedHookup best =
+      judge_hookup(problem_, network_, feed_m3_s, free ? free->shares : space_.shares(space_.in_proportion()), detail);
   if (free && !breaks_limit(best)) return best;
   if (breaks_limit_of_files(best)) return best;  // no share helps
+  if (known_shares_ && purpose == Purpose::window && breaks_feed_line(best)) return best;
   const bool missed_anyhow = free && is_all_of_target(objective_, problem_.duty) && !all_met(best.targets);
   if (purpose == Purpose::window && missed_anyhow) return best;
 
@@ -73,7 +78,7 @@ JudgedHookup Chooser::choose(double feed_m3_s, Purpose purpose, Detail detail) {
     return Score{*margin == 0 ? 0 : *margin - hair, *objective, true};
   };
   std::vector<std::vector<double>> seeds;
-  if (free) seeds.push_back(*free);
+  if (free) seeds.push_back(space_.coordinates(free->shares));
   const auto within = tune_within(score, space_.in_proportion(), seeds);
   if (!within) return best;
   if (within->score.margin < 0 && purpose == Purpose::reach) return best;

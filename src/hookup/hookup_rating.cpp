@@ -27,7 +27,7 @@ Windows windows_of(Chooser& chooser, bool& any_answer) {
 }  // namespace
 
 HookupRating rate_hookup(const Problem& problem, const Hookup& hookup, const HookupOptions& options) {
-  Chooser chooser(problem, hookup, objective_for(problem.duty, options));
+  Chooser chooser(problem, hookup, objective_for(problem.duty, options), options.known_shares);
   JudgedHookup judged = chooser.choose(problem.duty.target.feed_m3_s, Purpose::reach);
   if (options.profiles) {
     judged = judge_hookup(problem, chooser.network(), judged.feed_m3_s, judged.shares, Detail::profile);

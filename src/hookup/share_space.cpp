@@ -69,6 +69,21 @@ std::vector<double> ShareSpace::shares(std::span<const double> x) const {
   return out;
 }
 
+std::vector<double> ShareSpace::coordinates(const std::vector<double>& shares) const {
+  std::vector<double> x;
+  for (const Joint& joint : joints_) {
+    const std::size_t m = joint.free.size();
+    const double spread = 1 - static_cast<double>(m) * least_share;
+    double rest = 1;
+    for (std::size_t k = 0; k + 1 < m; ++k) {
+      const double s = std::clamp((shares[joint.free[k]] / joint.left - least_share) / spread, 0.0, rest);
+      x.push_back(rest > 0 ? s / rest : 0);
+      rest -= s;
+    }
+  }
+  return x;
+}
+
 bool ShareSpace::at_edge(const std::vector<double>& shares, double distance) const {
   for (const Joint& joint : joints_) {
     if (joint.free.size() < 2) continue;

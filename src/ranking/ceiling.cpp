@@ -49,6 +49,10 @@ class CeilingSearch {
     return below(q);
   }
 
+  /// Whether a window ends at `from`: shares are known at every rate, and just above it the target is missed or a feed
+  /// line is full.
+  bool ends_there() { return inside(from_) && !inside(from_ * (1 + 1e-6)); }
+
   /// The uppermost window, looked for downwards from the most that the feed lines pass.
   Ceiling whole_window() {
     const double cap = flow_cap(chooser_.problem(), chooser_.network().hookup()), top = std::min(range_.second, cap);
@@ -171,6 +175,7 @@ bool may_reach(Chooser& chooser, double feed_m3_s) {
 Ceiling find_ceiling(Chooser& chooser, double from_m3_s, std::vector<double> start) {
   if (chooser.never_fits(from_m3_s)) return {};
   CeilingSearch search(chooser, from_m3_s);
+  if (chooser.shares_are_known() && search.falls() && search.ends_there()) return {false, from_m3_s, false};
   return search.falls() ? search.by_turns(std::move(start)) : search.whole_window();
 }
 

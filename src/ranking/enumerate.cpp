@@ -1,15 +1,14 @@
 #include "vatwright/ranking/enumerate.hpp"
 
 #include <algorithm>
+#include <compare>
+#include <map>
 #include <numeric>
-#include <set>
-#include <string>
 
 namespace vatwright {
 namespace {
 
 using Join = Hookup::Join;
-using Vessels = std::vector<int>;
 
 Hookup leaf(int vessel) {
   Hookup h;
@@ -30,56 +29,85 @@ Hookup joined(Join join, const Hookup& first, const Hookup& rest) {
   return h;
 }
 
-// Calls use(chosen, left) for every split of `all` into two non-empty sets; with_first: the first is always chosen.
-template <class Use>
-void for_each_split(const Vessels& all, bool with_first, const Use& use) {
-  const std::size_t every = std::size_t(1) << all.size();
-  for (std::size_t mask = 1; mask + 1 < every; ++mask) {
-    if (with_first && (mask & 1u) == 0) continue;
-    Vessels chosen, left;
-    for (std::size_t i = 0; i < all.size(); ++i) ((mask >> i) & 1u ? chosen : left).push_back(all[i]);
-    use(chosen, left);
+using Counts = std::vector<int>;  // of each class
+
+/// Hookups of classes of equal vessels, leaves numbered by class. A series is its first member, no series itself, and
+/// any rest; a beside is its largest branch, no beside itself, and a rest whose branches are no larger: each comes up
+/// once.
+class Lists {
+ public:
+  const std::vector<Hookup>& of(const Counts& counts) {
+    Made& made = made_of(counts);
+    return made.hookups;
   }
-}
 
-std::vector<Hookup> all_of(const Vessels& vessels);
+ private:
+  struct Head {  // of a beside, its largest branch; of others, themselves
+    Counts counts;
+    std::size_t place = 0;  // in the list of its counts
+    friend auto operator<=>(const Head&, const Head&) = default;
+  };
+  struct Made {
+    std::vector<Hookup> hookups;
+    std::vector<Head> heads;
+  };
 
-std::vector<Hookup> headed(const Vessels& vessels, Join join) {
-  std::vector<Hookup> out;
-  for_each_split(vessels, join == Join::beside, [&](const Vessels& chosen, const Vessels& left) {
-    const auto rests = all_of(left);
-    for (const Hookup& first : all_of(chosen)) {
-      if (first.join == join) continue;  // a first member is never a group of the same kind: each hookup once
-      for (const Hookup& rest : rests) out.push_back(joined(join, first, rest));
+  Made& made_of(const Counts& counts) {
+    const auto known = made_.find(counts);
+    if (known != made_.end()) return known->second;
+    Made made;
+    const int total = std::accumulate(counts.begin(), counts.end(), 0);
+    if (total == 1) {
+      made.hookups.push_back(leaf(static_cast<int>(std::find(counts.begin(), counts.end(), 1) - counts.begin())));
+      made.heads.push_back({counts, 0});
+    } else {
+      for (const Join join : {Join::then, Join::beside}) add(made, counts, join);
     }
-  });
-  return out;
-}
+    return made_.emplace(counts, std::move(made)).first->second;
+  }
 
-std::vector<Hookup> all_of(const Vessels& vessels) {
-  if (vessels.size() == 1) return {leaf(vessels.front())};
-  auto out = headed(vessels, Join::then);
-  auto besides = headed(vessels, Join::beside);
-  std::move(besides.begin(), besides.end(), std::back_inserter(out));
-  return out;
-}
+  void add(Made& made, const Counts& counts, Join join) {
+    for_each_part(counts, [&](const Counts& part, const Counts& left) {
+      const Made &firsts = made_of(part), &rests = made_of(left);
+      for (std::size_t i = 0; i < firsts.hookups.size(); ++i) {
+        if (firsts.hookups[i].join == join) continue;
+        for (std::size_t k = 0; k < rests.hookups.size(); ++k) {
+          if (join == Join::beside && rests.heads[k] > firsts.heads[i]) continue;
+          if (join == Join::then)
+            made.heads.push_back({counts, made.hookups.size()});
+          else
+            made.heads.push_back(firsts.heads[i]);
+          made.hookups.push_back(joined(join, firsts.hookups[i], rests.hookups[k]));
+        }
+      }
+    });
+  }
+
+  // Every part that is neither nothing nor all.
+  template <class Use>
+  static void for_each_part(const Counts& counts, const Use& use) {
+    Counts part(counts.size(), 0), left = counts;
+    while (true) {
+      std::size_t c = 0;
+      while (c < counts.size() && part[c] == counts[c]) {
+        left[c] = counts[c];
+        part[c++] = 0;
+      }
+      if (c == counts.size()) return;
+      ++part[c];
+      --left[c];
+      if (part != counts) use(part, left);
+    }
+  }
+
+  std::map<Counts, Made> made_;
+};
 
 int smallest(const Hookup& h) {
   if (h.join == Join::vessel) return h.vessel;
   int least = smallest(h.parts.front());
   for (const Hookup& part : h.parts) least = std::min(least, smallest(part));
   return least;
-}
-
-// The text of a hookup by class, members of a beside sorted: equal exactly where two differ by exchange of equals.
-std::string class_key(const Hookup& h, const std::vector<int>& class_of) {
-  if (h.join == Join::vessel) return std::to_string(class_of[static_cast<std::size_t>(h.vessel)]);
-  std::vector<std::string> keys;
-  for (const Hookup& part : h.parts) keys.push_back(class_key(part, class_of));
-  if (h.join == Join::beside) std::sort(keys.begin(), keys.end());
-  std::string key = "[";
-  for (const auto& k : keys) key += k + (h.join == Join::then ? ">" : "|");
-  return key + "]";
 }
 
 // Places of one class rise in the order of the text.
@@ -93,24 +121,25 @@ void number_in_order(Hookup& h, const std::vector<int>& class_of, std::vector<in
 
 }  // namespace
 
-std::vector<Hookup> hookups_of(std::span<const int> vessels) { return all_of({vessels.begin(), vessels.end()}); }
+std::vector<Hookup> hookups_of(std::span<const int> vessels) {
+  std::vector<Hookup> out;
+  for (const Hookup& h : hookups_of_classes(Counts(vessels.size(), 1)))
+    out.push_back(sorted_members(relabelled(h, vessels)));
+  return out;
+}
 
 std::vector<Hookup> hookups_of_classes(const std::vector<int>& counts) {
-  std::vector<int> class_of, first;
-  for (std::size_t c = 0; c < counts.size(); ++c) {
-    first.push_back(static_cast<int>(class_of.size()));
-    class_of.insert(class_of.end(), static_cast<std::size_t>(counts[c]), static_cast<int>(c));
+  std::vector<int> first, class_of(counts.size());
+  std::iota(class_of.begin(), class_of.end(), 0);
+  int places = 0;
+  for (const int n : counts) {
+    first.push_back(places);
+    places += n;
   }
-  std::vector<int> places(class_of.size());
-  std::iota(places.begin(), places.end(), 0);
-  const bool all_differ = class_of.size() == counts.size();
-  std::vector<Hookup> out;
-  std::set<std::string> seen;  // of one pattern of equals, made once for all choices of vessels
-  for (Hookup& h : all_of(places)) {
-    if (!all_differ && !seen.insert(class_key(h, class_of)).second) continue;
+  std::vector<Hookup> out = Lists().of(counts);
+  for (Hookup& h : out) {
     auto next = first;
     number_in_order(h, class_of, next);
-    out.push_back(std::move(h));
   }
   return out;
 }

@@ -27,7 +27,7 @@ std::string space_words(const Ranking& ranking) {
   const std::string all = std::to_string(ranking.hookups);
   std::string text = std::to_string(ranking.offered) + " vessels offered, at most " + std::to_string(ranking.most) +
                      " in a hookup: " + all + " hookups";
-  if (ranking.complete == "proved") return text + "; nothing that was not rated is better";
+  if (ranking.complete == "proved") return text + "; proved: none that was passed over is better";
   if (ranking.complete == "visited")
     return text + ", every one visited (those that differ only in name once: " + std::to_string(ranking.rated) +
            " rated); shares are the best found";
@@ -144,7 +144,7 @@ void add_today(Page& page, const RankAnswer& answer, const Look& look) {
   page.heading("Today");
   page.items(
       {{"hookup", {today.rating.text}},
-       {"place", {place ? std::to_string(*place) : "not among the hookups rated"}},
+       {"place", {place ? std::to_string(*place) : "beyond those that were rated"}},
        {"verdict", {words_of(verdict)}},
        {"conversion", {figure_with_unit(whole.conversion, Shown::percent, look)}},
        {"ceiling", {figure_with_unit(whole.windows ? whole.windows->ceiling_m3_s : std::nullopt, Shown::feed, look)}}});

@@ -2,46 +2,45 @@
 #include <optional>
 #include <vector>
 
+#include "vatwright/hookup/hookup_rating.hpp"
 #include "vatwright/hookup/judged_hookup.hpp"
 #include "vatwright/hookup/objective.hpp"
 #include "vatwright/hookup/share_space.hpp"
 
 namespace vatwright {
 
-/// What shares are chosen for: the answer at a feed rate, or whether that rate lies inside a window.
-enum class Purpose { reach, window };
-
 /// Chooses the free shares of one hookup, anew at every feed rate.
 class Chooser {
  public:
-  Chooser(const Problem& problem, const Hookup& hookup, const Objective& objective);
+  Chooser(const Problem& problem, const Hookup& hookup, const Objective& objective, KnownShares known_shares = {});
 
-  /// The best shares for the objective among those that break no limit, judged. Where every share breaks one: for the
-  /// reach the best without limits; for a window those nearest to holding.
   /// A limit that no feed rate decides is broken, so there is no window.
   bool never_fits(double feed_m3_s);
+  /// The best shares for the objective among those that break no limit, judged. Where every share breaks one: for the
+  /// reach the best without limits; for a window those nearest to holding.
   [[nodiscard]] JudgedHookup choose(double feed_m3_s, Purpose purpose, Detail detail = Detail::full);
   /// The best shares with no limit asked, with the objective there; absent where no shares give an answer.
   struct Free {
     std::vector<double> shares;
     double value = 0;
   };
-  [[nodiscard]] std::optional<Free> choose_free(double feed_m3_s);
+  [[nodiscard]] std::optional<Free> choose_free(double feed_m3_s, Purpose purpose = Purpose::window);
   /// The objective at given shares.
   [[nodiscard]] std::optional<double> value_at(double feed_m3_s, const std::vector<double>& shares);
 
+  /// The best shares need no trying, see KnownShares.
+  [[nodiscard]] bool shares_are_known() const { return known_shares_ || space_.dimensions() == 0; }
   [[nodiscard]] const Problem& problem() const { return problem_; }
   [[nodiscard]] Network& network() { return network_; }
   [[nodiscard]] const ShareSpace& space() const { return space_; }
   [[nodiscard]] const Objective& objective() const { return objective_; }
 
  private:
-  struct FreePlace;
-  std::optional<std::vector<double>> tune(double feed_m3_s, double* value);
   const Problem& problem_;
   Network network_;
   ShareSpace space_;
   Objective objective_;
+  KnownShares known_shares_;
 };
 
 }  // namespace vatwright

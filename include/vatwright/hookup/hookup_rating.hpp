@@ -1,4 +1,6 @@
 #pragma once
+#include <functional>
+#include <optional>
 #include <string>
 #include <vector>
 
@@ -20,10 +22,19 @@ struct HookupRating {
 /// What free shares serve: what the target asks, or the conversion whatever it asks.
 enum class Serve { target, conversion };
 
+/// What shares are chosen for: the answer at a feed rate, or whether that rate lies inside a window.
+enum class Purpose { reach, window };
+
+/// The best shares of a hookup for the objective at a feed rate, no limit but the feed lines asked, where somebody
+/// knows them better than by trying. Where no shares keep all feed lines: for the reach the best without them, for a
+/// window those that break them least. Absent: not known at this rate.
+using KnownShares = std::function<std::optional<std::vector<double>>(double feed_m3_s, Purpose purpose)>;
+
 struct HookupOptions {
   bool windows = true;
   bool profiles = false;
   Serve serve = Serve::target;
+  KnownShares known_shares = {};  ///< empty: they are found by trying
 };
 
 /// Rates a hookup at the duty's feed rate, and its window.

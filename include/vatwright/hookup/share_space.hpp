@@ -21,6 +21,8 @@ class ShareSpace {
   [[nodiscard]] std::size_t dimensions() const { return in_proportion_.size(); }
   /// Shares of all members of all besides in the order of the text.   x: dimensions() of them.
   [[nodiscard]] std::vector<double> shares(std::span<const double> x) const;
+  /// The coordinates of these shares; those of a closed branch's members are 0.
+  [[nodiscard]] std::vector<double> coordinates(const std::vector<double>& shares) const;
   /// The coordinates at which every free branch gets flow in proportion to its volume.
   [[nodiscard]] const std::vector<double>& in_proportion() const { return in_proportion_; }
   /// Whether a free share lies within `distance` (0.02 = 2 % points) of 0 or of all that its beside leaves.

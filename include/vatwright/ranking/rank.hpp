@@ -17,7 +17,8 @@ struct RankOptions {
   bool exact = false;
   int threads = 1;
   std::optional<Hookup> today;
-  /// The most hookups that are rated; a size (number of vessels) that would go beyond is left out whole.
+  bool visit = false;  ///< every hookup is rated, where a search would prove as much with less
+  /// The most hookups that are rated one by one; a size (number of vessels) that would go beyond is left out whole.
   long long most_rated = 250'000;
   /// Told now and then how many are rated, of how many; called by one thread at a time.
   std::function<void(long long done, long long total)> progress;

@@ -1,0 +1,328 @@
+#include "rate_track.hpp"
+
+#include <algorithm>
+#include <bit>
+#include <cmath>
+#include <limits>
+#include <numbers>
+
+namespace vatwright {
+namespace {
+
+constexpr int octaves = 40;              // 2^-40 from either end the rest is one panel
+constexpr std::uint64_t per_octave = 4;  // buckets, read off the leading bits
+constexpr std::size_t per_half = 1 + (octaves - 1) * per_octave;
+constexpr std::size_t most_pieces = 64;
+constexpr double fits_within = 1e-11;
+constexpr double nan = std::numeric_limits<double>::quiet_NaN();
+
+/// Four buckets to an octave: the exponent and two bits after it.
+std::uint64_t leading_bits(double x) { return std::bit_cast<std::uint64_t>(x) >> 50; }
+const std::uint64_t bits_of_nearest = leading_bits(std::ldexp(1.0, -octaves));
+
+/// From either end, for z below or above a half.
+std::size_t bucket_from_end(double distance) {
+  const std::uint64_t bits = leading_bits(distance);
+  if (distance <= 0 || bits < bits_of_nearest) return 0;
+  return std::min<std::size_t>(per_half - 1, 1 + static_cast<std::size_t>(bits - bits_of_nearest));
+}
+
+double lower_edge(std::size_t bucket) {  // of bucket_from_end
+  if (bucket == 0) return 0;
+  const std::size_t i = bucket - 1;
+  return std::ldexp(1 + static_cast<double>(i % per_octave) / per_octave, static_cast<int>(i / per_octave) - octaves);
+}
+
+/// Values at the Chebyshev places of [-1, 1] to the coefficients of w^k.
+template <std::size_t n>
+struct Interpolation {
+  std::array<double, n> place{};
+  std::array<std::array<double, n>, n> to_powers{};  // [k][place]
+  Interpolation() {
+    for (std::size_t j = 0; j < n; ++j)
+      place[j] = -std::cos(std::numbers::pi * (2 * static_cast<double>(j) + 1) / (2.0 * n));
+    for (std::size_t j = 0; j < n; ++j) {  // the polynomial that is 1 at place j and 0 at the others
+      std::array<long double, n> product{};
+      product[0] = 1;
+      std::size_t order = 0;
+      for (std::size_t m = 0; m < n; ++m) {
+        if (m == j) continue;
+        const long double over = static_cast<long double>(place[j]) - place[m];
+        ++order;
+        for (std::size_t k = order + 1; k-- > 0;)
+          product[k] = ((k > 0 ? product[k - 1] : 0) - place[m] * product[k]) / over;
+      }
+      for (std::size_t k = 0; k < n; ++k) to_powers[k][j] = static_cast<double>(product[k]);
+    }
+  }
+};
+
+template <std::size_t n>
+double horner(const std::array<double, n>& a, double w) {
+  double sum = a[n - 1];
+  for (std::size_t k = n - 1; k-- > 0;) sum = sum * w + a[k];
+  return sum;
+}
+
+template <std::size_t n>
+RateTrack::Rate horner_sloped(const std::array<double, n>& a, double w) {
+  double sum = a[n - 1], slope = 0;
+  for (std::size_t k = n - 1; k-- > 0;) {
+    slope = slope * w + sum;
+    sum = sum * w + a[k];
+  }
+  return {sum, slope};
+}
+
+}  // namespace
+
+double RateTrack::last() { return 1 - std::ldexp(1.0, -octaves); }
+
+bool RateTrack::add_panels(const Given& rate, double z0, double z1, std::size_t pieces) {
+  static const Interpolation<degree + 1> nodes;
+  const std::size_t before = panels_.size();
+  for (std::size_t p = 0; p < pieces; ++p) {
+    const double a = z0 + (z1 - z0) * static_cast<double>(p) / static_cast<double>(pieces);
+    const double b = p + 1 == pieces ? z1 : z0 + (z1 - z0) * static_cast<double>(p + 1) / static_cast<double>(pieces);
+    Panel panel;
+    panel.middle = (a + b) / 2;
+    panel.half = (b - a) / 2;
+    const auto at = [&](double w) {
+      const double z = panel.middle + panel.half * w;
+      return rate(z, z < 0.5 ? 1 - z : (1 - panel.middle) - panel.half * w);
+    };
+    Series R{};
+    for (std::size_t j = 0; j <= degree; ++j) {
+      R[j] = at(nodes.place[j]);
+      if (!(R[j] > 0) || !std::isfinite(R[j])) return false;
+    }
+    for (std::size_t k = 0; k <= degree; ++k)
+      for (std::size_t j = 0; j <= degree; ++j) {
+        panel.rate[k] += nodes.to_powers[k][j] * R[j];
+        panel.slowness[k] += nodes.to_powers[k][j] / R[j];
+      }
+    for (const double w : {-1.0, -0.55, 0.25, 0.85, 1.0}) {
+      const double exact = at(w);
+      const bool at_end = b == 1 && w == 1;  // the rate itself may be zero there
+      if (at_end) continue;
+      const double within = fits_within + 10 * rounding_ / (1 - b + panel.half);
+      if (!(std::abs(horner(panel.rate, w) - exact) <= within * exact) ||
+          !(std::abs(horner(panel.slowness, w) * exact - 1) <= within)) {
+        panels_.resize(before);
+        return false;
+      }
+    }
+    for (std::size_t k = 0; k <= degree; ++k)
+      panel.time[k + 1] = panel.half * panel.slowness[k] / static_cast<double>(k + 1);
+    panel.time[0] = -horner(panel.time, -1.0);
+    panel.t0 = panels_.empty() ? 0 : panels_.back().t0 + horner(panels_.back().time, 1.0);
+    panels_.push_back(panel);
+  }
+  return true;
+}
+
+bool RateTrack::add_bucket(const Given& rate, double z0, double z1) {
+  for (std::size_t pieces = 1; pieces <= most_pieces; pieces *= 2) {
+    const std::size_t first = panels_.size();
+    if (!add_panels(rate, z0, z1, pieces)) {
+      panels_.resize(first);
+      continue;
+    }
+    buckets_.push_back({first, pieces, z0, static_cast<double>(pieces) / (z1 - z0)});
+    return true;
+  }
+  return false;
+}
+
+std::optional<RateTrack> RateTrack::make(const Given& rate, double rounding) {
+  RateTrack track;
+  track.rounding_ = rounding;
+  for (std::size_t i = 0; i < per_half; ++i)
+    if (!track.add_bucket(rate, lower_edge(i), lower_edge(i + 1))) return std::nullopt;
+  for (std::size_t i = per_half; i-- > 1;)
+    if (!track.add_bucket(rate, 1 - lower_edge(i + 1), 1 - lower_edge(i))) return std::nullopt;
+  track.find_shape();
+  return track;
+}
+
+const RateTrack::Panel& RateTrack::panel_at(double z) const {
+  std::size_t i = 0;
+  if (z < 0.5)
+    i = bucket_from_end(z);
+  else
+    i = std::min(2 * per_half - 1 - bucket_from_end(1 - z), buckets_.size() - 1);
+  const Bucket& bucket = buckets_[i];
+  if (bucket.pieces == 1) return panels_[bucket.first];
+  const double piece = (z - bucket.z0) * bucket.per_piece;
+  const std::size_t p = piece > 0 ? std::min(static_cast<std::size_t>(piece), bucket.pieces - 1) : 0;
+  return panels_[bucket.first + p];
+}
+
+RateTrack::Rate RateTrack::rate(double z) const {
+  if (z > last()) return {0, rate(last()).slope};
+  const Panel& p = panel_at(z);
+  const Rate r = horner_sloped(p.rate, (z - p.middle) / p.half);
+  return {r.value, r.slope / p.half};
+}
+
+double RateTrack::curvature(double z) const {
+  const Panel& p = panel_at(std::min(z, last()));
+  const double w = (std::min(z, last()) - p.middle) / p.half;
+  double sum = 0;
+  for (std::size_t k = degree; k >= 2; --k) sum = sum * w + static_cast<double>(k * (k - 1)) * p.rate[k];
+  return sum / (p.half * p.half);
+}
+
+double RateTrack::time(double z) const {
+  z = std::min(z, last());
+  const Panel& p = panel_at(z);
+  return p.t0 + horner(p.time, (z - p.middle) / p.half);
+}
+
+double RateTrack::reached(double t) const {
+  const auto after = std::upper_bound(panels_.begin(), panels_.end(), t,
+                                      [](double value, const Panel& panel) { return value < panel.t0; });
+  if (after == panels_.begin()) return 0;
+  const Panel& p = *(after - 1);
+  const double wanted = t - p.t0;
+  double lo = -1, hi = 1, w = std::min(1.0, -1 + wanted / (p.half * horner(p.slowness, 0.0)));
+  for (int i = 0; i < 60; ++i) {
+    const double excess = horner(p.time, w) - wanted;
+    (excess > 0 ? hi : lo) = w;
+    double next = w - excess / (p.half * horner(p.slowness, w));
+    const bool newton = next >= lo && next <= hi;
+    if (!newton) next = (lo + hi) / 2;
+    const bool settled = newton && std::abs(next - w) <= 1e-8;  // its error is squared in each step
+    w = next;
+    if (settled || hi - lo < 1e-15) break;
+  }
+  if (after == panels_.end() && w >= 1 - 1e-12) return 1;
+  return p.middle + p.half * w;
+}
+
+int RateTrack::rises(double z0, double z1) const {
+  for (const auto& [from, to] : turns_)
+    if (from < z1 && to > z0) return 0;
+  const double slope = rate(std::min((z0 + z1) / 2, last())).slope;
+  return slope > 0 ? 1 : slope < 0 ? -1 : 0;
+}
+
+std::vector<double> RateTrack::places() const {
+  std::vector<double> all = {0};
+  for (const Panel& p : panels_) {
+    all.push_back(p.middle);
+    all.push_back(p.middle + p.half);
+  }
+  return all;
+}
+
+/// z - z_in - tau R(z) changes its sign once in [lo, hi].
+double RateTrack::root(double z_in, double tau, double lo, double hi) const {
+  double z = lo;
+  const auto F = [&](double x, double& slope) {
+    const Rate r = rate(x);
+    slope = 1 - tau * r.slope;
+    return x - z_in - tau * r.value;
+  };
+  for (int i = 0; i < 200; ++i) {
+    double slope = 0;
+    const double f = F(z, slope);
+    if (!std::isfinite(f)) return nan;
+    (f > 0 ? hi : lo) = z;
+    double next = z - f / slope;
+    const bool newton = next >= lo && next <= hi;
+    if (!newton) next = (lo + hi) / 2;
+    const bool settled = newton && std::abs(next - z) <= std::max(1e-9 * std::min(next, 1 - next), 2e-16);
+    z = next;
+    if (settled || hi - lo <= 4e-16) return z;
+  }
+  return nan;
+}
+
+/// R' is monotone in [lo, hi] and passes `slope` there.
+double RateTrack::slope_equals(double slope, double lo, double hi) const {
+  const bool rises = rate(hi).slope > rate(lo).slope;
+  for (int i = 0; i < 60; ++i) {
+    const double middle = (lo + hi) / 2;
+    ((rate(middle).slope < slope) == rises ? lo : hi) = middle;
+  }
+  return (lo + hi) / 2;
+}
+
+double RateTrack::first_state(double z_in, double tau) const {
+  if (z_in >= last()) return std::max(z_in, last());
+  const auto F = [&](double z, double R) { return z - z_in - tau * R; };
+  for (const Bend& bend : bends_) {
+    if (bend.z1 <= z_in) continue;
+    const bool inside = z_in > bend.z0;
+    const double a = inside ? z_in : bend.z0;
+    const Rate at_a = inside ? rate(z_in) : bend.at0;
+    if (F(bend.z1, bend.at1.value) >= 0) return root(z_in, tau, a, bend.z1);
+    if (!bend.convex || !(tau * at_a.slope < 1 && tau * bend.at1.slope > 1)) continue;
+    const double top = slope_equals(1 / tau, a, bend.z1);
+    if (F(top, rate(top).value) >= 0) return root(z_in, tau, a, top);
+  }
+  return 1;
+}
+
+double RateTrack::last_state(double z_in, double tau) const {
+  if (z_in >= last()) return std::max(z_in, last());
+  const auto F = [&](double z, double R) { return z - z_in - tau * R; };
+  if (F(bends_.back().z1, bends_.back().at1.value) < 0) return 1;
+  for (auto bend = bends_.rbegin(); bend != bends_.rend(); ++bend) {
+    const bool inside = z_in > bend->z0;
+    const double a = inside ? z_in : bend->z0;
+    const Rate at_a = inside ? rate(z_in) : bend->at0;
+    if (F(a, at_a.value) < 0) return root(z_in, tau, a, bend->z1);
+    if (bend->convex || !(tau * at_a.slope > 1 && tau * bend->at1.slope < 1)) continue;
+    const double bottom = slope_equals(1 / tau, a, bend->z1);
+    if (F(bottom, rate(bottom).value) < 0) return root(z_in, tau, bottom, bend->z1);
+  }
+  return nan;
+}
+
+/// Peaks and stretches of one bend, looked for at five places a panel.
+void RateTrack::find_shape() {
+  constexpr double flat = 1e-6;  // bending and rising below this share of the rate is rounding
+  constexpr std::array<double, 5> places = {-1, -0.5, 0, 0.5, 1};
+  falls_ = true;
+  peaks_ = {};
+  if (rate(0).slope <= 0) peaks_.push_back(0);
+  std::vector<double> turns;  // of the bend
+  int bending = 0, rising = 0;
+  double before = 0;
+  for (const Panel& p : panels_)
+    for (const double w : places) {
+      const double z = std::min(p.middle + p.half * w, last());
+      if (rounding_ > 1e-9 * (1 - z)) continue;
+      const Rate r = rate(z);
+      const double nearest = std::max(p.half, std::min(z, 1 - z));
+      const double bend = curvature(z) * nearest * nearest;
+      const int up = std::abs(r.slope) * nearest <= flat * r.value ? 0 : r.slope > 0 ? 1 : -1;
+      if (up > 0) falls_ = false;
+      if (rising > 0 && up < 0) {
+        double lo = before, hi = z;
+        for (int i = 0; i < 60; ++i) (rate((lo + hi) / 2).slope > 0 ? lo : hi) = (lo + hi) / 2;
+        peaks_.push_back((lo + hi) / 2);
+      }
+      if (up != 0 && rising != 0 && up != rising) turns_.emplace_back(before, z);
+      if (up != 0) rising = up;
+      const int way = std::abs(bend) <= flat * r.value ? 0 : bend > 0 ? 1 : -1;
+      if (way != 0 && bending != 0 && way != bending) {
+        double lo = before, hi = z;
+        for (int i = 0; i < 60; ++i) ((curvature((lo + hi) / 2) > 0) == (bending > 0) ? lo : hi) = (lo + hi) / 2;
+        turns.push_back((lo + hi) / 2);
+        bends_.push_back({bends_.empty() ? 0 : bends_.back().z1, turns.back(), bending > 0, {}, {}});
+      }
+      if (way != 0) bending = way;
+      before = z;
+    }
+  bends_.push_back({bends_.empty() ? 0 : bends_.back().z1, last(), bending > 0, {}, {}});
+  for (Bend& bend : bends_) {
+    bend.at0 = rate(bend.z0);
+    bend.at1 = rate(bend.z1);
+  }
+  if (rising > 0) peaks_.push_back(last());
+}
+
+}  // namespace vatwright

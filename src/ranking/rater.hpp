@@ -1,0 +1,43 @@
+#pragma once
+#include <functional>
+
+#include "order.hpp"
+#include "vatwright/hookup/objective.hpp"
+#include "vatwright/ranking/twins.hpp"
+
+namespace vatwright {
+
+/// Rates hookups by the full models, one by one, for the order that is asked. Shared by threads.
+class Rater {
+ public:
+  /// shares_of: what is known of a hookup's best shares; empty: nothing is.
+  Rater(const Problem& problem, const RankOptions& options, const Twins& twins,
+        std::function<KnownShares(const Hookup&)> shares_of = {});
+
+  /// At the duty's feed rate; its ceiling is not looked for.
+  [[nodiscard]] Entry rate(Hookup hookup) const;
+  /// The ceiling, looked for from a feed rate near it on.
+  void find_ceiling(Entry& entry, double from_m3_s) const;
+  /// Whether an entry's ceiling may be as high as this rate.
+  [[nodiscard]] bool may_reach(const Entry& entry, double feed_m3_s) const;
+  /// All that is told of an entry whose place is known. is_listed: not a hookup of the user's that stands besides.
+  [[nodiscard]] Ranked tell(const Entry& entry, bool is_listed) const;
+
+  [[nodiscard]] bool needs_ceilings() const { return options_.by == By::fit || options_.by == By::ceiling; }
+  [[nodiscard]] const Problem& problem() const { return problem_; }
+  [[nodiscard]] const RankOptions& options() const { return options_; }
+  [[nodiscard]] const Twins& twins() const { return twins_; }
+
+ private:
+  [[nodiscard]] KnownShares known(const Hookup& hookup) const;
+  const Problem& problem_;
+  const RankOptions& options_;
+  const Twins& twins_;
+  std::function<KnownShares(const Hookup&)> shares_of_;
+  Objective objective_;
+};
+
+/// All shares are free.
+bool all_free(const Hookup& hookup);
+
+}  // namespace vatwright
