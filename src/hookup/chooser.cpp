@@ -63,7 +63,7 @@ JudgedHookup Chooser::choose(double feed_m3_s, Purpose purpose, Detail detail) {
       judge_hookup(problem_, network_, feed_m3_s, free ? free->shares : space_.shares(space_.in_proportion()), detail);
   if (free && !breaks_limit(best)) return best;
   if (breaks_limit_of_files(best)) return best;  // no share helps
-  if (known_shares_ && purpose == Purpose::window && breaks_feed_line(best)) return best;
+  if (known_shares_ && breaks_feed_line(best)) return best;  // then all shares do
   const bool missed_anyhow = free && is_all_of_target(objective_, problem_.duty) && !all_met(best.targets);
   if (purpose == Purpose::window && missed_anyhow) return best;
 

@@ -12,6 +12,11 @@ namespace vatwright {
 namespace {
 
 constexpr double tie = 2e-9;  // relative: values that differ by less are kept side by side
+/// How much less than its best the search may see in a hookup, in z; what comes so near to the last place is kept and
+/// told apart later. Where rates rise, what a joint misses grows on the way.
+constexpr double missed = 4e-6, grows = 100;
+constexpr double ceiling_missed = 1e-4;  // the same of ceilings, relative, where z moves by `steep` or more with ln q
+constexpr double steep = 0.05;
 constexpr double hair = 1e-12;
 constexpr double step_down = 0.97;  // of the feed rate, while too few reach the target
 
@@ -25,7 +30,7 @@ class BestOnLine::List final : public Wanted {
   List(const BestOnLine& best, const BestAsked& asked) : best_(best), asked_(asked) { refresh(); }
 
   [[nodiscard]] double floor(int fewest, int most) const override {
-    if (best_.z_target_) return *best_.z_target_ * (1 - hair);
+    if (best_.z_target_) return *best_.z_target_ - missed;
     if (!asked_.by_shape) return least_[0];
     double least = std::numeric_limits<double>::infinity();
     for (int n = fewest; n <= most; ++n) least = std::min(least, least_[static_cast<std::size_t>(n)]);
@@ -38,14 +43,18 @@ class BestOnLine::List final : public Wanted {
       if (hookup.z >= least) add({std::move(hookup), hookup.z});
       return;
     }
-    const double cap = feed_lines_pass(hookup.hookup, best_.vessels_), z = *best_.z_target_ * (1 - hair);
+    const double cap = feed_lines_pass(hookup.hookup, best_.vessels_), z = *best_.z_target_ - missed;
     if (cap < best_.feed_m3_s_ * (1 - hair) || cap < least) return;
     double from = feed_m3_s;
     if (least > from * (1 + hair)) {
       if (splits.best(hookup.hookup, best_.vessels_, 0, least, z).z < z) return;
       from = least;
     }
-    const double top = ceiling(hookup.hookup, best_.vessels_, *best_.z_target_, from, cap, splits);
+    double top = ceiling(hookup.hookup, best_.vessels_, *best_.z_target_, from, cap, splits);
+    if (-splits.best(hookup.hookup, best_.vessels_, 0, top, 0).dq * top < steep) {
+      Splits sharp(best_.line_, told_tolerance);
+      top = ceiling(hookup.hookup, best_.vessels_, *best_.z_target_, from, cap, sharp);
+    }
     if (top >= least) add({std::move(hookup), top});
   }
 
@@ -99,7 +108,10 @@ class BestOnLine::List final : public Wanted {
     return start == start_.end() ? asked_.floor : start->second;
   }
   [[nodiscard]] double kth(const Heap& heap) const {
-    return heap.size() < asked_.places ? asked_.floor : std::max(asked_.floor, heap.top() * (1 - tie));
+    return heap.size() < asked_.places ? asked_.floor : std::max(asked_.floor, nearly(heap.top()));
+  }
+  [[nodiscard]] double nearly(double value) const {
+    return best_.z_target_ ? value * (1 - ceiling_missed) : value * (1 - tie) - missed;
   }
   void add(Placed p) {
     Heap& heap = heaps_[shape(p.at)];
@@ -140,6 +152,7 @@ BestOnLine::BestOnLine(const Line& line, const Bound& bound, const Twins& twins,
       search_(line, bound, twins, classes),
       feed_m3_s_(feed_m3_s),
       z_target_(place_of_target),
+      tolerance_(line.falls() ? missed / 4 : missed / (4 * grows)),
       threads_(threads) {}
 
 double BestOnLine::ceiling(const Hookup& hookup, const OnLines& vessels, double place_of_target, double from_m3_s,
@@ -148,14 +161,14 @@ double BestOnLine::ceiling(const Hookup& hookup, const OnLines& vessels, double 
     const double z = splits.best(hookup, vessels, 0, q, 0).z;
     return z == Splits::no_shares ? -1.0 : z - place_of_target;
   };
-  if (over(from_m3_s) < 0) return from_m3_s;  // it is reached there to rounding
+  if (over(from_m3_s) < 0) return from_m3_s;  // it is reached there, but for what splits miss
   double lo = from_m3_s, hi = std::min(cap_m3_s, 1.2 * from_m3_s);
   for (int i = 0; over(hi) >= 0; ++i) {
     if (hi >= cap_m3_s) return cap_m3_s;
     lo = hi;
     hi = std::min(cap_m3_s, hi * (i < 4 ? 1.5 : 10));
   }
-  const auto root = find_root(over, lo, hi, {.rel_tol = 1e-12, .abs_tol = 0});
+  const auto root = find_root(over, lo, hi, {.rel_tol = 1e-11, .abs_tol = 0});
   return answer(root) ? *answer(root) : lo;
 }
 
@@ -170,8 +183,8 @@ double BestOnLine::first_ceilings(const BestAsked& asked, List& list, LineSearch
   const double least = std::max(asked.floor, 1e-6 * q);
   for (int i = 0; q > least && i < 400; ++i) {
     list.feed_m3_s = q;
-    cost.add(search_.run_among(static_cast<std::size_t>(asked.most) + 2, q, asked.fewest, asked.most, search_tolerance,
-                               list));
+    cost.add(
+        search_.run_among(static_cast<std::size_t>(asked.most) + 2, q, asked.fewest, asked.most, tolerance_, list));
     if (list.count() >= asked.places) break;
     list.keep_nothing();
     q *= i < 20 ? step_down : 0.8;
@@ -184,9 +197,9 @@ BestFound BestOnLine::find(const BestAsked& asked) const {
   LineSearch::Cost cost;
   if (!z_target_) {
     cost.add(search_.run_among(static_cast<std::size_t>(asked.most) + 2, feed_m3_s_, asked.fewest, asked.most,
-                               search_tolerance, list));
+                               tolerance_, list));
     list.keep_thresholds();
-    cost.add(search_.run(feed_m3_s_, asked.fewest, asked.most, search_tolerance, threads_, list));
+    cost.add(search_.run(feed_m3_s_, asked.fewest, asked.most, tolerance_, threads_, list));
   } else {
     double q = asked.floor;
     if (!asked.by_shape) {
@@ -196,7 +209,7 @@ BestFound BestOnLine::find(const BestAsked& asked) const {
     }
     const double least = 1e-9 * feed_m3_s_;
     list.feed_m3_s = std::max(q, least);
-    cost.add(search_.run(list.feed_m3_s, asked.fewest, asked.most, search_tolerance, threads_, list));
+    cost.add(search_.run(list.feed_m3_s, asked.fewest, asked.most, tolerance_, threads_, list));
   }
   BestFound found = list.told();
   found.cost = cost;

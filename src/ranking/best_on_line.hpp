@@ -51,6 +51,7 @@ class BestOnLine {
   LineSearch search_;
   double feed_m3_s_;
   std::optional<double> z_target_;
+  double tolerance_;  // of z at every joint
   int threads_;
 };
 

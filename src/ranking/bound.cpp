@@ -6,7 +6,7 @@
 namespace vatwright {
 namespace {
 
-constexpr int inlets = 48;  // looked at for the tube equivalent of a tank
+constexpr int inlets = 32;  // looked at for the tube equivalent of a tank
 
 /// R(z) times the mean of 1/R over [x, z] falls with z for every x: (R'/R)(d/dz integral ..) <= 0 at pairs of places.
 bool mean_premise(const RateTrack& track) {
@@ -107,16 +107,14 @@ double Bound::reached(double t) const {
   return at->z0 + (t - at->t0) * at->level;
 }
 
-double Bound::equivalent_m3(const Line::OnLine& vessel, double feed_m3_s) const {
+double Bound::equivalent_m3(const Line::OnLine& vessel, double feed_m3_s, double z_most) const {
   std::size_t which = 0;
   while (line_.tracks()[which].get() != vessel.track) ++which;
   const double volume = vessel.volume_m3 * scale_[which];
   if (!vessel.is_tank || !sharpen_) return volume;
-  // At any flow through it down to none a tank is worth at most what it is at the whole feed: both shrink with tau, and
-  // a branch of less flow counts by its share (see the class).
   double most = 0, step = 0, before = 0;
   for (int i = 0; i <= inlets; ++i) {
-    const double y = 1 - std::exp2(-static_cast<double>(i) / 4);  // to 1 - 2^-12
+    const double y = std::min(z_most, RateTrack::last()) * i / inlets;
     const double z = line_.out(vessel, y, feed_m3_s).z;
     const double worth = track_->time(z) - track_->time(y);
     if (!std::isfinite(worth)) return volume;

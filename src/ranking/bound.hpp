@@ -17,8 +17,8 @@ class Bound {
 
   [[nodiscard]] double time(double z) const;
   [[nodiscard]] double reached(double t) const;
-  /// Space time times feed rate that a vessel counts with, m3; at one feed rate.
-  [[nodiscard]] double equivalent_m3(const Line::OnLine& vessel, double feed_m3_s) const;
+  /// Space time times feed rate that a vessel counts with, m3, at one feed rate and inlets up to z_most.
+  [[nodiscard]] double equivalent_m3(const Line::OnLine& vessel, double feed_m3_s, double z_most = 1) const;
   /// Tanks count with their tube equivalents: rates fall, are all of one shape, and R times the mean of 1/R over
   /// [x, z] falls with z (tested on the track).
   [[nodiscard]] bool tanks_sharpen() const { return sharpen_; }

@@ -16,7 +16,7 @@ OnLines on_lines(const Line& line, const Twins& twins, std::size_t vessels_of_si
 /// outlive it.
 KnownShares shares_on(const Line& line, const OnLines& vessels, const Hookup& hookup);
 
-/// Of splits that are told (joints to 1e-10 of the way), and of those that are searched through.
-inline constexpr double told_tolerance = 1e-10, search_tolerance = 1e-9;
+/// Of the joints of splits that are told, as z.
+inline constexpr double told_tolerance = 1e-10;
 
 }  // namespace vatwright

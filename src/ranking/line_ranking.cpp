@@ -56,10 +56,26 @@ std::unique_ptr<OnOneLine> OnOneLine::find(const Problem& problem, const std::ve
   return made;
 }
 
+bool OnOneLine::on_the_line(const Hookup& hookup) const {
+  return std::ranges::all_of(vessels_of(hookup),
+                             [&](int v) { return vessels_[static_cast<std::size_t>(v)] != nullptr; });
+}
+
 KnownShares OnOneLine::shares_of(const Hookup& hookup) const {
-  for (const int v : vessels_of(hookup))
-    if (vessels_[static_cast<std::size_t>(v)] == nullptr) return {};
-  return shares_on(line_, vessels_, hookup);
+  return on_the_line(hookup) ? shares_on(line_, vessels_, hookup) : KnownShares{};
+}
+
+std::optional<double> OnOneLine::ceiling_of(const Hookup& hookup) const {
+  if (!z_target_ || !on_the_line(hookup)) return std::nullopt;
+  Splits splits(line_, told_tolerance);
+  double volume = 0;
+  for (const int v : vessels_of(hookup)) volume += vessels_[static_cast<std::size_t>(v)]->volume_m3;
+  // z falls as the feed rises: from the most that could be reached, down to where it is
+  double q = std::min(1.01 * volume / bound_.time(*z_target_), feed_lines_pass(hookup, vessels_));
+  for (int i = 0; i < 60; ++i, q /= 2)
+    if (splits.best(hookup, vessels_, 0, q, 0).z >= *z_target_)
+      return BestOnLine::ceiling(hookup, vessels_, *z_target_, q, feed_lines_pass(hookup, vessels_), splits);
+  return std::nullopt;
 }
 
 /// Finds and rates what may stand in the places asked.
@@ -134,7 +150,7 @@ class OnOneLine::Places {
     for_each_index(open.size(), options_.threads, [&](std::size_t k) {
       Entry& e = entries_[open[k]];
       e = rater_.rate(of_open[k]->at.hookup);
-      if (by_ceiling_ && !e.breaks_limit) rater_.find_ceiling(e, of_open[k]->value);
+      if (by_ceiling_ && !e.breaks_limit) rater_.find_ceiling(e);
     });
     for (const std::size_t i : open) check(entries_[i], values_[i]);
     return at;
@@ -259,7 +275,7 @@ class OnOneLine::Places {
   void add_today(RankedSet& set) {
     if (!options_.today) return;
     set.today = rater_.rate(*options_.today);
-    if (by_ceiling_) rater_.find_ceiling(*set.today, duty_feed());
+    if (by_ceiling_) rater_.find_ceiling(*set.today);
     set.unsolved = set.unsolved || set.today->unsolved;
     const auto vessels = vessels_of(*options_.today);
     const bool offered = std::ranges::all_of(vessels, [&](int v) { return on_.twins_.class_of(v) >= 0; });
@@ -301,7 +317,7 @@ class OnOneLine::Places {
 
   // In what is ordered by: the gap that splits left, and the tolerance of maps.
   std::optional<double> within() const {
-    const double dz = cost_.gap + 1e-9;
+    const double dz = cost_.gap + 1e-8;
     if (!by_ceiling_) return to_figure(dz);
     double most = 0;
     for (const Entry& e : entries_) {

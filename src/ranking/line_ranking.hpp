@@ -19,11 +19,14 @@ class OnOneLine {
 
   [[nodiscard]] const Twins& twins() const { return twins_; }
   [[nodiscard]] KnownShares shares_of(const Hookup& hookup) const;
+  /// Absent: the target is never reached, or at any rate.
+  [[nodiscard]] std::optional<double> ceiling_of(const Hookup& hookup) const;
   /// Absent: too few hookups keep every limit for the places asked, or a vessel gave no number; all must be visited.
   [[nodiscard]] std::optional<RankedSet> rank(const Rater& rater) const;
 
  private:
   OnOneLine(Line line, Twins twins, const Problem& problem);
+  [[nodiscard]] bool on_the_line(const Hookup& hookup) const;
   class Places;
   Line line_;
   Bound bound_;

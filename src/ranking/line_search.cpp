@@ -63,14 +63,25 @@ struct LineSearch::Sized {
   int count = 0;
 };
 
-std::vector<LineSearch::Sized> LineSearch::sized(double feed_m3_s) const {
+// No vessel is fed at more than all others together reach: what tanks count with at such inlets bounds that again.
+std::vector<LineSearch::Sized> LineSearch::sized(double feed_m3_s, int most) const {
   std::vector<Sized> all;
-  for (const std::size_t c : classes_) {
-    const auto& on_line = line_.vessels()[c];
-    all.push_back(
-        {c, &*on_line, bound_.equivalent_m3(*on_line, feed_m3_s), static_cast<int>(twins_.classes()[c].size())});
+  for (const std::size_t c : classes_)
+    all.push_back({c, &*line_.vessels()[c], 0, static_cast<int>(twins_.classes()[c].size())});
+  double z_most = 1;
+  for (int turn = 0; turn < 4; ++turn) {
+    for (Sized& s : all) s.e_m3 = bound_.equivalent_m3(*s.on_line, feed_m3_s, z_most);
+    std::ranges::stable_sort(all, [](const Sized& a, const Sized& b) { return a.e_m3 > b.e_m3; });
+    double others = 0;
+    int left = most - 1;
+    for (const Sized& s : all) {
+      const int n = std::min(left, s.count);
+      others += n * s.e_m3;
+      left -= n;
+    }
+    z_most = bound_.reached(others / feed_m3_s);
+    if (!bound_.tanks_sharpen()) break;
   }
-  std::ranges::stable_sort(all, [](const Sized& a, const Sized& b) { return a.e_m3 > b.e_m3; });
   return all;
 }
 
@@ -86,6 +97,7 @@ class LineSearch::Walk {
         most_(most),
         splits_(search.line_, tolerance),
         wanted_(wanted),
+        pad_(tolerance * most),
         left_(sized.size()) {
     for (std::size_t i = 0; i < sized.size(); ++i) left_[i] = sized[i].count;
   }
@@ -138,7 +150,7 @@ class LineSearch::Walk {
     ++cost_.bounds;
     const double floor = wanted_.floor(std::max(fewest_, used_), most_);
     if (!(floor > z)) return true;
-    return !(search_.bound_.time(z) + e_m3 / q_ < floor_time(floor));
+    return !(search_.bound_.time(z + pad_) + e_m3 / q_ < floor_time(floor));
   }
   double floor_time(double floor) {
     if (floor != floor_) {
@@ -169,7 +181,7 @@ class LineSearch::Walk {
     const std::vector<std::size_t> classes = taken_;
     const double floor = wanted_.floor(std::max(fewest_, used_), most_);
     const double t = floor_time(floor) - largest_left(most_ - used_) / q_;
-    const double need = floor > 0 && t > 0 ? search_.bound_.reached(t) * (1 - 1e-9) : 0;
+    const double need = floor > 0 && t > 0 ? search_.bound_.reached(t) - pad_ : 0;
     std::vector<const Line::OnLine*> vessels;
     std::vector<int> first_of_class;
     Pattern pattern;
@@ -247,6 +259,7 @@ class LineSearch::Walk {
   int fewest_, most_;
   Splits splits_;
   Wanted& wanted_;
+  double pad_;  // what the joints before may have missed
   Cost cost_;
   std::vector<int> left_;
   std::vector<std::size_t> taken_;  // by the member being chosen
@@ -262,7 +275,7 @@ LineSearch::~LineSearch() = default;
 LineSearch::Cost LineSearch::run(double feed_m3_s, int fewest, int most, double tolerance, int threads,
                                  Wanted& wanted) const {
   templates_->make_up_to(most);
-  const std::vector<Sized> all = sized(feed_m3_s);
+  const std::vector<Sized> all = sized(feed_m3_s, most);
   struct Task {
     int members;
     std::size_t first;
@@ -289,7 +302,7 @@ LineSearch::Cost LineSearch::run(double feed_m3_s, int fewest, int most, double 
 LineSearch::Cost LineSearch::run_among(std::size_t largest, double feed_m3_s, int fewest, int most, double tolerance,
                                        Wanted& wanted) const {
   templates_->make_up_to(most);
-  std::vector<Sized> all = sized(feed_m3_s);
+  std::vector<Sized> all = sized(feed_m3_s, most);
   if (all.size() > largest) all.resize(largest);
   Walk walk(*this, all, feed_m3_s, fewest, most, tolerance, wanted);
   for (int m = 1; m <= most; ++m)

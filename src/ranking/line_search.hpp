@@ -55,7 +55,7 @@ class LineSearch {
   struct Templates;
   struct Sized;
   class Walk;
-  [[nodiscard]] std::vector<Sized> sized(double feed_m3_s) const;
+  [[nodiscard]] std::vector<Sized> sized(double feed_m3_s, int most) const;
   const Line& line_;
   const Bound& bound_;
   const Twins& twins_;

@@ -19,7 +19,9 @@ RankedSet ranked_set(const Problem& problem, const std::vector<int>& offered, co
   else
     twins.emplace(problem, offered);
   if (line && !options.visit) {
-    rater.emplace(problem, options, *twins, [&line](const Hookup& h) { return line->shares_of(h); });
+    rater.emplace(problem, options, *twins,
+                  Rater::Known{[&line](const Hookup& h) { return line->shares_of(h); },
+                               [&line](const Hookup& h) { return line->ceiling_of(h); }});
     if (auto set = line->rank(*rater)) return *std::move(set);
   } else {
     rater.emplace(problem, options, *twins);

@@ -64,19 +64,20 @@ double horner(const std::array<double, n>& a, double w) {
   return sum;
 }
 
+/// The same, even and odd powers apart: half as long a chain.
 template <std::size_t n>
-RateTrack::Rate horner_sloped(const std::array<double, n>& a, double w) {
-  double sum = a[n - 1], slope = 0;
-  for (std::size_t k = n - 1; k-- > 0;) {
-    slope = slope * w + sum;
-    sum = sum * w + a[k];
+double even_and_odd(const std::array<double, n>& a, double w) {
+  const double w2 = w * w;
+  constexpr std::size_t top = n - 1;
+  double one = a[top], other = a[top - 1];
+  for (std::size_t k = top; k >= 2; k -= 2) {
+    one = one * w2 + a[k - 2];
+    if (k >= 3) other = other * w2 + a[k - 3];
   }
-  return {sum, slope};
+  return top % 2 == 0 ? one + w * other : other + w * one;
 }
 
 }  // namespace
-
-double RateTrack::last() { return 1 - std::ldexp(1.0, -octaves); }
 
 bool RateTrack::add_panels(const Given& rate, double z0, double z1, std::size_t pieces) {
   static const Interpolation<degree + 1> nodes;
@@ -114,6 +115,9 @@ bool RateTrack::add_panels(const Given& rate, double z0, double z1, std::size_t 
     }
     for (std::size_t k = 0; k <= degree; ++k)
       panel.time[k + 1] = panel.half * panel.slowness[k] / static_cast<double>(k + 1);
+    panel.per_half = 1 / panel.half;
+    for (std::size_t k = 0; k < degree; ++k)
+      panel.slope[k] = panel.per_half * static_cast<double>(k + 1) * panel.rate[k + 1];
     panel.time[0] = -horner(panel.time, -1.0);
     panel.t0 = panels_.empty() ? 0 : panels_.back().t0 + horner(panels_.back().time, 1.0);
     panels_.push_back(panel);
@@ -141,8 +145,20 @@ std::optional<RateTrack> RateTrack::make(const Given& rate, double rounding) {
     if (!track.add_bucket(rate, lower_edge(i), lower_edge(i + 1))) return std::nullopt;
   for (std::size_t i = per_half; i-- > 1;)
     if (!track.add_bucket(rate, 1 - lower_edge(i + 1), 1 - lower_edge(i))) return std::nullopt;
+  track.index_times();
   track.find_shape();
   return track;
+}
+
+void RateTrack::index_times() {
+  first_time_bits_ = leading_bits(panels_[1].t0);
+  const std::uint64_t end = leading_bits(panels_.back().t0) + 1;
+  std::size_t i = 0;
+  for (std::uint64_t bits = first_time_bits_; bits <= end; ++bits) {
+    const double t = std::bit_cast<double>(bits << 50);
+    while (i + 1 < panels_.size() && panels_[i + 1].t0 <= t) ++i;
+    panel_by_time_.push_back(i);
+  }
 }
 
 const RateTrack::Panel& RateTrack::panel_at(double z) const {
@@ -161,13 +177,13 @@ const RateTrack::Panel& RateTrack::panel_at(double z) const {
 RateTrack::Rate RateTrack::rate(double z) const {
   if (z > last()) return {0, rate(last()).slope};
   const Panel& p = panel_at(z);
-  const Rate r = horner_sloped(p.rate, (z - p.middle) / p.half);
-  return {r.value, r.slope / p.half};
+  const double w = (z - p.middle) * p.per_half;
+  return {even_and_odd(p.rate, w), even_and_odd(p.slope, w)};
 }
 
 double RateTrack::curvature(double z) const {
   const Panel& p = panel_at(std::min(z, last()));
-  const double w = (std::min(z, last()) - p.middle) / p.half;
+  const double w = (std::min(z, last()) - p.middle) * p.per_half;
   double sum = 0;
   for (std::size_t k = degree; k >= 2; --k) sum = sum * w + static_cast<double>(k * (k - 1)) * p.rate[k];
   return sum / (p.half * p.half);
@@ -176,27 +192,28 @@ double RateTrack::curvature(double z) const {
 double RateTrack::time(double z) const {
   z = std::min(z, last());
   const Panel& p = panel_at(z);
-  return p.t0 + horner(p.time, (z - p.middle) / p.half);
+  return p.t0 + even_and_odd(p.time, (z - p.middle) * p.per_half);
 }
 
 double RateTrack::reached(double t) const {
-  const auto after = std::upper_bound(panels_.begin(), panels_.end(), t,
-                                      [](double value, const Panel& panel) { return value < panel.t0; });
-  if (after == panels_.begin()) return 0;
-  const Panel& p = *(after - 1);
+  std::size_t i = 0;
+  if (const std::uint64_t bits = leading_bits(t); t > 0 && bits > first_time_bits_)
+    i = panel_by_time_[std::min<std::size_t>(bits - first_time_bits_, panel_by_time_.size() - 1)];
+  while (i + 1 < panels_.size() && panels_[i + 1].t0 <= t) ++i;
+  const Panel& p = panels_[i];
   const double wanted = t - p.t0;
-  double lo = -1, hi = 1, w = std::min(1.0, -1 + wanted / (p.half * horner(p.slowness, 0.0)));
-  for (int i = 0; i < 60; ++i) {
-    const double excess = horner(p.time, w) - wanted;
+  double lo = -1, hi = 1, w = std::min(1.0, -1 + wanted * p.per_half / p.slowness[0]);
+  for (int turn = 0; turn < 60; ++turn) {
+    const double excess = even_and_odd(p.time, w) - wanted;
     (excess > 0 ? hi : lo) = w;
-    double next = w - excess / (p.half * horner(p.slowness, w));
+    double next = w - excess * p.per_half / even_and_odd(p.slowness, w);
     const bool newton = next >= lo && next <= hi;
     if (!newton) next = (lo + hi) / 2;
-    const bool settled = newton && std::abs(next - w) <= 1e-8;  // its error is squared in each step
+    const bool settled = newton && std::abs(next - w) <= 1e-6;  // its error is squared in each step
     w = next;
     if (settled || hi - lo < 1e-15) break;
   }
-  if (after == panels_.end() && w >= 1 - 1e-12) return 1;
+  if (i + 1 == panels_.size() && w >= 1 - 1e-12) return 1;
   return p.middle + p.half * w;
 }
 
@@ -232,7 +249,7 @@ double RateTrack::root(double z_in, double tau, double lo, double hi) const {
     double next = z - f / slope;
     const bool newton = next >= lo && next <= hi;
     if (!newton) next = (lo + hi) / 2;
-    const bool settled = newton && std::abs(next - z) <= std::max(1e-9 * std::min(next, 1 - next), 2e-16);
+    const bool settled = newton && std::abs(next - z) <= std::max(1e-6 * std::min(next, 1 - next), 2e-16);
     z = next;
     if (settled || hi - lo <= 4e-16) return z;
   }

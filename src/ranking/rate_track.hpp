@@ -34,7 +34,7 @@ class RateTrack {
   [[nodiscard]] double last_state(double z_in, double tau) const;
 
   /// The last place before the end that is told apart from it.
-  static double last();
+  static constexpr double last() { return 1 - 0x1p-40; }
   /// Places that show all of its shape: ends and middles of the panels, rising.
   [[nodiscard]] std::vector<double> places() const;
   /// Where R has local peaks, its ends included, rising.
@@ -48,8 +48,9 @@ class RateTrack {
   static constexpr std::size_t degree = 8;
   using Series = std::array<double, degree + 1>;
   struct Panel {
-    double middle = 0, half = 0, t0 = 0;
+    double middle = 0, half = 0, per_half = 0, t0 = 0;
     Series rate{}, slowness{};              // in w = (z - middle)/half
+    std::array<double, degree> slope{};     // of the rate, by z
     std::array<double, degree + 2> time{};  // less t0, from w = -1
   };
   struct Bucket {
@@ -65,12 +66,15 @@ class RateTrack {
   using Given = std::function<double(double, double)>;
   bool add_bucket(const Given& rate, double z0, double z1);
   bool add_panels(const Given& rate, double z0, double z1, std::size_t pieces);
+  void index_times();
   void find_shape();
   [[nodiscard]] double root(double z_in, double tau, double lo, double hi) const;
   [[nodiscard]] double slope_equals(double slope, double lo, double hi) const;
 
   std::vector<Panel> panels_;
   std::vector<Bucket> buckets_;
+  std::vector<std::size_t> panel_by_time_;  // the last that begins before a time, by its leading bits
+  std::uint64_t first_time_bits_ = 0;
   std::vector<Bend> bends_;
   std::vector<double> peaks_;
   std::vector<std::pair<double, double>> turns_;  // R changes between rising and falling somewhere from .. to

@@ -21,22 +21,21 @@ bool all_free(const Hookup& h) {
          std::all_of(h.parts.begin(), h.parts.end(), all_free);
 }
 
-Rater::Rater(const Problem& problem, const RankOptions& options, const Twins& twins,
-             std::function<KnownShares(const Hookup&)> shares_of)
+Rater::Rater(const Problem& problem, const RankOptions& options, const Twins& twins, Known known)
     : problem_(problem),
       options_(options),
       twins_(twins),
-      shares_of_(std::move(shares_of)),
+      known_(std::move(known)),
       objective_(options.by == By::conversion ? Objective{} : objective_of(problem.duty)) {}
 
-KnownShares Rater::known(const Hookup& hookup) const {
-  return shares_of_ && all_free(hookup) ? shares_of_(hookup) : KnownShares{};
+KnownShares Rater::shares_of(const Hookup& hookup) const {
+  return known_.shares_of && all_free(hookup) ? known_.shares_of(hookup) : KnownShares{};
 }
 
 Entry Rater::rate(Hookup hookup) const {
   Entry e;
   e.hookup = std::move(hookup);
-  Chooser chooser(problem_, e.hookup, objective_, known(e.hookup));
+  Chooser chooser(problem_, e.hookup, objective_, shares_of(e.hookup));
   const JudgedHookup judged = chooser.choose(problem_.duty.target.feed_m3_s, Purpose::reach);
   const Finding finding = find_verdict(problem_, chooser.network(), judged);
   e.verdict = finding.verdict;
@@ -51,22 +50,24 @@ Entry Rater::rate(Hookup hookup) const {
   return e;
 }
 
-void Rater::find_ceiling(Entry& e, double from_m3_s) const {
-  Chooser chooser(problem_, e.hookup, objective_, known(e.hookup));
-  e.ceiling = vatwright::find_ceiling(chooser, from_m3_s, e.shares);
+void Rater::find_ceiling(Entry& e) const {
+  std::optional<double> near_m3_s;
+  if (known_.ceiling_of && all_free(e.hookup)) near_m3_s = known_.ceiling_of(e.hookup);
+  Chooser chooser(problem_, e.hookup, objective_, shares_of(e.hookup));
+  e.ceiling = vatwright::find_ceiling(chooser, near_m3_s.value_or(problem_.duty.target.feed_m3_s), e.shares);
   e.unsolved = e.unsolved || e.ceiling->unsolved;
 }
 
 bool Rater::may_reach(const Entry& e, double feed_m3_s) const {
-  Chooser chooser(problem_, e.hookup, objective_, known(e.hookup));
+  Chooser chooser(problem_, e.hookup, objective_, shares_of(e.hookup));
   return vatwright::may_reach(chooser, feed_m3_s);
 }
 
 Ranked Rater::tell(const Entry& e, bool is_listed) const {
   const Serve serve = options_.by == By::conversion ? Serve::conversion : Serve::target;
   Ranked ranked;
-  ranked.rating = rate_hookup(problem_, e.hookup,
-                              {.windows = true, .profiles = false, .serve = serve, .known_shares = known(e.hookup)});
+  ranked.rating = rate_hookup(
+      problem_, e.hookup, {.windows = true, .profiles = false, .serve = serve, .known_shares = shares_of(e.hookup)});
   ranked.value = value_of(e, options_.by);
   if (ranked.value && needs_ceilings()) agree(ranked.rating.whole, *ranked.value);
   if (is_listed) ranked.same_as = twins_.same_as(e.hookup, ranked.rating.shares);

@@ -10,14 +10,18 @@ namespace vatwright {
 /// Rates hookups by the full models, one by one, for the order that is asked. Shared by threads.
 class Rater {
  public:
-  /// shares_of: what is known of a hookup's best shares; empty: nothing is.
-  Rater(const Problem& problem, const RankOptions& options, const Twins& twins,
-        std::function<KnownShares(const Hookup&)> shares_of = {});
+  /// What is known of a hookup before the full models are asked; empty: nothing is.
+  struct Known {
+    std::function<KnownShares(const Hookup&)> shares_of;
+    std::function<std::optional<double>(const Hookup&)>
+        ceiling_of;  ///< where its ceiling is, no limit but feed lines asked
+  };
+  Rater(const Problem& problem, const RankOptions& options, const Twins& twins, Known known = {});
 
   /// At the duty's feed rate; its ceiling is not looked for.
   [[nodiscard]] Entry rate(Hookup hookup) const;
-  /// The ceiling, looked for from a feed rate near it on.
-  void find_ceiling(Entry& entry, double from_m3_s) const;
+  /// Its ceiling, begun where it is known to be.
+  void find_ceiling(Entry& entry) const;
   /// Whether an entry's ceiling may be as high as this rate.
   [[nodiscard]] bool may_reach(const Entry& entry, double feed_m3_s) const;
   /// All that is told of an entry whose place is known. is_listed: not a hookup of the user's that stands besides.
@@ -29,11 +33,11 @@ class Rater {
   [[nodiscard]] const Twins& twins() const { return twins_; }
 
  private:
-  [[nodiscard]] KnownShares known(const Hookup& hookup) const;
+  [[nodiscard]] KnownShares shares_of(const Hookup& hookup) const;
   const Problem& problem_;
   const RankOptions& options_;
   const Twins& twins_;
-  std::function<KnownShares(const Hookup&)> shares_of_;
+  Known known_;
   Objective objective_;
 };
 

@@ -17,7 +17,8 @@ constexpr double infinite = std::numeric_limits<double>::infinity();
 constexpr double hair = 1e-12;      // of a flow: within this of a feed line it passes
 constexpr double rounding = 1e-10;  // of a flow: sums of feed lines and least flows may miss each other by so much
 constexpr std::size_t most_trials = 240;
-constexpr double trusted = 1.0 / 12;  // of the whole range: a cell this narrow bends as its ends say
+/// A cell bends as its ends say where it is this share of the whole range, and flows change by less than this factor.
+constexpr double trusted = 1.0 / 100, octave = 1.25;
 constexpr std::size_t most_branches = 8;
 
 /// A concave or straight piece above a function between two places.
@@ -255,8 +256,9 @@ Out Splits::split(const Joint& j, std::size_t from, double q, double need, std::
     const Roof falling = straight(a.f, b.f, a.f * (a.first.z - j.z_in), b.f * (a.first.z - j.z_in));
     const Roof rising = straight(a.f, b.f, (q - a.f) * (b.rest.z - j.z_in), (q - b.f) * (b.rest.z - j.z_in));
     const bool narrow = b.f - a.f <= trusted * (hi - lo);
-    const int one_bends = bend_of(j, from, from + 1, b.first.z, a.first.z, a.one.slope - b.one.slope, narrow);
-    const int other_bends = bend_of(j, from + 1, j.count, a.rest.z, b.rest.z, a.other.slope - b.other.slope, narrow);
+    const bool for_one = narrow && b.f <= octave * a.f, for_other = narrow && q - a.f <= octave * (q - b.f);
+    const int one_bends = bend_of(j, from, from + 1, b.first.z, a.first.z, a.one.slope - b.one.slope, for_one);
+    const int other_bends = bend_of(j, from + 1, j.count, a.rest.z, b.rest.z, a.other.slope - b.other.slope, for_other);
     const Roof one = roof(a.f, b.f, a.one, b.one, falling, one_bends);
     const Roof other = roof(a.f, b.f, a.other, b.other, rising, other_bends);
     bounds[i] = -infinite;
@@ -310,7 +312,7 @@ Out Splits::split(const Joint& j, std::size_t from, double q, double need, std::
     bound_cell(at - 1);
     bound_cell(at);
   }
-  gap_ = std::max(gap_, gap / q);
+  if (gap > tolerance) gap_ = std::max(gap_, gap / q);
 
   const Trial& t = trials[best];
   if (flows != nullptr) {

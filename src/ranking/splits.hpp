@@ -37,7 +37,7 @@ class Splits {
   std::vector<double> shares(const Hookup& hookup, std::span<const Line::OnLine* const> vessels, double z_in,
                              double feed_m3_s);
 
-  /// The most by which a bound stayed above its best: the tolerance, or more where outlets jump.
+  /// The most by which a bound stayed above its best where it could not be brought within the tolerance; else 0.
   [[nodiscard]] double gap() const { return gap_; }
   [[nodiscard]] long maps() const { return maps_; }
 

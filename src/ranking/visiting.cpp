@@ -116,9 +116,7 @@ class Visiting {
       std::vector<std::size_t> wanted;
       for (std::size_t k = 0; k < n; ++k)
         if (may[k]) wanted.push_back(members[begin + k]);
-      for_each_index(wanted.size(), options_.threads, [&](std::size_t k) {
-        rater_.find_ceiling(entries_[wanted[k]], rater_.problem().duty.target.feed_m3_s);
-      });
+      for_each_index(wanted.size(), options_.threads, [&](std::size_t k) { rater_.find_ceiling(entries_[wanted[k]]); });
       for (const std::size_t i : wanted) found.push_back(figure_of(entries_[i], options_.by));
       std::sort(found.begin(), found.end(), std::greater<>());
     }
