@@ -15,18 +15,24 @@ constexpr double as_good_as = 1e-3;       // of values in one group of the order
 constexpr double agrees_within = 1e-7;    // full models and line, relative
 constexpr std::size_t most_tried = 4096;  // hookups rated in full before all must be visited
 
+/// What z = 1 yields of a species; absent: nothing.
+std::optional<double> yield_at_end(const Objective& yield, const Duty& duty, const Line& line) {
+  Stream one = whole_feed(duty);
+  one.xi_mol_m3[0] += 1;
+  const double X = duty.chemistry.kinetics.conversion(one.xi_mol_m3);
+  const auto made = value_of(yield, duty, one);
+  if (!made || !(*made > 0) || !(X > 0)) return std::nullopt;
+  return *made / line.place(X);
+}
+
 /// z at which all that the target asks is met, where that is one conversion or one yield; absent: something else.
 std::optional<double> place_of_target(const Duty& duty, const Line& line) {
   const Objective objective = objective_of(duty);
   if (!is_all_of_target(objective, duty)) return std::nullopt;
   if (objective.of == Objective::Of::conversion) return line.place(*duty.target.conversion);
   if (objective.of != Objective::Of::yield) return std::nullopt;
-  Stream end = whole_feed(duty);
-  end.xi_mol_m3[0] += 1;
-  const double X = duty.chemistry.kinetics.conversion(end.xi_mol_m3);
-  const auto yield = value_of(objective, duty, end);
-  if (!yield || !(*yield > 0) || !(X > 0)) return std::nullopt;
-  return line.place(duty.target.demands[0].bound / *yield * X);
+  const auto yield = yield_at_end(objective, duty, line);
+  return yield ? std::optional(duty.target.demands[0].bound / *yield) : std::nullopt;
 }
 
 }  // namespace
@@ -36,7 +42,10 @@ OnOneLine::OnOneLine(Line line, Twins twins, const Problem& problem)
       bound_(line_),
       twins_(std::move(twins)),
       vessels_(on_lines(line_, twins_, problem.site.vessels.size())),
-      z_target_(place_of_target(problem.duty, line_)) {}
+      z_target_(place_of_target(problem.duty, line_)) {
+  const Objective objective = objective_of(problem.duty);
+  if (objective.of == Objective::Of::yield) yield_per_z_ = yield_at_end(objective, problem.duty, line_).value_or(0);
+}
 
 std::unique_ptr<OnOneLine> OnOneLine::find(const Problem& problem, const std::vector<int>& offered,
                                            const RankOptions& options) {
@@ -50,9 +59,8 @@ std::unique_ptr<OnOneLine> OnOneLine::find(const Problem& problem, const std::ve
   const bool falls = line->falls();
   std::unique_ptr<OnOneLine> made(new OnOneLine(*std::move(line), Twins(problem, offered, falls), problem));
   const bool by_ceiling = options.by == By::fit || options.by == By::ceiling;
-  const bool by_other = options.by == By::yield && !made->z_target_;
-  if ((by_ceiling || by_other) && !(made->z_target_ && *made->z_target_ > 0 && *made->z_target_ < 1 - 1e-7))
-    return nullptr;
+  if (options.by == By::yield && !(made->yield_per_z_ > 0)) return nullptr;
+  if (by_ceiling && !(made->z_target_ && *made->z_target_ > 0 && *made->z_target_ < 1 - 1e-7)) return nullptr;
   return made;
 }
 
@@ -76,6 +84,42 @@ std::optional<double> OnOneLine::ceiling_of(const Hookup& hookup) const {
     if (splits.best(hookup, vessels_, 0, q, 0).z >= *z_target_)
       return BestOnLine::ceiling(hookup, vessels_, *z_target_, q, feed_lines_pass(hookup, vessels_), splits);
   return std::nullopt;
+}
+
+double OnOneLine::figure_at(By by, double value) const {
+  if (by == By::fit || by == By::ceiling) return value;
+  return by == By::yield ? value * yield_per_z_ : line_.conversion(value);
+}
+
+double OnOneLine::place_of(By by, double figure) const {
+  if (by == By::fit || by == By::ceiling) return figure;
+  return by == By::yield ? figure / yield_per_z_ : line_.place(figure);
+}
+
+std::vector<KeptOut> OnOneLine::kept_out(const Rater& rater, const Entry& first) const {
+  constexpr std::size_t most_told = 3;
+  const RankOptions& options = rater.options();
+  std::vector<std::size_t> classes;
+  for (std::size_t c = 0; c < twins_.classes().size(); ++c)
+    if (line_.vessels()[c]) classes.push_back(c);
+  if (classes.empty()) return {};
+  const Line wide = line_.without_feed_lines();
+  const Bound bound(wide);
+  const OnLines vessels = on_lines(wide, twins_, vessels_.size());
+  const BestOnLine best(wide, bound, twins_, classes, vessels, rater.problem().duty.target.feed_m3_s,
+                        rater.needs_ceilings() ? z_target_ : std::nullopt, options.threads);
+  std::vector<KeptOut> out;
+  for (const Placed& p : best.find({.fewest = 1, .most = options.most, .places = most_told}).all) {
+    const double value = figure_at(options.by, p.value);
+    if (out.size() == most_told || value <= figure_of(first, options.by) * (1 + as_good_as)) break;
+    const KnownShares shares = shares_on(wide, vessels, p.at.hookup);
+    const HookupRating rating = rate_hookup(rater.problem(), p.at.hookup, {.windows = false, .known_shares = shares});
+    const bool broken = std::ranges::any_of(rating.vessels, [](const Rating& v) {
+      return std::ranges::any_of(v.limits, [](const Limit& l) { return l.state == Limit::State::broken; });
+    });
+    if (broken) out.push_back({rating.text, value, rating.whole.stands_in_the_way});
+  }
+  return out;
 }
 
 /// Finds and rates what may stand in the places asked.
@@ -103,7 +147,6 @@ class OnOneLine::Places {
     RankedSet set;
     add_today(set);
     if (gave_up_ || failed_) return std::nullopt;
-    add_kept_out(set);
     for (const Entry& e : entries_) set.unsolved = set.unsolved || e.unsolved;
     set.rated = cost_.rated;
     set.complete = "proved";
@@ -161,8 +204,7 @@ class OnOneLine::Places {
     if (e.unsolved) failed_ = true;
     if (by_ceiling_ ? e.breaks_limit : !e.reach) return;
     const double full = by_ceiling_ ? figure(e) : *e.reach;
-    const double same = by_ceiling_ || options_.by == By::yield ? on_line : on_.line_.conversion(on_line);
-    if (options_.by == By::yield) return;
+    const double same = on_.figure_at(options_.by, on_line);
     if (full > same * (1 + agrees_within)) failed_ = true;
     if (full < same * (1 - agrees_within) && e.free_shares > 0) split_within_limits_ = true;
   }
@@ -175,7 +217,7 @@ class OnOneLine::Places {
       const BestFound found = best_->find({fewest, std::min(most, options_.most), asked, false, floor});
       add(found.cost);
       std::vector<double> good = figures(found, accepted);
-      const double complete = to_figure(found.complete_above);
+      const double complete = on_.figure_at(options_.by, found.complete_above);
       const bool whole = found.all.size() < asked;
       if (good.size() < places && !whole) {
         if (asked > most_tried) gave_up_ = true;
@@ -197,16 +239,6 @@ class OnOneLine::Places {
     std::sort(good.begin(), good.end(), std::greater<>());
     return good;
   }
-  double to_figure(double value) const {
-    if (by_ceiling_) return value;
-    return options_.by == By::yield ? value * yield_per_z() : on_.line_.conversion(value);
-  }
-  double from_figure(double figure) const {
-    if (by_ceiling_) return figure;
-    return options_.by == By::yield ? figure / yield_per_z() : on_.line_.place(figure);
-  }
-  double yield_per_z() const { return rater_.problem().duty.target.demands[0].bound / *on_.z_target_; }
-
   // The group that holds the last place is ordered by fewer vessels and shares first: all of it counts.
   void fill_last_group(int fewest, int most, std::size_t places, const std::vector<double>& good, double complete,
                        const Accepted& accepted) {
@@ -223,8 +255,8 @@ class OnOneLine::Places {
     const std::size_t open = places - before;
     const double best = good[before];
     for (std::size_t asked = places;; asked *= 2) {
-      const BestFound found =
-          best_->find({fewest, std::min(most, options_.most), asked, true, from_figure(end * (1 - 1e-8))});
+      const BestFound found = best_->find(
+          {fewest, std::min(most, options_.most), asked, true, on_.place_of(options_.by, end * (1 - 1e-8))});
       add(found.cost);
       if (shapes_filled(found, asked, open, {end, best}, accepted)) return;
       if (asked > most_tried) gave_up_ = true;
@@ -298,7 +330,8 @@ class OnOneLine::Places {
     const double least = figure(today) * (1 - as_good_as);
     if (options_.by != By::fit)
       return find(
-                 1, options_.most, many, [](const Entry& e) { return !e.breaks_limit; }, from_figure(least)) < many;
+                 1, options_.most, many, [](const Entry& e) { return !e.breaks_limit; },
+                 on_.place_of(options_.by, least)) < many;
     for (const Verdict verdict : {Verdict::fits, Verdict::cannot_tell, Verdict::does_not_fit}) {
       const bool last = verdict == today.verdict;
       for (int n = 1; n <= (last ? today.vessel_count : options_.most); ++n)
@@ -308,8 +341,6 @@ class OnOneLine::Places {
     return true;
   }
 
-  void add_kept_out(RankedSet&) {}
-
   void add(const LineSearch::Cost& cost) {
     cost_.add(cost);
     failed_ = failed_ || cost.failed;
@@ -318,7 +349,7 @@ class OnOneLine::Places {
   // In what is ordered by: the gap that splits left, and the tolerance of maps.
   std::optional<double> within() const {
     const double dz = cost_.gap + 1e-8;
-    if (!by_ceiling_) return to_figure(dz);
+    if (!by_ceiling_) return on_.figure_at(options_.by, dz);
     double most = 0;
     for (const Entry& e : entries_) {
       if (!e.ceiling || !e.ceiling->feed_m3_s) continue;

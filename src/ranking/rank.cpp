@@ -79,7 +79,9 @@ Ranking rank(const Problem& problem, const std::vector<int>& offered, const Rank
   out.why_partly = set.why_partly;
   out.within = set.within;
   out.unsolved = set.unsolved;
-  tell_places(*rater, set, in_order(set.entries, options), out);
+  const auto order = in_order(set.entries, options);
+  tell_places(*rater, set, order, out);
+  if (line && !order.empty()) out.kept_out = line->kept_out(*rater, set.entries[order.front()]);
   tell_stair(set, options, out);
   return out;
 }

@@ -16,8 +16,7 @@ struct RankedSet {
   long long rated = 0;
   std::string complete = "partly", why_partly;
   std::optional<double> within;
-  std::vector<Entry> kept_out;  ///< would be better than the best, but for a limit; best first
-  bool unsolved = false;        ///< something could not be solved
+  bool unsolved = false;  ///< something could not be solved
 };
 
 }  // namespace vatwright

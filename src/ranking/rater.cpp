@@ -3,6 +3,8 @@
 #include <algorithm>
 #include <cmath>
 
+#include "split_costs.hpp"
+
 namespace vatwright {
 namespace {
 
@@ -71,6 +73,8 @@ Ranked Rater::tell(const Entry& e, bool is_listed) const {
   ranked.value = value_of(e, options_.by);
   if (ranked.value && needs_ceilings()) agree(ranked.rating.whole, *ranked.value);
   if (is_listed) ranked.same_as = twins_.same_as(e.hookup, ranked.rating.shares);
+  const Objective serves = options_.by == By::yield ? objective_ : Objective{};
+  ranked.splits = split_costs(problem_, e.hookup, serves, ranked.rating.shares);
   return ranked;
 }
 

@@ -58,7 +58,7 @@ void add_object(const std::string& name, const Json& object, const std::vector<s
 Cells cells_of(const Json& row, const Head& head, const std::vector<std::string>& made) {
   Cells cells;
   for (const auto& [key, value] : row.items()) {
-    if (key == "profile") continue;
+    if (key == "profile" || key == "splits") continue;
     if (key == "yields") {
       add_object(key, value, made, cells);
     } else if (key == "outlet") {

@@ -6,6 +6,20 @@
 namespace vatwright {
 namespace {
 
+Json splits_json(const Ranked& ranked) {
+  Json json = Json::array();
+  for (const SplitCost& split : ranked.splits) {
+    Json item;
+    item["branches"] = split.branches;
+    item["best"] = split.best;
+    item["by_volume"] = split.by_volume;
+    item["by_volume_costs"] = number(split.by_volume_costs);
+    item["off_by_0_05_costs"] = number(split.off_costs);
+    json.push_back(item);
+  }
+  return json;
+}
+
 Json place_json(const Ranked& ranked, const OverCases& over) {
   const Rating& whole = ranked.rating.whole;
   Json json;
@@ -18,6 +32,7 @@ Json place_json(const Ranked& ranked, const OverCases& over) {
   json["vessel_count"] = ranked.rating.vessel_count;
   json["ends"] = ends_json(whole.windows);
   json["same_as"] = ranked.same_as;
+  json["splits"] = splits_json(ranked);
   return json;
 }
 
@@ -61,6 +76,14 @@ void add_body(Json& json, const RankAnswer& answer) {
   }
   json["today"] = today_json(answer);
   json["hookups"] = places_json(answer);
+  json["kept_out"] = Json::array();
+  for (const KeptOut& out : ranking.kept_out) {
+    Json item;
+    item["hookup"] = out.hookup;
+    item["value"] = number(out.value);
+    item["stands_in_the_way"] = out.stands_in_the_way;
+    json["kept_out"].push_back(item);
+  }
 }
 
 template <class Answer>

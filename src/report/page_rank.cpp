@@ -1,5 +1,6 @@
 #include <algorithm>
 #include <cctype>
+#include <cmath>
 
 #include "page_parts.hpp"
 #include "vatwright/report/page.hpp"
@@ -75,6 +76,64 @@ void add_same_as(Page& page, const Ranking& ranking) {
   }
   if (items.empty()) return;
   page.heading("The same in all but name");
+  page.items(items);
+}
+
+/// Runs of places that differ by less than 0.1 % from the first of them.
+void add_near_ties(Page& page, const Ranking& ranking) {
+  constexpr double as_good_as = 1e-3;
+  std::vector<std::string> runs;
+  for (std::size_t i = 0; i < ranking.top.size();) {
+    const auto& best = ranking.top[i].value;
+    std::size_t end = i + 1;
+    while (best && end < ranking.top.size() && ranking.top[end].value &&
+           std::abs(*ranking.top[end].value - *best) <= as_good_as * std::abs(*best))
+      ++end;
+    if (end - i > 1) runs.push_back(std::to_string(i + 1) + (end - i == 2 ? " and " : " to ") + std::to_string(end));
+    i = end;
+  }
+  if (runs.empty()) return;
+  std::string text = "Practically equal (within 0.1 %): places ";
+  for (std::size_t i = 0; i < runs.size(); ++i) text += (i == 0 ? "" : "; ") + runs[i];
+  page.paragraph(text + ".");
+}
+
+std::string shares_words(const std::vector<double>& shares, const Look& look) {
+  std::string text;
+  for (const double share : shares) text += (text.empty() ? "" : " / ") + show(100 * share, Shown::number, look.units);
+  return text;
+}
+
+void add_splits(Page& page, const RankAnswer& answer, const Look& look) {
+  Table table;
+  table.columns = {{"", Align::right}, {"split of", Align::left, true}, {"best, %"},
+                   {"by volume"},      {"costs\nX %", Align::point},    {"5 off\nX %", Align::point}};
+  if (answer.by == By::yield) {
+    table.columns[4].head = "costs\nyield %";
+    table.columns[5].head = "5 off\nyield %";
+  }
+  for (std::size_t i = 0; i < answer.ranking.top.size(); ++i)
+    for (const SplitCost& split : answer.ranking.top[i].splits) {
+      std::string branches;
+      for (const auto& branch : split.branches) branches += (branches.empty() ? "" : " | ") + branch;
+      table.rows.push_back({std::to_string(i + 1), branches, shares_words(split.best, look),
+                            shares_words(split.by_volume, look), figure(split.by_volume_costs, Shown::percent, look),
+                            figure(split.off_costs, Shown::percent, look)});
+    }
+  if (table.rows.empty()) return;
+  page.heading("Splits: the best, in proportion to volume, and 5 points off the best");
+  page.table(table);
+}
+
+void add_kept_out(Page& page, const RankAnswer& answer, const Look& look) {
+  if (answer.ranking.kept_out.empty()) return;
+  std::vector<Page::Item> items;
+  for (const KeptOut& out : answer.ranking.kept_out) {
+    std::vector<std::string> lines = {figure_with_unit(out.value, shown_of(answer.by), look) + " if it were allowed"};
+    lines.insert(lines.end(), out.stands_in_the_way.begin(), out.stands_in_the_way.end());
+    items.push_back({out.hookup, lines});
+  }
+  page.heading("Would be first, but for a limit");
   page.items(items);
 }
 
@@ -170,7 +229,10 @@ std::string to_page(const RankAnswer& answer, const Look& look) {
     page.table(main_table(answer, look));
   if (!answer.cases.empty())
     page.paragraph("The order is that of the base; a verdict is the worst over the base and all cases.");
+  add_near_ties(page, answer.ranking);
   add_today(page, answer, look);
+  add_splits(page, answer, look);
+  add_kept_out(page, answer, look);
   add_same_as(page, answer.ranking);
   add_stair(page, answer, look);
   add_cases(page, answer, look);

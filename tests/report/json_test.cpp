@@ -189,7 +189,7 @@ TEST_CASE("examine tells the whole, then every vessel with its share and profile
 TEST_CASE("rank tells its space, its stair and its places", "[report][json]") {
   RankAnswer answer = sample_rank();
   const Json json = Json::parse(to_json(answer));
-  CHECK(keys_of(json) == after(head_keys, {"by", "space", "stair", "today", "hookups", "cases"}));
+  CHECK(keys_of(json) == after(head_keys, {"by", "space", "stair", "today", "hookups", "kept_out", "cases"}));
   CHECK(json["by"] == "fit");
   CHECK(json["space"] ==
         Json{{"vessels", 2}, {"most", 3}, {"hookups", 5}, {"rated", 4}, {"complete", "visited"}, {"within", nullptr}});
@@ -197,8 +197,15 @@ TEST_CASE("rank tells its space, its stair and its places", "[report][json]") {
   CHECK(json["today"].is_null());
   const Json& first = json["hookups"][0];
   CHECK(keys_of(first) == Keys{"hookup", "verdict", "worst_case", "conversion", "yields", "ceiling_m3_s",
-                               "vessel_count", "ends", "same_as"});
+                               "vessel_count", "ends", "same_as", "splits"});
   CHECK(first["same_as"] == Json{"P-2 then K-1"});
+  answer.ranking.top[0].splits = {{{"K-1", "P-2"}, {0.4, 0.6}, {0.5, 0.5}, 0.01, std::nullopt}};
+  answer.ranking.kept_out = {{"P-2", 0.003, {"feed line"}}};
+  const Json more = Json::parse(to_json(answer));
+  CHECK(more["hookups"][0]["splits"] == Json::parse(R"([{"branches": ["K-1", "P-2"], "best": [0.4, 0.6],
+      "by_volume": [0.5, 0.5], "by_volume_costs": 0.01, "off_by_0_05_costs": null}])"));
+  CHECK(more["kept_out"] ==
+        Json::parse(R"([{"hookup": "P-2", "value": 0.003, "stands_in_the_way": ["feed line"]}])"));
   answer.ranking.today = answer.ranking.top[1];
   answer.ranking.today_place = 2;
   CHECK(Json::parse(to_json(answer))["today"]["place"] == 2);

@@ -23,10 +23,26 @@ struct RankOptions {
   /// Told now and then how many are rated, of how many; called by one thread at a time.
   std::function<void(long long done, long long total)> progress;
 };
+/// One joint with free shares, at the duty's feed rate: what other shares would cost there of conversion (by yield: of
+/// yield), all other shares left at their best.
+struct SplitCost {
+  std::vector<std::string> branches;  ///< texts of its members
+  std::vector<double> best, by_volume;
+  std::optional<double> by_volume_costs;  ///< absent: no answer at those shares
+  std::optional<double> off_costs;  ///< the most that 5 points of the joint's flow more or less to one branch cost,
+                                    ///< taken evenly from the others
+};
 struct Ranked {
   HookupRating rating;
   std::optional<double> value;       ///< of `by`
   std::vector<std::string> same_as;  ///< what differs only in name, whole texts, sorted
+  std::vector<SplitCost> splits;     ///< in the order of the text
+};
+/// A hookup that would stand before the first but for a limit.
+struct KeptOut {
+  std::string hookup;
+  std::optional<double> value;  ///< of `by`, no limit asked
+  std::vector<std::string> stands_in_the_way;
 };
 struct Stair {
   int vessel_count = 0;
@@ -41,6 +57,7 @@ struct Ranking {
   std::string complete = "partly";   ///< "proved" | "visited" | "partly"
   std::string why_partly;            ///< in words, where partly
   std::optional<double> within;
+  std::vector<KeptOut> kept_out;  ///< up to three, the best first
   std::optional<Ranked> today;
   std::optional<long long> today_place;  ///< from 1, among merged hookups
   bool unsolved = false;
