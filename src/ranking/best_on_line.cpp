@@ -11,11 +11,8 @@
 namespace vatwright {
 namespace {
 
-constexpr double tie = 2e-9;  // relative: values that differ by less are kept side by side
-/// How much less than its best the search may see in a hookup, in z; what comes so near to the last place is kept and
-/// told apart later. Where rates rise, what a joint misses grows on the way.
-constexpr double missed = 4e-6, grows = 100;
-constexpr double ceiling_missed = 1e-4;  // the same of ceilings, relative, where z moves by `steep` or more with ln q
+constexpr double tie = 2e-9;   // relative: values that differ by less are kept side by side
+constexpr double grows = 100;  // where rates rise, what a joint misses grows on the way
 constexpr double steep = 0.05;
 constexpr double hair = 1e-12;
 constexpr double step_down = 0.97;  // of the feed rate, while too few reach the target

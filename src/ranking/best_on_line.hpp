@@ -36,6 +36,9 @@ class BestOnLine {
              const OnLines& vessels, double feed_m3_s, std::optional<double> place_of_target, int threads);
 
   BestFound find(const BestAsked& asked) const;
+  /// How much less than its best the search may see in a hookup: in z, and of ceilings, relative. What comes so near to
+  /// the last place is found too, to be told apart by more accurate means.
+  static constexpr double missed = 4e-6, ceiling_missed = 1e-4;
   /// The highest feed rate at which a hookup reaches the target, its shares chosen anew at each; 0: at none.
   ///   from_m3_s: it is reached there.
   static double ceiling(const Hookup& hookup, const OnLines& vessels, double place_of_target, double from_m3_s,

@@ -172,10 +172,10 @@ bool may_reach(Chooser& chooser, double feed_m3_s) {
   return CeilingSearch(chooser, feed_m3_s).may_meet(feed_m3_s);
 }
 
-Ceiling find_ceiling(Chooser& chooser, double from_m3_s, std::vector<double> start) {
+Ceiling find_ceiling(Chooser& chooser, double from_m3_s, std::vector<double> start, Near near) {
   if (chooser.never_fits(from_m3_s)) return {};
   CeilingSearch search(chooser, from_m3_s);
-  if (chooser.shares_are_known() && search.falls() && search.ends_there()) return {false, from_m3_s, false};
+  if (near == Near::known && search.ends_there()) return {false, from_m3_s, false};
   return search.falls() ? search.by_turns(std::move(start)) : search.whole_window();
 }
 

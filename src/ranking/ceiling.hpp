@@ -24,6 +24,8 @@ double flow_cap(const Problem& problem, const Hookup& hookup);
 /// false: the ceiling is surely below this rate, by the feed lines, or because conversion falls with the rate and no
 /// shares meet the target here. One choice of shares in place of a search.
 bool may_reach(Chooser& chooser, double feed_m3_s);
-Ceiling find_ceiling(Chooser& chooser, double from_m3_s, std::vector<double> start);
+///   near: known where the target is missed above from_m3_s, and that is where the ceiling is but for limits.
+enum class Near { guessed, known };
+Ceiling find_ceiling(Chooser& chooser, double from_m3_s, std::vector<double> start, Near near = Near::guessed);
 
 }  // namespace vatwright

@@ -50,7 +50,6 @@ bool slowness_convex(const RateTrack& track) {
 
 std::optional<Line> Line::find(const Problem& problem, const std::vector<int>& offered, std::string& why) {
   const Duty& duty = problem.duty;
-  const double X_target = duty.target.conversion.value_or(0);
   Line line;
   std::optional<double> length;
   std::optional<Thermal> thermal;
@@ -114,13 +113,10 @@ std::optional<Line> Line::find(const Problem& problem, const std::vector<int>& o
     return std::nullopt;
   }
   const double end = *length;
+  line.extent_ = end;
   line.X_end_ = duty.chemistry.kinetics.conversion({&end, 1});
   if (!(line.X_end_ > 0)) {
     why = "conversion does not rise along the reaction";
-    return std::nullopt;
-  }
-  if (X_target >= line.X_end_ * (1 - 1e-7)) {
-    why = "the target lies at the very end of the reaction";
     return std::nullopt;
   }
   line.falls_ = all([](const RateTrack& track) { return track.falls(); });

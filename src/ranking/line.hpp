@@ -40,6 +40,8 @@ class Line {
   [[nodiscard]] int bends(const OnLine& vessel, double z_in, double z_lo, double z_hi) const;
   /// Conversion of conversion_of at a place of the line, and the place of a conversion.
   [[nodiscard]] double conversion(double z) const { return X_end_ * z; }
+  /// mol per m3 of mixed feed.
+  [[nodiscard]] double extent(double z) const { return extent_ * z; }
   [[nodiscard]] double place(double conversion) const { return conversion / X_end_; }
 
   /// Where the rates are no larger from any place on, in any vessel: 1/s, for a vessel of its own volume as OnLine
@@ -53,7 +55,7 @@ class Line {
  private:
   std::vector<std::shared_ptr<const RateTrack>> tracks_;
   std::vector<std::optional<OnLine>> vessels_;
-  double X_end_ = 1;
+  double X_end_ = 1, extent_ = 1;
   bool falls_ = false, tanks_concave_ = false;
   bool from_end_ = false;  // tanks start at the end of the way
 };

@@ -6,6 +6,7 @@
 #include <set>
 
 #include "best_on_line.hpp"
+#include "space.hpp"
 #include "vatwright/numeric/pool.hpp"
 
 namespace vatwright {
@@ -25,14 +26,39 @@ std::optional<double> yield_at_end(const Objective& yield, const Duty& duty, con
   return *made / line.place(X);
 }
 
-/// z at which all that the target asks is met, where that is one conversion or one yield; absent: something else.
+constexpr double at_the_end = 1 - 1e-7;  // as far along the line as a target may lie to be a place on it
+
+/// z from which on all that the target asks is met: 1 where it is met nowhere. Absent: it is met in some other part of
+/// the line, or not a matter of z alone.
 std::optional<double> place_of_target(const Duty& duty, const Line& line) {
   const Objective objective = objective_of(duty);
-  if (!is_all_of_target(objective, duty)) return std::nullopt;
-  if (objective.of == Objective::Of::conversion) return line.place(*duty.target.conversion);
-  if (objective.of != Objective::Of::yield) return std::nullopt;
-  const auto yield = yield_at_end(objective, duty, line);
-  return yield ? std::optional(duty.target.demands[0].bound / *yield) : std::nullopt;
+  if (is_all_of_target(objective, duty)) {  // one figure that is linear in z
+    if (objective.of == Objective::Of::conversion) return std::min(1.0, line.place(*duty.target.conversion));
+    if (objective.of != Objective::Of::yield) return std::nullopt;
+    const auto yield = yield_at_end(objective, duty, line);
+    return yield ? std::optional(std::min(1.0, duty.target.demands[0].bound / *yield)) : std::nullopt;
+  }
+  if (duty.chemistry.feed.phase == Phase::gas) return std::nullopt;  // concentrations there depend on more
+  const auto met = [&](double z) {
+    Stream there = whole_feed(duty);
+    there.xi_mol_m3[0] = line.extent(z);
+    return std::ranges::all_of(check_target(duty, there), [](const TargetItem& item) { return item.met; });
+  };
+  constexpr int places = 400;
+  double lo = 0, hi = 1;
+  bool any = false;
+  for (int i = 1; i < places; ++i) {
+    const double z = i == places - 1 ? at_the_end : static_cast<double>(i) / places;
+    const bool here = met(z);
+    if (any && !here) return std::nullopt;
+    if (!here) lo = z;
+    if (here && !any) hi = z;
+    any = any || here;
+  }
+  if (!any) return 1.0;
+  if (met(0)) return std::nullopt;
+  for (int i = 0; i < 60; ++i) (met((lo + hi) / 2) ? hi : lo) = (lo + hi) / 2;
+  return hi;
 }
 
 }  // namespace
@@ -60,7 +86,7 @@ std::unique_ptr<OnOneLine> OnOneLine::find(const Problem& problem, const std::ve
   std::unique_ptr<OnOneLine> made(new OnOneLine(*std::move(line), Twins(problem, offered, falls), problem));
   const bool by_ceiling = options.by == By::fit || options.by == By::ceiling;
   if (options.by == By::yield && !(made->yield_per_z_ > 0)) return nullptr;
-  if (by_ceiling && !(made->z_target_ && *made->z_target_ > 0 && *made->z_target_ < 1 - 1e-7)) return nullptr;
+  if (by_ceiling && !(made->z_target_ && *made->z_target_ > 0)) return nullptr;
   return made;
 }
 
@@ -74,7 +100,7 @@ KnownShares OnOneLine::shares_of(const Hookup& hookup) const {
 }
 
 std::optional<double> OnOneLine::ceiling_of(const Hookup& hookup) const {
-  if (!z_target_ || !on_the_line(hookup)) return std::nullopt;
+  if (!z_target_ || *z_target_ >= at_the_end || !on_the_line(hookup)) return std::nullopt;
   Splits splits(line_, told_tolerance);
   double volume = 0;
   for (const int v : vessels_of(hookup)) volume += vessels_[static_cast<std::size_t>(v)]->volume_m3;
@@ -102,7 +128,7 @@ std::vector<KeptOut> OnOneLine::kept_out(const Rater& rater, const Entry& first)
   std::vector<std::size_t> classes;
   for (std::size_t c = 0; c < twins_.classes().size(); ++c)
     if (line_.vessels()[c]) classes.push_back(c);
-  if (classes.empty()) return {};
+  if (classes.empty() || (rater.needs_ceilings() && *z_target_ >= at_the_end)) return {};
   const Line wide = line_.without_feed_lines();
   const Bound bound(wide);
   const OnLines vessels = on_lines(wide, twins_, vessels_.size());
@@ -136,7 +162,13 @@ class OnOneLine::Places {
 
   std::optional<RankedSet> run() {
     const auto top = static_cast<std::size_t>(std::max(0, options_.top));
-    if (!classes_.empty()) {
+    const bool all_on_line = all_classes_.size() == on_.twins_.classes().size();
+    if (by_ceiling_ && *on_.z_target_ >= at_the_end) {
+      if (all_on_line)
+        rate_simplest(top);
+      else
+        short_of_places_ = true;
+    } else if (!classes_.empty()) {
       if (options_.by == By::fit)
         find_by_fit(top);
       else
@@ -177,6 +209,31 @@ class OnOneLine::Places {
     }
   }
 
+  // Nothing reaches the target at any rate: the order is that of limits, then of fewer vessels.
+  void rate_simplest(std::size_t top) {
+    for (int n = 1; n <= options_.most; ++n) {
+      std::vector<Placed> placed;
+      for (Hookup& h : hookups_of_size(n)) placed.push_back({{std::move(h), 0, n, 0}, 0});
+      std::vector<const Placed*> all;
+      for (const Placed& p : placed) all.push_back(&p);
+      rated(all);
+      std::size_t good = 0;
+      for (const Entry& e : entries_) good += e.breaks_limit ? 0 : 1;
+      if (good >= top) return;
+      if (n >= 2) break;  // larger ones are as many as cannot be told quickly
+    }
+    short_of_places_ = true;
+  }
+  std::vector<Hookup> hookups_of_size(int n) const {
+    std::vector<int> offered;
+    for (const auto& c : on_.twins_.classes()) offered.insert(offered.end(), c.begin(), c.end());
+    std::sort(offered.begin(), offered.end());
+    std::vector<Hookup> of_size;
+    for (Hookup& h : list_space(on_.twins_, offered, n, options_.most_rated).hookups)
+      if (static_cast<int>(vessels_of(h).size()) == n) of_size.push_back(std::move(h));
+    return of_size;
+  }
+
   // Rates those not rated yet; the entries of all of them, in their order.
   std::vector<std::size_t> rated(const std::vector<const Placed*>& placed) {
     std::vector<std::size_t> at, open;
@@ -193,7 +250,11 @@ class OnOneLine::Places {
     for_each_index(open.size(), options_.threads, [&](std::size_t k) {
       Entry& e = entries_[open[k]];
       e = rater_.rate(of_open[k]->at.hookup);
-      if (by_ceiling_ && !e.breaks_limit) rater_.find_ceiling(e);
+      const bool never = by_ceiling_ && *on_.z_target_ >= at_the_end;
+      if (never)
+        e.ceiling.emplace();
+      else if (by_ceiling_ && !e.breaks_limit)
+        rater_.find_ceiling(e);
     });
     for (const std::size_t i : open) check(entries_[i], values_[i]);
     return at;
@@ -202,10 +263,12 @@ class OnOneLine::Places {
   // The full models must say what the line says, less where a limit is in the way.
   void check(const Entry& e, double on_line) {
     if (e.unsolved) failed_ = true;
-    if (by_ceiling_ ? e.breaks_limit : !e.reach) return;
+    if (by_ceiling_ ? e.breaks_limit || *on_.z_target_ >= at_the_end : !e.reach) return;
     const double full = by_ceiling_ ? figure(e) : *e.reach;
     const double same = on_.figure_at(options_.by, on_line);
-    if (full > same * (1 + agrees_within)) failed_ = true;
+    const double missed =
+        by_ceiling_ ? BestOnLine::ceiling_missed * same : on_.figure_at(options_.by, BestOnLine::missed);
+    if (full > same * (1 + agrees_within) + missed) failed_ = true;
     if (full < same * (1 - agrees_within) && e.free_shares > 0) split_within_limits_ = true;
   }
 
@@ -283,9 +346,12 @@ class OnOneLine::Places {
   }
 
   void find_by_fit(std::size_t top) {
+    // What can not be calculated stands before what does not fit, and is not on the line.
+    const bool all_on_line = all_classes_.size() == on_.twins_.classes().size();
     std::size_t open = top;
     for (const Verdict verdict : {Verdict::fits, Verdict::cannot_tell, Verdict::does_not_fit})
-      for (int n = 1; n <= (options_.exact ? 1 : options_.most) && open > 0; ++n)
+      for (int n = 1; n <= (options_.exact ? 1 : options_.most) && open > 0 && (all_on_line || verdict == Verdict::fits);
+           ++n)
         open -= find_of(verdict, n, options_.exact ? options_.most : n, open);
     short_of_places_ = open > 0;
   }
@@ -350,6 +416,7 @@ class OnOneLine::Places {
   std::optional<double> within() const {
     const double dz = cost_.gap + 1e-8;
     if (!by_ceiling_) return on_.figure_at(options_.by, dz);
+    if (*on_.z_target_ >= at_the_end) return 0;
     double most = 0;
     for (const Entry& e : entries_) {
       if (!e.ceiling || !e.ceiling->feed_m3_s) continue;

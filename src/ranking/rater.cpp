@@ -56,7 +56,8 @@ void Rater::find_ceiling(Entry& e) const {
   std::optional<double> near_m3_s;
   if (known_.ceiling_of && all_free(e.hookup)) near_m3_s = known_.ceiling_of(e.hookup);
   Chooser chooser(problem_, e.hookup, objective_, shares_of(e.hookup));
-  e.ceiling = vatwright::find_ceiling(chooser, near_m3_s.value_or(problem_.duty.target.feed_m3_s), e.shares);
+  e.ceiling = vatwright::find_ceiling(chooser, near_m3_s.value_or(problem_.duty.target.feed_m3_s), e.shares,
+                                      near_m3_s ? Near::known : Near::guessed);
   e.unsolved = e.unsolved || e.ceiling->unsolved;
 }
 

@@ -86,7 +86,7 @@ class OneReactionTube final : public Solver {
     return slower < 0.99 * slow;
   }
 
-  /// |integral of d xi/R - V/v|, as the extent that it is at the outlet, over the extent made. By Gauss and Kronrod's
+  /// |integral of d xi/R - V/v|, as the extent that it is at the outlet, over the extents that come in and are made. By Gauss and Kronrod's
   /// rule in -ln(s), rates reckoned anew.
   double residual(const TubeTrack::Reading& out, double t) {
     if (!track_ || out.place.d <= 0) return 0;
@@ -115,7 +115,8 @@ class OneReactionTube final : public Solver {
       at = next;
     }
     if (out.through || u_sound < u_out) return std::max(0.0, total - t) / t;  // the end was reached in less than V/v
-    return std::abs(total - t) * way.rate(out.place.d, out.place.s) / out.place.d;
+    const double terms = out.place.d + std::abs(setup_.arrives.xi_mol_m3[0]);  // what came in, and what was made
+    return std::abs(total - t) * way.rate(out.place.d, out.place.s) / terms;
   }
 
   const Setup& setup_;

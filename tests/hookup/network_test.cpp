@@ -150,3 +150,18 @@ TEST_CASE("a vessel without an answer leaves those beside it rated", "[network]"
   REQUIRE_FALSE(rating.whole.stands_in_the_way.empty());
   CHECK(rating.whole.stands_in_the_way[0].substr(0, 3) == "D: ");
 }
+
+TEST_CASE("a tube fed beside equilibrium still answers", "[network]") {
+  // A <-> B of first order: X = X_e (1 - exp(-k (1 + 1/K) V/v)), X_e = K/(1 + K), of both tubes as one (Levenspiel,
+  // Chemical Reaction Engineering, 3rd ed., ch. 5, from memory)
+  Reaction r = reaction({{0, -1}, {1, 1}}, 1, {{0, 1}});
+  r.equilibrium = Equilibrium{4, {}, {}};
+  for (const double first : {8.0, 12.0, 16.0, 20.0, 24.0}) {
+    const Problem problem = problem_of({tube("P-1", first), tube("P-2", 3)}, {1, 0}, {r}, 1, 0.5);
+    const HookupRating rating = rate_hookup(problem, parsed("P-1 then P-2", problem.site), {.windows = false});
+    INFO(first);
+    CHECK_FALSE(rating.whole.unsolved);
+    REQUIRE(rating.whole.conversion);
+    CHECK(*rating.whole.conversion == Approx(0.8 * (1 - std::exp(-1.25 * (first + 3)))).epsilon(1e-10));
+  }
+}

@@ -28,8 +28,6 @@ class Chooser {
   /// The objective at given shares.
   [[nodiscard]] std::optional<double> value_at(double feed_m3_s, const std::vector<double>& shares);
 
-  /// The best shares need no trying, see KnownShares.
-  [[nodiscard]] bool shares_are_known() const { return known_shares_ || space_.dimensions() == 0; }
   [[nodiscard]] const Problem& problem() const { return problem_; }
   [[nodiscard]] Network& network() { return network_; }
   [[nodiscard]] const ShareSpace& space() const { return space_; }
