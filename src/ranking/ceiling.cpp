@@ -173,10 +173,12 @@ bool may_reach(Chooser& chooser, double feed_m3_s) {
 }
 
 Ceiling find_ceiling(Chooser& chooser, double from_m3_s, std::vector<double> start, Near near) {
-  if (chooser.never_fits(from_m3_s)) return {};
+  if (chooser.never_fits(from_m3_s)) return {false, std::nullopt, false, true};
   CeilingSearch search(chooser, from_m3_s);
-  if (near == Near::known && search.ends_there()) return {false, from_m3_s, false};
-  return search.falls() ? search.by_turns(std::move(start)) : search.whole_window();
+  if (near == Near::known && search.ends_there()) return {false, from_m3_s, false, true};
+  Ceiling found = search.falls() ? search.by_turns(std::move(start)) : search.whole_window();
+  found.certain = chooser.space().dimensions() == 0;
+  return found;
 }
 
 }  // namespace vatwright

@@ -11,6 +11,7 @@ struct Ceiling {
   bool open = false;                ///< the window runs to the end of the search: higher than any figure
   std::optional<double> feed_m3_s;  ///< absent: no window, or open
   bool unsolved = false;
+  bool certain = false;  ///< no other shares do better: there are none to choose, or they are known
 };
 
 /// The ceiling of a hookup, as find_windows over the whole search would give it (1e-6 relative).

@@ -13,6 +13,7 @@ namespace vatwright {
 namespace {
 
 constexpr double as_good_as = 1e-3;       // of values in one group of the order
+constexpr double of_maps = 1e-8;          // what vessel maps and told splits may miss, in z
 constexpr double agrees_within = 1e-7;    // full models and line, relative
 constexpr std::size_t most_tried = 4096;  // hookups rated in full before all must be visited
 
@@ -148,6 +149,20 @@ std::vector<KeptOut> OnOneLine::kept_out(const Rater& rater, const Entry& first)
   return out;
 }
 
+double OnOneLine::within(const Rater& rater, const std::vector<Entry>& entries, double gap) const {
+  const double dz = gap + of_maps;
+  if (!rater.needs_ceilings()) return figure_at(rater.options().by, dz);
+  if (*z_target_ >= at_the_end) return 0;
+  double most = 0;
+  for (const Entry& e : entries) {
+    if (!e.ceiling || !e.ceiling->feed_m3_s || !on_the_line(e.hookup)) continue;
+    Splits splits(line_, told_tolerance);
+    const double slope = splits.best(e.hookup, vessels_, 0, *e.ceiling->feed_m3_s, 0).dq;
+    if (slope < 0) most = std::max(most, dz / -slope);
+  }
+  return most;
+}
+
 /// Finds and rates what may stand in the places asked.
 class OnOneLine::Places {
  public:
@@ -182,7 +197,7 @@ class OnOneLine::Places {
     for (const Entry& e : entries_) set.unsolved = set.unsolved || e.unsolved;
     set.rated = cost_.rated;
     set.complete = "proved";
-    set.within = within();
+    set.within = on_.within(rater_, entries_, cost_.gap);
     if (split_within_limits_) {
       set.complete = "partly";
       set.why_partly = "where a limit moves the best split, that split is the best found";
@@ -350,8 +365,8 @@ class OnOneLine::Places {
     const bool all_on_line = all_classes_.size() == on_.twins_.classes().size();
     std::size_t open = top;
     for (const Verdict verdict : {Verdict::fits, Verdict::cannot_tell, Verdict::does_not_fit})
-      for (int n = 1; n <= (options_.exact ? 1 : options_.most) && open > 0 && (all_on_line || verdict == Verdict::fits);
-           ++n)
+      for (int n = 1;
+           n <= (options_.exact ? 1 : options_.most) && open > 0 && (all_on_line || verdict == Verdict::fits); ++n)
         open -= find_of(verdict, n, options_.exact ? options_.most : n, open);
     short_of_places_ = open > 0;
   }
@@ -410,21 +425,6 @@ class OnOneLine::Places {
   void add(const LineSearch::Cost& cost) {
     cost_.add(cost);
     failed_ = failed_ || cost.failed;
-  }
-
-  // In what is ordered by: the gap that splits left, and the tolerance of maps.
-  std::optional<double> within() const {
-    const double dz = cost_.gap + 1e-8;
-    if (!by_ceiling_) return on_.figure_at(options_.by, dz);
-    if (*on_.z_target_ >= at_the_end) return 0;
-    double most = 0;
-    for (const Entry& e : entries_) {
-      if (!e.ceiling || !e.ceiling->feed_m3_s) continue;
-      Splits splits(on_.line_, told_tolerance);
-      const double slope = splits.best(e.hookup, on_.vessels_, 0, *e.ceiling->feed_m3_s, 0).dq;
-      if (slope < 0) most = std::max(most, dz / -slope);
-    }
-    return most;
   }
 
   const OnOneLine& on_;

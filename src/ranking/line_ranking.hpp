@@ -23,6 +23,9 @@ class OnOneLine {
   [[nodiscard]] std::optional<double> ceiling_of(const Hookup& hookup) const;
   /// The best three with wide feed lines and of all vessels, where they beat the first that is shown and break a limit.
   [[nodiscard]] std::vector<KeptOut> kept_out(const Rater& rater, const Entry& first) const;
+  /// How far the values of these may be from what the models say, in what is ordered by: what maps and splits miss.
+  ///   gap: of splits that could not be brought within their tolerance, in z.
+  [[nodiscard]] double within(const Rater& rater, const std::vector<Entry>& entries, double gap = 0) const;
   /// Absent: too few hookups keep every limit for the places asked, or a vessel gave no number; all must be visited.
   [[nodiscard]] std::optional<RankedSet> rank(const Rater& rater) const;
 

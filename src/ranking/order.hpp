@@ -14,6 +14,7 @@ struct Entry {
   Verdict verdict = Verdict::cannot_tell;
   bool breaks_limit = false;  ///< of any vessel or the whole; the target aside
   bool unsolved = false;
+  bool split_certain = false;  ///< no other shares do better: there are none to choose, or they are known
   int vessel_count = 0, free_shares = 0;
   std::optional<double> reach;     ///< conversion, or yield under By::yield
   std::optional<Ceiling> ceiling;  ///< absent: not found out yet

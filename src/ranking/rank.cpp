@@ -11,6 +11,8 @@
 namespace vatwright {
 namespace {
 
+bool is_certain(const Entry& e) { return e.split_certain && (!e.ceiling || e.ceiling->certain); }
+
 RankedSet ranked_set(const Problem& problem, const std::vector<int>& offered, const RankOptions& options,
                      std::optional<Twins>& twins, std::optional<Rater>& rater, std::unique_ptr<OnOneLine>& line) {
   line = OnOneLine::find(problem, offered, options);
@@ -26,7 +28,13 @@ RankedSet ranked_set(const Problem& problem, const std::vector<int>& offered, co
   } else {
     rater.emplace(problem, options, *twins);
   }
-  return visit_all(*rater, offered);
+  RankedSet set = visit_all(*rater, offered);
+  // where every hookup was rated and no split could be better, the order is proved as well
+  if (line && !options.visit && set.complete == "visited" && std::ranges::all_of(set.entries, is_certain)) {
+    set.complete = "proved";
+    set.within = line->within(*rater, set.entries);
+  }
+  return set;
 }
 
 /// The places asked, today's, and the kept out, each with all that is told of it.
