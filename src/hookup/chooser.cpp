@@ -13,10 +13,11 @@ bool all_met(const std::vector<TargetItem>& items) {
   return std::all_of(items.begin(), items.end(), [](const TargetItem& i) { return i.met; });
 }
 
-bool breaks_feed_line(const JudgedHookup& judged) {
+bool breaks_flow_limit(const JudgedHookup& judged) {
   return std::any_of(judged.vessels.begin(), judged.vessels.end(), [](const Judged& j) {
-    return std::any_of(j.limits.begin(), j.limits.end(),
-                       [](const Limit& l) { return l.name == "feed line" && l.state == Limit::State::broken; });
+    return std::any_of(j.limits.begin(), j.limits.end(), [](const Limit& l) {
+      return (l.name == "feed line" || l.name == "pressure drop") && l.state == Limit::State::broken;
+    });
   });
 }
 
@@ -62,8 +63,8 @@ JudgedHookup Chooser::choose(double feed_m3_s, Purpose purpose, Detail detail) {
   JudgedHookup best =
       judge_hookup(problem_, network_, feed_m3_s, free ? free->shares : space_.shares(space_.in_proportion()), detail);
   if (free && !breaks_limit(best)) return best;
-  if (breaks_limit_of_files(best)) return best;  // no share helps
-  if (known_shares_ && breaks_feed_line(best)) return best;  // then all shares do
+  if (breaks_limit_of_files(best)) return best;               // no share helps
+  if (known_shares_ && breaks_flow_limit(best)) return best;  // then all shares do
   const bool missed_anyhow = free && is_all_of_target(objective_, problem_.duty) && !all_met(best.targets);
   if (purpose == Purpose::window && missed_anyhow) return best;
 

@@ -124,7 +124,11 @@ std::optional<Line> Line::find(const Problem& problem, const std::vector<int>& o
   return line;
 }
 
-Line Line::without_feed_lines() const {
+void Line::narrow(std::size_t place, double cap_m3_s) {
+  if (vessels_[place]) vessels_[place]->cap_m3_s = std::min(vessels_[place]->cap_m3_s, cap_m3_s);
+}
+
+Line Line::without_caps() const {
   Line wide = *this;
   for (auto& vessel : wide.vessels_)
     if (vessel) vessel->cap_m3_s = std::numeric_limits<double>::infinity();

@@ -18,10 +18,12 @@ class Line {
     const RateTrack* track = nullptr;
     double volume_m3 = 0;  ///< times what its rate is larger than the track's
     bool is_tank = false;
-    double cap_m3_s = 0;  ///< its feed line; infinite where none is stated
+    double cap_m3_s = 0;  ///< the most that may pass it: its feed line, its pressure drop; infinite: nothing limits it
   };
-  /// The same with wide feed lines.
-  [[nodiscard]] Line without_feed_lines() const;
+  /// Lets no more than this pass the vessel at a place of vessels().
+  void narrow(std::size_t place, double cap_m3_s);
+  /// The same with nothing in the way of any flow.
+  [[nodiscard]] Line without_caps() const;
   /// What comes out, and how that moves with what comes in.
   struct Out {
     double z;

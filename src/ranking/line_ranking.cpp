@@ -8,6 +8,8 @@
 #include "best_on_line.hpp"
 #include "space.hpp"
 #include "vatwright/numeric/pool.hpp"
+#include "vatwright/numeric/root.hpp"
+#include "vatwright/vessel/pressure_drop.hpp"
 
 namespace vatwright {
 namespace {
@@ -25,6 +27,22 @@ std::optional<double> yield_at_end(const Objective& yield, const Duty& duty, con
   const auto made = value_of(yield, duty, one);
   if (!made || !(*made > 0) || !(X > 0)) return std::nullopt;
   return *made / line.place(X);
+}
+
+/// The flow at which a liquid loses just the pressure that a tube may cost; absent: it may cost any, or none is known.
+std::optional<double> flow_at_pressure_drop(const Problem& problem, int vessel) {
+  const Vessel& v = problem.site.vessels[static_cast<std::size_t>(vessel)];
+  const Feed& feed = problem.duty.chemistry.feed;
+  if (!v.pressure_drop_Pa || feed.phase != Phase::liquid || !feed.viscosity_Pa_s || !feed.density_kg_m3)
+    return std::nullopt;
+  const auto over = [&](double ln_q) {
+    const Flow flow{std::exp(ln_q) * *feed.density_kg_m3, *feed.density_kg_m3, *feed.viscosity_Pa_s};
+    return pressure_gradient(v.kind, flow) * length_of(v.kind) - *v.pressure_drop_Pa;
+  };
+  const double lo = std::log(1e-12), hi = std::log(1e6);
+  if (!(over(lo) < 0 && over(hi) > 0)) return std::nullopt;
+  const auto root = find_root(over, lo, hi, {.rel_tol = 0, .abs_tol = 1e-12});
+  return answer(root) ? std::optional(std::exp(*answer(root))) : std::nullopt;
 }
 
 constexpr double at_the_end = 1 - 1e-7;  // as far along the line as a target may lie to be a place on it
@@ -83,6 +101,8 @@ std::unique_ptr<OnOneLine> OnOneLine::find(const Problem& problem, const std::ve
   std::string why;
   auto line = Line::find(problem, firsts, why);
   if (!line) return nullptr;
+  for (std::size_t c = 0; c < firsts.size(); ++c)
+    if (const auto cap = flow_at_pressure_drop(problem, firsts[c])) line->narrow(c, *cap);
   const bool falls = line->falls();
   std::unique_ptr<OnOneLine> made(new OnOneLine(*std::move(line), Twins(problem, offered, falls), problem));
   const bool by_ceiling = options.by == By::fit || options.by == By::ceiling;
@@ -130,7 +150,7 @@ std::vector<KeptOut> OnOneLine::kept_out(const Rater& rater, const Entry& first)
   for (std::size_t c = 0; c < twins_.classes().size(); ++c)
     if (line_.vessels()[c]) classes.push_back(c);
   if (classes.empty() || (rater.needs_ceilings() && *z_target_ >= at_the_end)) return {};
-  const Line wide = line_.without_feed_lines();
+  const Line wide = line_.without_caps();
   const Bound bound(wide);
   const OnLines vessels = on_lines(wide, twins_, vessels_.size());
   const BestOnLine best(wide, bound, twins_, classes, vessels, rater.problem().duty.target.feed_m3_s,

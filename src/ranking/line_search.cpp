@@ -98,6 +98,7 @@ class LineSearch::Walk {
         splits_(search.line_, tolerance),
         wanted_(wanted),
         pad_(tolerance * most),
+        pass_m3_s_(std::max(feed_m3_s, search.least_pass_m3_s_)),
         left_(sized.size()) {
     for (std::size_t i = 0; i < sized.size(); ++i) left_[i] = sized[i].count;
   }
@@ -176,8 +177,11 @@ class LineSearch::Walk {
     }
   }
 
-  /// The vessels taken last become one member of the train.
+  /// The vessels taken last become one member of the train, where together they pass the feed.
   void join() {
+    double passes = 0;
+    for (const std::size_t i : taken_) passes += sized_[i].on_line->cap_m3_s;
+    if (passes < pass_m3_s_ * (1 - 1e-9)) return;
     const std::vector<std::size_t> classes = taken_;
     const double floor = wanted_.floor(std::max(fewest_, used_), most_);
     const double t = floor_time(floor) - largest_left(most_ - used_) / q_;
@@ -260,6 +264,7 @@ class LineSearch::Walk {
   Splits splits_;
   Wanted& wanted_;
   double pad_;  // what the joints before may have missed
+  double pass_m3_s_;
   Cost cost_;
   std::vector<int> left_;
   std::vector<std::size_t> taken_;  // by the member being chosen
@@ -268,8 +273,14 @@ class LineSearch::Walk {
   double z_ = 0, floor_ = -1, floor_time_ = 0;
 };
 
-LineSearch::LineSearch(const Line& line, const Bound& bound, const Twins& twins, std::vector<std::size_t> classes)
-    : line_(line), bound_(bound), twins_(twins), classes_(std::move(classes)), templates_(new Templates) {}
+LineSearch::LineSearch(const Line& line, const Bound& bound, const Twins& twins, std::vector<std::size_t> classes,
+                       double least_pass_m3_s)
+    : line_(line),
+      bound_(bound),
+      twins_(twins),
+      classes_(std::move(classes)),
+      least_pass_m3_s_(least_pass_m3_s),
+      templates_(new Templates) {}
 LineSearch::~LineSearch() = default;
 
 LineSearch::Cost LineSearch::run(double feed_m3_s, int fewest, int most, double tolerance, int threads,

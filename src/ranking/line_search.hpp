@@ -33,8 +33,9 @@ class Wanted {
 /// hookups are passed over. Those that differ only in name are met once.
 class LineSearch {
  public:
-  /// classes: places in twins.classes() to take vessels from.
-  LineSearch(const Line& line, const Bound& bound, const Twins& twins, std::vector<std::size_t> classes);
+  /// classes: places in twins.classes() to take vessels from. least_pass_m3_s: no member of a train may pass less.
+  LineSearch(const Line& line, const Bound& bound, const Twins& twins, std::vector<std::size_t> classes,
+             double least_pass_m3_s);
   ~LineSearch();
 
   struct Cost {
@@ -60,6 +61,7 @@ class LineSearch {
   const Bound& bound_;
   const Twins& twins_;
   std::vector<std::size_t> classes_;
+  double least_pass_m3_s_;
   std::unique_ptr<Templates> templates_;
 };
 

@@ -25,9 +25,9 @@ enum class Serve { target, conversion };
 /// What shares are chosen for: the answer at a feed rate, or whether that rate lies inside a window.
 enum class Purpose { reach, window };
 
-/// The best shares of a hookup for the objective at a feed rate, no limit but the feed lines asked, where somebody
-/// knows them better than by trying. Where no shares keep all feed lines: for the reach the best without them, for a
-/// window those that break them least. Absent: not known at this rate.
+/// The best shares of a hookup for the objective at a feed rate, no limit but those on flow asked (feed lines, pressure
+/// drop), where somebody knows them better than by trying. Where no shares keep those: for the reach the best without
+/// them, for a window those that break them least. Absent: not known at this rate.
 using KnownShares = std::function<std::optional<std::vector<double>>(double feed_m3_s, Purpose purpose)>;
 
 struct HookupOptions {
