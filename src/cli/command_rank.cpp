@@ -2,6 +2,7 @@
 
 #include "finish.hpp"
 #include "progress.hpp"
+#include "stop.hpp"
 #include "vatwright/hookup/objective.hpp"
 #include "vatwright/numeric/pool.hpp"
 
@@ -11,6 +12,8 @@ namespace {
 RankedHookups rank_problem(const Problem& problem, RankOptions options, const MadeBy& made_by, const Context& context,
                            const std::string& what) {
   Progress progress(context, what, 0);
+  const StopOnInterrupt stop;
+  options.stopped = [] { return StopOnInterrupt::asked(); };
   options.progress = [&progress](long long done, long long total) { progress.at(done, total); };
   RankedHookups answer;
   answer.head = head_of(problem, made_by, context.settings.stamp);

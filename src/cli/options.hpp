@@ -4,8 +4,8 @@
 #include <string>
 #include <vector>
 
-#include "vatwright/ranking/rank.hpp"
 #include "vatwright/quantity/show.hpp"
+#include "vatwright/ranking/rank.hpp"
 #include "vatwright/vessel/vessel.hpp"
 
 namespace vatwright {

@@ -24,7 +24,7 @@ class Progress {
   std::string what_;
   long long done_ = 0, total_;
   std::size_t shown_ = 0;  ///< length of the line that stands there
-  std::chrono::steady_clock::time_point next_;
+  std::chrono::steady_clock::time_point begun_, next_;
   std::mutex mutex_;
 };
 

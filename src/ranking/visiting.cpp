@@ -68,11 +68,30 @@ class Visiting {
 
   void rate_all() {
     Progress progress(options_, entries_.size());
+    std::vector<char> rated(entries_.size(), 0);
     for_each_index(entries_.size(), options_.threads, [&](std::size_t i) {
+      if (stopped()) return;
       entries_[i] = rater_.rate(std::move(entries_[i].hookup));
+      rated[i] = 1;
       progress.one_more();
     });
+    if (std::ranges::count(rated, 1) == std::ssize(rated)) return;
+    if (today_ && !rated[*today_]) entries_[*today_] = rater_.rate(*options_.today);
+    std::vector<Entry> kept;
+    std::size_t listed = 0;
+    for (std::size_t i = 0; i < entries_.size(); ++i) {
+      const bool is_today = i == today_;
+      if (!rated[i] && !is_today) continue;
+      if (is_today) today_ = kept.size();
+      if (i < listed_) ++listed;
+      kept.push_back(std::move(entries_[i]));
+    }
+    stopped_at_ = static_cast<long long>(listed);
+    stopped_of_ = static_cast<long long>(listed_);
+    listed_ = listed;
+    entries_ = std::move(kept);
   }
+  [[nodiscard]] bool stopped() const { return options_.stopped && options_.stopped(); }
 
   // Ceilings are found for those whose rank before the figure lets them be shown at all: down to `top`, the
   // best of every number of vessels, and today's. Of one rank only what can come among its first places is searched:
@@ -109,6 +128,10 @@ class Visiting {
     for (std::size_t begin = 0; begin < members.size(); begin += lot) {
       const std::size_t n = std::min(lot, members.size() - begin);
       const double threshold = found.size() < places ? 0 : found[places - 1] * (1 - 3e-3);
+      if (stopped()) {
+        ceilings_left_ = true;
+        return;
+      }
       std::vector<char> may(n, 1);
       if (threshold > 0)
         for_each_index(n, options_.threads,
@@ -157,6 +180,13 @@ class Visiting {
       out.why_partly +=
           "hookups of more than " + std::to_string(space.sizes) + " vessels are too many to rate them all";
     }
+    if (stopped_at_ || ceilings_left_) {
+      out.complete = "partly";
+      if (!out.why_partly.empty()) out.why_partly += "; ";
+      out.why_partly += stopped_at_ ? "stopped after " + std::to_string(*stopped_at_) + " of " +
+                                          std::to_string(stopped_of_) + " that differ in more than name"
+                                    : "stopped while ceilings were looked for";
+    }
     if (today_) {
       out.today = entries_[*today_];
       out.today_listed = *today_ < listed_;
@@ -174,6 +204,9 @@ class Visiting {
   std::vector<Entry> entries_;
   std::size_t listed_ = 0;  // of the space; behind them today's, where it is none of them
   std::optional<std::size_t> today_;
+  std::optional<long long> stopped_at_;  // hookups of the list
+  long long stopped_of_ = 0;
+  bool ceilings_left_ = false;
 };
 
 }  // namespace

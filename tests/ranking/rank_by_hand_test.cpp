@@ -119,3 +119,17 @@ TEST_CASE("ranking three first-order vessels by hand", "[rank]") {
     }
   }
 }
+
+TEST_CASE("a ranking that is stopped tells what it has, as partly", "[rank]") {
+  const Problem problem = power_law({tank("K-1", 1), tank("K-2", 2), tube("P-1", 0.5)}, 1, 0.4);
+  RankOptions options;
+  options.visit = true;
+  options.threads = 1;
+  int asked = 0;
+  options.stopped = [&asked] { return ++asked > 5; };
+  const Ranking ranking = rank(problem, {0, 1, 2}, options);
+  CHECK(ranking.complete == "partly");
+  CHECK(ranking.rated == 5);
+  CHECK(ranking.why_partly.find("stopped after 5 of") == 0);
+  CHECK(ranking.top.size() == 5);
+}

@@ -22,6 +22,8 @@ struct RankOptions {
   long long most_rated = 250'000;
   /// Told now and then how many are rated, of how many; called by one thread at a time.
   std::function<void(long long done, long long total)> progress;
+  /// Asked between hookups, by any thread: true ends the visiting with what is rated by then, told as "partly".
+  std::function<bool()> stopped;
 };
 /// One joint with free shares, at the duty's feed rate: what other shares would cost there of conversion (by yield: of
 /// yield), all other shares left at their best.
