@@ -169,6 +169,18 @@ double BestOnLine::ceiling(const Hookup& hookup, const OnLines& vessels, double 
   return answer(root) ? *answer(root) : lo;
 }
 
+/// Where rates fall trains of the largest vessels give a threshold soonest; elsewhere, or where feed lines forbid them,
+/// besides too.
+void BestOnLine::first_threshold(const BestAsked& asked, double feed_m3_s, List& list, LineSearch::Cost& cost) const {
+  for (const auto members : {LineSearch::Members::vessels, LineSearch::Members::any}) {
+    if (members == LineSearch::Members::vessels && !line_.falls()) continue;
+    list.keep_nothing();
+    cost.add(search_.run_among(static_cast<std::size_t>(asked.most) + 2, members, feed_m3_s, asked.fewest, asked.most,
+                               tolerance_, list));
+    if (list.count() >= asked.places) return;
+  }
+}
+
 /// Lowers the feed rate among the largest vessels until enough of their hookups reach the target there.
 double BestOnLine::first_ceilings(const BestAsked& asked, List& list, LineSearch::Cost& cost) const {
   double volume = 0;
@@ -180,8 +192,7 @@ double BestOnLine::first_ceilings(const BestAsked& asked, List& list, LineSearch
   const double least = std::max(asked.floor, 1e-6 * q);
   for (int i = 0; q > least && i < 400; ++i) {
     list.feed_m3_s = q;
-    cost.add(
-        search_.run_among(static_cast<std::size_t>(asked.most) + 2, q, asked.fewest, asked.most, tolerance_, list));
+    first_threshold(asked, q, list, cost);
     if (list.count() >= asked.places) break;
     list.keep_nothing();
     q *= i < 20 ? step_down : 0.8;
@@ -193,8 +204,7 @@ BestFound BestOnLine::find(const BestAsked& asked) const {
   List list(*this, asked);
   LineSearch::Cost cost;
   if (!z_target_) {
-    cost.add(search_.run_among(static_cast<std::size_t>(asked.most) + 2, feed_m3_s_, asked.fewest, asked.most,
-                               tolerance_, list));
+    first_threshold(asked, feed_m3_s_, list, cost);
     list.keep_thresholds();
     cost.add(search_.run(feed_m3_s_, asked.fewest, asked.most, tolerance_, threads_, list));
   } else {

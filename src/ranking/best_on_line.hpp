@@ -46,6 +46,7 @@ class BestOnLine {
 
  private:
   class List;
+  void first_threshold(const BestAsked& asked, double feed_m3_s, List& list, LineSearch::Cost& cost) const;
   double first_ceilings(const BestAsked& asked, List& list, LineSearch::Cost& cost) const;
   const Line& line_;
   const Bound& bound_;

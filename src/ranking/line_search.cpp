@@ -95,6 +95,7 @@ class LineSearch::Walk {
         q_(feed_m3_s),
         fewest_(fewest),
         most_(most),
+        most_members_(most),
         splits_(search.line_, tolerance),
         wanted_(wanted),
         pad_(tolerance * most),
@@ -103,6 +104,8 @@ class LineSearch::Walk {
     for (std::size_t i = 0; i < sized.size(); ++i) left_[i] = sized[i].count;
   }
 
+  /// No besides.
+  void trains_only() { most_members_ = 1; }
   /// All hookups whose first member has `members` vessels, the largest of them the class `first`.
   void run(int members, std::size_t first) {
     taken_.clear();
@@ -233,7 +236,7 @@ class LineSearch::Walk {
     const std::vector<std::size_t> own = std::move(taken_);
     taken_.clear();
     if (used_ >= fewest_ && z_ >= wanted_.floor(used_, used_)) wanted_.found({built(), z_, used_, free_}, splits_);
-    for (int m = 1; m <= most_ - used_; ++m) choose(m, 0, 0, 0);
+    for (int m = 1; m <= std::min(most_members_, most_ - used_); ++m) choose(m, 0, 0, 0);
     taken_ = own;
     members_.pop_back();
     free_ -= free_shares;
@@ -260,7 +263,7 @@ class LineSearch::Walk {
   const LineSearch& search_;
   const std::vector<Sized>& sized_;
   double q_;
-  int fewest_, most_;
+  int fewest_, most_, most_members_;
   Splits splits_;
   Wanted& wanted_;
   double pad_;  // what the joints before may have missed
@@ -310,13 +313,14 @@ LineSearch::Cost LineSearch::run(double feed_m3_s, int fewest, int most, double 
   return total;
 }
 
-LineSearch::Cost LineSearch::run_among(std::size_t largest, double feed_m3_s, int fewest, int most, double tolerance,
-                                       Wanted& wanted) const {
+LineSearch::Cost LineSearch::run_among(std::size_t largest, Members members, double feed_m3_s, int fewest, int most,
+                                       double tolerance, Wanted& wanted) const {
   templates_->make_up_to(most);
   std::vector<Sized> all = sized(feed_m3_s, most);
   if (all.size() > largest) all.resize(largest);
   Walk walk(*this, all, feed_m3_s, fewest, most, tolerance, wanted);
-  for (int m = 1; m <= most; ++m)
+  if (members == Members::vessels) walk.trains_only();
+  for (int m = 1; m <= (members == Members::vessels ? 1 : most); ++m)
     for (std::size_t i = 0; i < all.size(); ++i) walk.run(m, i);
   return walk.cost();
 }

@@ -49,8 +49,10 @@ class LineSearch {
   /// Tells `wanted` every hookup of fewest .. most vessels that reaches its floor at this feed rate.
   ///   tolerance: of z at every joint. Any number of threads tells the same.
   Cost run(double feed_m3_s, int fewest, int most, double tolerance, int threads, Wanted& wanted) const;
-  /// The same among the `largest` vessels alone.
-  Cost run_among(std::size_t largest, double feed_m3_s, int fewest, int most, double tolerance, Wanted& wanted) const;
+  /// The same among the `largest` vessels alone, trains of vessels only or of besides too.
+  enum class Members { vessels, any };
+  Cost run_among(std::size_t largest, Members members, double feed_m3_s, int fewest, int most, double tolerance,
+                 Wanted& wanted) const;
 
  private:
   struct Templates;

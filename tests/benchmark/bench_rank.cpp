@@ -41,9 +41,18 @@ Problem plant(Rate rate, int n, int most, bool feed_lines, unsigned seed) {
   Reaction r;
   double t = 1;  // of a tube to 90 %
   switch (rate) {
-    case Rate::second: r = reaction({{0, -1}, {1, 1}}, 1, {{0, 2}}); t = 9; break;
-    case Rate::half: r = reaction({{0, -1}, {1, 1}}, 1, {{0, 0.5}}); t = 2 * (1 - std::sqrt(0.1)); break;
-    case Rate::first: r = reaction({{0, -1}, {1, 1}}, 1, {{0, 1}}); t = std::log(10); break;
+    case Rate::second:
+      r = reaction({{0, -1}, {1, 1}}, 1, {{0, 2}});
+      t = 9;
+      break;
+    case Rate::half:
+      r = reaction({{0, -1}, {1, 1}}, 1, {{0, 0.5}});
+      t = 2 * (1 - std::sqrt(0.1));
+      break;
+    case Rate::first:
+      r = reaction({{0, -1}, {1, 1}}, 1, {{0, 1}});
+      t = std::log(10);
+      break;
     case Rate::autocatalytic:
       r = reaction({{0, -1}, {1, 1}}, 1, {{0, 1}, {1, 1}});
       c[1] = 0.02;
@@ -96,10 +105,25 @@ Searched search(const Problem& problem, int most, bool by_ceiling, int threads) 
 void show(Rate rate, int n, int most, bool feed_lines, bool by_ceiling) {
   const Problem problem = plant(rate, n, most, feed_lines, 17);
   const Searched s = search(problem, most, by_ceiling, 2);
-  std::printf("%-14s N %2d k %d %-10s %-10s %9.5f s  rated %7lld  maps %9ld  bounds %9ld  of %lld, best %.6f tenth %.6f\n",
-              name_of(rate), n, most, by_ceiling ? "ceiling" : "conversion", feed_lines ? "feed lines" : "", s.seconds,
-              s.found.cost.rated, s.found.cost.maps, s.found.cost.bounds, count_hookups_up_to(n, most).value_or(-1),
-              s.found.all.front().value, s.found.all[std::min<std::size_t>(9, s.found.all.size() - 1)].value);
+  std::printf(
+      "%-14s N %2d k %d %-10s %-10s %9.5f s  rated %7lld  maps %9ld  bounds %9ld  of %lld, best %.6f tenth %.6f\n",
+      name_of(rate), n, most, by_ceiling ? "ceiling" : "conversion", feed_lines ? "feed lines" : "", s.seconds,
+      s.found.cost.rated, s.found.cost.maps, s.found.cost.bounds, count_hookups_up_to(n, most).value_or(-1),
+      s.found.all.front().value, s.found.all[std::min<std::size_t>(9, s.found.all.size() - 1)].value);
+}
+
+/// One thread and two in turn, the median of the ratios.
+void show_threads(Rate rate, int n, int most, bool by_ceiling) {
+  const Problem problem = plant(rate, n, most, false, 17);
+  std::vector<double> ratios;
+  double one = 0;
+  for (int pair = 0; pair < 5; ++pair) {
+    one = search(problem, most, by_ceiling, 1).seconds;
+    ratios.push_back(one / search(problem, most, by_ceiling, 2).seconds);
+  }
+  std::sort(ratios.begin(), ratios.end());
+  std::printf("%-14s N %2d k %d %-10s one thread %.3f s, two are %.2f times as fast\n", name_of(rate), n, most,
+              by_ceiling ? "ceiling" : "conversion", one, ratios[2]);
 }
 
 }  // namespace
@@ -110,5 +134,7 @@ int main() {
       show(rate, 40, 4, false, by_ceiling);
   for (const Rate rate : {Rate::second, Rate::half}) show(rate, 40, 4, true, false);
   for (const Rate rate : {Rate::second, Rate::half, Rate::first}) show(rate, 60, 5, false, false);
+  show_threads(Rate::hindered, 40, 4, false);
+  show_threads(Rate::hindered, 40, 4, true);
   return 0;
 }
