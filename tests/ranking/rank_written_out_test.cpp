@@ -2,6 +2,8 @@
 // 1e-7, and nothing better left out.
 #include <algorithm>
 #include <cmath>
+#include <functional>
+#include <tuple>
 
 #include "small_site.hpp"
 #include "support/catch.hpp"
@@ -101,16 +103,93 @@ void check_ceilings(const SmallSite& site, double share) {
   auto hookups = all_hookups(static_cast<int>(site.plant.vessels.size()), site.most);
   const double X = target_missed_by(site, hookups, share), feed = site.feed_m3_s;
   const Problem problem = problem_of(site.plant, feed, X);
-  const auto value_of = [&](const Hookup& h) { return ceiling(site.plant, h, X, feed * 1e-4, feed * 1e2); };
+  const auto value_of = [&](const Hookup& h) { return ceiling(site.plant, h, X, feed); };
   const Ranking ranking = ranked(problem, site.most, By::ceiling);
   const auto found = shown(ranking, problem, site, value_of);
   // only what is as good as the last shown needs its ceiling; fewer than ten classes: all do
-  const double cut = found.size() == 10 ? found.back() * (1 - agrees) : feed * 1e-4;
+  const double cut = found.size() == 10 ? found.back() * (1 - agrees) : 0;
   std::vector<double> all;
   for (const Hookup& h : hookups)
-    if (keeps_feed_lines(site.plant, h, feed) && best_conversion(site.plant, h, cut).value_or(-1) >= X)
+    if (keeps_feed_lines(site.plant, h, feed) && (cut == 0 || best_conversion(site.plant, h, cut).value_or(-1) >= X))
       all.push_back(value_of(h).value());
   agree(ranking, found, std::move(all));
+}
+
+/// What the place by fit depends on (best first): verdict, vessels, ceiling in groups of 0.1 %, free shares, ceiling.
+struct FitPlace {
+  bool fits = false;
+  int vessels = 0, free_shares = 0;
+  double ceiling = 0;
+};
+
+/// In order; of those that have the same verdict, vessels and ceiling only the first.
+std::vector<FitPlace> in_order_of_fit(std::vector<FitPlace> all) {
+  std::sort(all.begin(), all.end(), [](const FitPlace& a, const FitPlace& b) {
+    return std::tuple(!a.fits, a.vessels, -a.ceiling) < std::tuple(!b.fits, b.vessels, -b.ceiling);
+  });
+  const auto equals = [](const FitPlace& a, const FitPlace& b) { return a.fits == b.fits && a.vessels == b.vessels; };
+  for (std::size_t from = 0, to = 0; from < all.size(); from = to) {
+    while (to < all.size() && equals(all[from], all[to]) && all[to].ceiling >= all[from].ceiling * (1 - 1e-3)) ++to;
+    std::stable_sort(all.begin() + static_cast<std::ptrdiff_t>(from), all.begin() + static_cast<std::ptrdiff_t>(to),
+                     [](const FitPlace& a, const FitPlace& b) { return a.free_shares < b.free_shares; });
+  }
+  std::vector<FitPlace> kept;
+  for (const FitPlace& one : all)
+    if (std::none_of(kept.begin(), kept.end(), [&](const FitPlace& k) {
+          return equals(k, one) && std::abs(k.ceiling - one.ceiling) <= same * one.ceiling;
+        }))
+      kept.push_back(one);
+  return kept;
+}
+
+void check_fit(const SmallSite& site, double share) {
+  const auto hookups = all_hookups(static_cast<int>(site.plant.vessels.size()), site.most);
+  const double X = target_missed_by(site, hookups, share), feed = site.feed_m3_s;
+  const Problem problem = problem_of(site.plant, feed, X);
+  const auto value_of = [&](const Hookup& h) { return ceiling(site.plant, h, X, feed); };
+  std::vector<FitPlace> all, shown;
+  for (const Hookup& h : hookups)
+    if (const auto reached = best_conversion(site.plant, h, feed))
+      all.push_back({*reached >= X, static_cast<int>(vessels_of(h).size()), free_shares_of(h), value_of(h).value()});
+  const Ranking ranking = ranked(problem, site.most, By::fit);
+  CHECK((ranking.complete == "proved" || ranking.complete == "visited"));
+  for (const Ranked& r : ranking.top) {
+    INFO(r.rating.text);
+    const Hookup hookup = with_free_shares(parsed(r.rating.text, problem.site));
+    REQUIRE(breaks_limit(r.rating) == !keeps_feed_lines(site.plant, hookup, feed));
+    if (breaks_limit(r.rating)) break;
+    CHECK(r.value.value() == Approx(value_of(hookup).value()).epsilon(agrees).margin(0));
+    CHECK(r.rating.vessel_count == static_cast<int>(vessels_of(hookup).size()));
+    CHECK(r.rating.free_shares == free_shares_of(hookup));
+    shown.push_back({r.rating.whole.verdict == Verdict::fits, r.rating.vessel_count, r.rating.free_shares, *r.value});
+  }
+  const bool cut = ranking.top.size() == 10 && shown.size() == 10;
+  const auto expected = in_order_of_fit(all);
+  std::vector<FitPlace> found;  // as shown, one of each
+  for (const FitPlace& one : shown)
+    if (std::none_of(found.begin(), found.end(), [&](const FitPlace& k) {
+          return k.fits == one.fits && k.vessels == one.vessels &&
+                 std::abs(k.ceiling - one.ceiling) <= same * one.ceiling;
+        }))
+      found.push_back(one);
+  if (!cut) REQUIRE(found.size() == expected.size());
+  REQUIRE(found.size() <= expected.size());
+  for (std::size_t i = 0; i < found.size(); ++i) {
+    INFO("place " << i);
+    CHECK(found[i].fits == expected[i].fits);
+    CHECK(found[i].vessels == expected[i].vessels);
+    CHECK(found[i].free_shares == expected[i].free_shares);
+    CHECK(found[i].ceiling == Approx(expected[i].ceiling).epsilon(agrees).margin(0));
+  }
+}
+
+/// Three in a hookup where the rate falls; elsewhere, where a proof costs more, in every `seldom`-th site.
+SmallSite mixed_site(std::mt19937& random, int i, int seldom) {
+  const auto shape = static_cast<Shape>(i % shapes);
+  const int round = i / shapes;
+  if (rate_falls(shape)) return random_site(random, shape, 4 + round % 2, 3);
+  const bool three = round % (shape == Shape::hindered ? 3 * seldom : seldom) == 0;
+  return random_site(random, shape, three ? 4 : 5, three ? 3 : 2);
 }
 
 }  // namespace
@@ -148,18 +227,36 @@ TEST_CASE("closed forms hold what defines them", "[written-out]") {
 TEST_CASE("the best conversions of random sites are those of all hookups written out", "[rank]") {
   std::mt19937 random(4171);
   for (int i = 0; i < 240; ++i) {
-    const SmallSite site = random_site(random, static_cast<Shape>(i % shapes), 4 + i / shapes % 2, i % 5 == 0 ? 2 : 3);
     INFO("site " << i);
-    check_conversions(site);
+    check_conversions(mixed_site(random, i, 4));
   }
 }
 
 TEST_CASE("the highest ceilings of random sites are those of all hookups written out", "[rank]") {
   std::mt19937 random(4172);
   for (int i = 0; i < 120; ++i) {
-    const SmallSite site = random_site(random, static_cast<Shape>(i % shapes), 4 + i / shapes % 2, i % 3 == 0 ? 3 : 2);
     INFO("site " << i);
-    check_ceilings(site, i % 4 == 0 ? 0.2 : 0.7);
+    check_ceilings(mixed_site(random, i, 6), i % 4 == 0 ? 0.2 : 0.7);
+  }
+}
+
+TEST_CASE("five vessels, three in a hookup, whatever the rate", "[.long]") {
+  std::mt19937 random(4175);
+  for (int i = 0; i < 120; ++i) {
+    const SmallSite site = random_site(random, static_cast<Shape>(i % shapes), 5, 3);
+    INFO("site " << i);
+    check_conversions(site);
+    check_ceilings(site, 0.7);
+  }
+}
+
+TEST_CASE("the order by fit of random sites is that of all hookups written out", "[rank]") {
+  std::mt19937 random(4174);
+  for (int i = 0; i < 60; ++i) {
+    const auto shape = static_cast<Shape>(i % shapes);
+    const SmallSite site = random_site(random, shape, 4, rate_falls(shape) ? 3 : 2);
+    INFO("site " << i);
+    check_fit(site, i % 4 * 0.3);
   }
 }
 

@@ -89,7 +89,7 @@ double greatest(const F& f, double a, double b, int scans) {
   }
   double best = *std::max_element(y, y + n + 1);
   for (int i = 0; i <= n; ++i) {
-    if ((i > 0 && y[i - 1] > y[i]) || (i < n && y[i + 1] > y[i])) continue;
+    if ((i > 0 && y[i - 1] >= y[i]) || (i < n && y[i + 1] > y[i])) continue;  // of a level stretch its first place
     const double lo = x[std::max(i - 1, 0)], hi = x[std::min(i + 1, n)];
     best = std::max(best, scans > 1 ? greatest(f, lo, hi, scans - 1) : top_of(f, lo, hi));
   }
@@ -177,11 +177,17 @@ double conversion_at(const SmallPlant& plant, const Hookup& hookup, const std::v
   return at_shares(plant, hookup, 0, feed_m3_s, share);
 }
 
-std::optional<double> ceiling(const SmallPlant& plant, const Hookup& hookup, double X, double lo_m3_s, double hi_m3_s) {
+std::optional<double> ceiling(const SmallPlant& plant, const Hookup& hookup, double X, double near_m3_s) {
   const auto reaches = [&](double q) { return best_conversion(plant, hookup, q).value_or(-1) >= X; };
-  if (!reaches(lo_m3_s)) return std::nullopt;
-  double lo = lo_m3_s, hi = hi_m3_s;
-  while (hi / lo > 1 + 1e-11) {
+  double lo = near_m3_s, hi = near_m3_s, step = 1.3;
+  if (reaches(near_m3_s))
+    for (hi *= step; reaches(hi); hi *= step) lo = hi, step *= step;
+  else
+    for (lo /= step; !reaches(lo); lo /= step) {
+      if (lo < 1e-6 * near_m3_s) return std::nullopt;
+      hi = lo, step *= step;
+    }
+  while (hi / lo > 1 + 1e-10) {
     const double middle = std::sqrt(lo * hi);
     (reaches(middle) ? lo : hi) = middle;
   }

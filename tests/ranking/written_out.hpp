@@ -27,7 +27,8 @@ std::optional<double> best_conversion(const SmallPlant& plant, const Hookup& hoo
 double conversion_at(const SmallPlant& plant, const Hookup& hookup, const std::vector<double>& shares,
                      double feed_m3_s);
 
-/// The greatest feed rate between lo and hi at which it converts X, to 1e-11; absent: not even lo does.
-std::optional<double> ceiling(const SmallPlant& plant, const Hookup& hookup, double X, double lo_m3_s, double hi_m3_s);
+/// The greatest feed rate at which it converts X, to 1e-10, looked for from `near` on (what it converts falls with the
+/// feed rate); absent: not at a millionth of that.
+std::optional<double> ceiling(const SmallPlant& plant, const Hookup& hookup, double X, double near_m3_s);
 
 }  // namespace vatwright::test
