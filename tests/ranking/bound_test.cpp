@@ -5,7 +5,6 @@
 #include <cmath>
 #include <random>
 
-#include "brute_force.hpp"
 #include "hookup/site.hpp"
 #include "ranking/splits.hpp"
 #include "support/catch.hpp"
