@@ -63,7 +63,7 @@ std::vector<double> shown(const Ranking& ranking, const Problem& problem, const 
     CHECK(*r.value == Approx(value_of(hookup).value()).epsilon(agrees).margin(0));
     CHECK(conversion_at(site.plant, hookup, r.rating.shares, site.feed_m3_s) ==
           Approx(r.rating.whole.conversion.value()).epsilon(agrees).margin(0));
-    if (!values.empty()) CHECK(*r.value <= values.back() * (1 + same));
+    if (!values.empty()) CHECK(*r.value <= values.back() * (1 + agrees));
     values.push_back(*r.value);
   }
   return values;
@@ -263,8 +263,9 @@ TEST_CASE("the order by fit of random sites is that of all hookups written out",
 TEST_CASE("nine vessels, four in a hookup", "[.long]") {
   std::mt19937 random(4173);
   for (int i = 0; i < 2 * shapes; ++i) {
-    const SmallSite site = random_site(random, static_cast<Shape>(i % shapes), 9, 4);
+    const auto shape = static_cast<Shape>(i % shapes);
+    const bool scans_end = rate_falls(shape) || shape == Shape::autocatalytic;  // else three: scans in scans in scans
     INFO("site " << i);
-    check_conversions(site);
+    check_conversions(random_site(random, shape, 9, scans_end ? 4 : 3));
   }
 }
