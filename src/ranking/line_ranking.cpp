@@ -215,7 +215,7 @@ class OnOneLine::Places {
     add_today(set);
     if (gave_up_ || failed_) return std::nullopt;
     for (const Entry& e : entries_) set.unsolved = set.unsolved || e.unsolved;
-    set.rated = cost_.rated;
+    set.rated = static_cast<long long>(entries_.size());
     set.complete = "proved";
     set.within = on_.within(rater_, entries_, cost_.gap);
     if (split_within_limits_) {

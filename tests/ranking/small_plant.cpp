@@ -24,7 +24,10 @@ double bisected(double lo, double hi, const F& f) {
 class AdiabaticTime {
  public:
   AdiabaticTime() {
-    for (int i = 0; i < panels; ++i) at_[i + 1] = at_[i] + piece(i * width, (i + 1) * width);
+    for (std::size_t i = 0; i < panels; ++i) {
+      const double u = static_cast<double>(i) * width;
+      at_[i + 1] = at_[i] + piece(u, u + width);
+    }
   }
   [[nodiscard]] double u_at(double t) const {
     if (t >= at_[panels]) return panels * width + (t - at_[panels]) * speed_up(1);  // 1 - X below 1e-17
