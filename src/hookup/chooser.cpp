@@ -58,13 +58,19 @@ JudgedHookup Chooser::choose(double feed_m3_s, Purpose purpose, Detail detail) {
   const auto judged_at = [&](std::span<const double> x) {
     return judge_hookup(problem_, network_, feed_m3_s, space_.shares(x), detail);
   };
-  if (space_.dimensions() == 0) return judged_at({});
+  if (space_.dimensions() == 0) {
+    JudgedHookup only = judged_at({});
+    only.shares_certain = true;
+    return only;
+  }
   const auto free = choose_free(feed_m3_s, purpose);
   JudgedHookup best =
       judge_hookup(problem_, network_, feed_m3_s, free ? free->shares : space_.shares(space_.in_proportion()), detail);
+  best.shares_certain = free && known_shares_;
   if (free && !breaks_limit(best)) return best;
   if (breaks_limit_of_files(best)) return best;               // no share helps
   if (known_shares_ && breaks_flow_limit(best)) return best;  // then all shares do
+  best.shares_certain = false;                                // others may keep every limit
   const bool missed_anyhow = free && is_all_of_target(objective_, problem_.duty) && !all_met(best.targets);
   if (purpose == Purpose::window && missed_anyhow) return best;
 

@@ -2,7 +2,6 @@
 
 #include <algorithm>
 
-
 namespace vatwright {
 
 std::optional<int> yield_asked(const Duty& duty) {

@@ -1,11 +1,23 @@
 #include "vatwright/hookup/share_space.hpp"
 
 #include <algorithm>
+#include <limits>
 #include <numeric>
 
 #include "vatwright/error/expects.hpp"
 
 namespace vatwright {
+
+double most_flow(const Hookup& hookup, FunctionRef<double(int leaf)> passes) {
+  if (hookup.join == Hookup::Join::vessel) return passes(hookup.vessel);
+  double least = std::numeric_limits<double>::infinity(), sum = 0;
+  for (std::size_t i = 0; i < hookup.parts.size(); ++i) {
+    const double one = most_flow(hookup.parts[i], passes);
+    sum += one;
+    least = std::min(least, hookup.join == Hookup::Join::then ? one : one / hookup.shares[i].value_or(least_share));
+  }
+  return hookup.join == Hookup::Join::then ? least : std::min(sum, least);
+}
 
 ShareSpace::ShareSpace(const Hookup& hookup, const std::vector<double>& volumes) {
   std::size_t leaf = 0;

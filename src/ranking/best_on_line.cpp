@@ -40,7 +40,7 @@ class BestOnLine::List final : public Wanted {
       if (hookup.z >= least) add({std::move(hookup), hookup.z});
       return;
     }
-    const double cap = feed_lines_pass(hookup.hookup, best_.vessels_), z = *best_.z_target_ - missed;
+    const double cap = caps_pass(hookup.hookup, best_.vessels_), z = *best_.z_target_ - missed;
     if (cap < best_.feed_m3_s_ * (1 - hair) || cap < least) return;
     double from = feed_m3_s;
     if (least > from * (1 + hair)) {

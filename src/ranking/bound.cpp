@@ -26,83 +26,71 @@ bool mean_premise(const RateTrack& track) {
 }  // namespace
 
 Bound::Bound(const Line& line) : line_(line), track_(line.tracks().front().get()) {
-  // From the end backwards: M stays level below a peak until the rate before it is larger.
-  const double end = RateTrack::last();
-  if (track_->falls()) {
-    stretches_.push_back({0, end, 0, track_->time(end), 0, true, 0});
-  } else {
-    std::vector<Stretch> backwards;
-    double z = end;
-    const auto& peaks = track_->peaks();
-    std::size_t next = peaks.size();
-    double level = track_->rate(end).value;
-    while (z > 0) {
-      // on the way down from z the rate follows M as long as it rises towards smaller z, down to the next peak
-      if (next > 0 && peaks[next - 1] < z && track_->rate(peaks[next - 1]).value > level) {
-        const double peak = peaks[--next];
-        double start = z;  // where the falling side of the peak has come to the level
-        if (track_->rate(z).value < level) {
-          double lo = peak, hi = z;
-          for (int i = 0; i < 60; ++i) (track_->rate((lo + hi) / 2).value > level ? lo : hi) = (lo + hi) / 2;
-          start = (lo + hi) / 2;
-        }
-        if (start < z) backwards.push_back({start, z, 0, 0, level, false, 0});
-        if (peak < start) backwards.push_back({peak, start, 0, 0, 0, true, 0});
-        z = peak;
-        level = track_->rate(peak).value;
-      } else if (next > 0) {
-        --next;
-        if (peaks[next] >= z) continue;
-      } else {
-        backwards.push_back({0, z, 0, 0, level, false, 0});
-        z = 0;
-      }
-    }
-    double t = 0;
-    for (auto s = backwards.rbegin(); s != backwards.rend(); ++s) {
-      Stretch stretch = *s;
-      stretch.t0 = t;
-      stretch.track_t0 = track_->time(stretch.z0);
-      t += stretch.follows ? track_->time(stretch.z1) - stretch.track_t0 : (stretch.z1 - stretch.z0) / stretch.level;
-      stretch.t1 = t;
-      stretches_.push_back(stretch);
-    }
-  }
-  // A track of another shape counts with the most that its rate is above M anywhere.
-  for (const auto& track : line.tracks()) {
-    double most = 1;
-    if (track.get() != track_) {
-      most = 0;
-      double above = 0;  // the largest from z on, backwards
-      const auto places = track->places();
-      for (std::size_t i = places.size(); i-- > 0;) {
-        const double place = places[i];
-        if (place >= end) continue;
-        above = std::max(above, track->rate(place).value);
-        const auto at = std::lower_bound(stretches_.begin(), stretches_.end(), place,
-                                         [](const Stretch& s, double value) { return s.z1 < value; });
-        const double M = at == stretches_.end() ? 0 : at->follows ? track_->rate(place).value : at->level;
-        most = std::max(most, above / M);
-      }
-      most *= 1 + 1e-2;  // between the places looked at
-    }
-    scale_.push_back(most);
-  }
+  add_majorant();
+  for (const auto& track : line.tracks()) scale_.push_back(track.get() == track_ ? 1 : most_above_majorant(*track));
   sharpen_ = line.falls() && line.tracks().size() == 1 && mean_premise(*track_);
+}
+
+/// From the end backwards: M stays level below a peak until the rate before it is larger.
+void Bound::add_majorant() {
+  const RateTrack& R = *track_;
+  std::vector<Stretch> backwards;
+  double z = RateTrack::last(), level = R.rate(z).value;
+  const auto& peaks = R.peaks();
+  for (std::size_t next = peaks.size(); next-- > 0;) {
+    const double peak = peaks[next];
+    if (!(peak < z && R.rate(peak).value > level)) continue;
+    double start = z;  // where the falling side of the peak has come to the level
+    if (R.rate(z).value < level) {
+      double lo = peak, hi = z;
+      for (int i = 0; i < 60; ++i) (R.rate((lo + hi) / 2).value > level ? lo : hi) = (lo + hi) / 2;
+      start = (lo + hi) / 2;
+    }
+    if (start < z) backwards.push_back({start, z, 0, 0, level, false, 0});
+    if (peak < start) backwards.push_back({peak, start, 0, 0, 0, true, 0});
+    z = peak;
+    level = R.rate(peak).value;
+  }
+  if (z > 0) backwards.push_back({0, z, 0, 0, level, false, 0});
+  double t = 0;
+  for (auto s = backwards.rbegin(); s != backwards.rend(); ++s) {
+    Stretch stretch = *s;
+    stretch.t0 = t;
+    stretch.track_t0 = R.time(stretch.z0);
+    t += stretch.follows ? R.time(stretch.z1) - stretch.track_t0 : (stretch.z1 - stretch.z0) / stretch.level;
+    stretch.t1 = t;
+    stretches_.push_back(stretch);
+  }
+}
+
+/// How many times larger than M the rate of a track is from any place on, at most.
+double Bound::most_above_majorant(const RateTrack& track) const {
+  constexpr double between_places = 1.01;
+  double most = 0, above = 0;  // above: the largest from z on
+  const auto places = track.places();
+  for (auto z = places.rbegin(); z != places.rend(); ++z) {
+    if (*z >= RateTrack::last()) continue;
+    above = std::max(above, track.rate(*z).value);
+    const Stretch& s = stretch_at(*z);
+    most = std::max(most, above / (s.follows ? track_->rate(*z).value : s.level));
+  }
+  return most * between_places;
+}
+
+const Bound::Stretch& Bound::stretch_at(double z) const {
+  const auto at = std::ranges::lower_bound(stretches_, z, {}, &Stretch::z1);
+  return at == stretches_.end() ? stretches_.back() : *at;
 }
 
 double Bound::time(double z) const {
   if (z >= RateTrack::last()) return stretches_.back().t1;
-  const auto at = std::lower_bound(stretches_.begin(), stretches_.end(), z,
-                                   [](const Stretch& s, double value) { return s.z1 < value; });
-  if (at->follows) return at->t0 + track_->time(z) - at->track_t0;
-  return at->t0 + (z - at->z0) / at->level;
+  const Stretch& s = stretch_at(z);
+  return s.t0 + (s.follows ? track_->time(z) - s.track_t0 : (z - s.z0) / s.level);
 }
 
 double Bound::reached(double t) const {
   if (t >= stretches_.back().t1) return 1;
-  const auto at = std::lower_bound(stretches_.begin(), stretches_.end(), t,
-                                   [](const Stretch& s, double value) { return s.t1 < value; });
+  const auto at = std::ranges::lower_bound(stretches_, t, {}, &Stretch::t1);
   if (at->follows) return track_->reached(at->track_t0 + t - at->t0);
   return at->z0 + (t - at->t0) * at->level;
 }

@@ -29,6 +29,9 @@ class Bound {
     bool follows = false;
     double track_t0 = 0;
   };
+  void add_majorant();
+  [[nodiscard]] double most_above_majorant(const RateTrack& track) const;
+  [[nodiscard]] const Stretch& stretch_at(double z) const;
   const Line& line_;
   const RateTrack* track_;
   std::vector<Stretch> stretches_;

@@ -155,16 +155,10 @@ class CeilingSearch {
 }  // namespace
 
 double flow_cap(const Problem& problem, const Hookup& hookup) {
-  if (hookup.join == Hookup::Join::vessel)
-    return problem.site.vessels[static_cast<std::size_t>(hookup.vessel)].feed_line_m3_s.value_or(
+  return most_flow(hookup, [&](int vessel) {
+    return problem.site.vessels[static_cast<std::size_t>(vessel)].feed_line_m3_s.value_or(
         std::numeric_limits<double>::infinity());
-  const bool series = hookup.join == Hookup::Join::then;
-  double cap = series ? std::numeric_limits<double>::infinity() : 0;
-  for (const Hookup& part : hookup.parts) {
-    const double one = flow_cap(problem, part);
-    cap = series ? std::min(cap, one) : cap + one;
-  }
-  return cap;
+  });
 }
 
 bool may_reach(Chooser& chooser, double feed_m3_s) {

@@ -144,21 +144,6 @@ std::vector<Hookup> hookups_of_classes(const std::vector<int>& counts) {
   return out;
 }
 
-std::vector<std::vector<int>> choices(int n, int k) {
-  std::vector<std::vector<int>> out;
-  std::vector<int> now(static_cast<std::size_t>(k));
-  std::iota(now.begin(), now.end(), 0);
-  while (k <= n) {
-    out.push_back(now);
-    int i = k - 1;
-    while (i >= 0 && now[static_cast<std::size_t>(i)] == n - k + i) --i;
-    if (i < 0) break;
-    ++now[static_cast<std::size_t>(i)];
-    for (int j = i + 1; j < k; ++j) now[static_cast<std::size_t>(j)] = now[static_cast<std::size_t>(j - 1)] + 1;
-  }
-  return out;
-}
-
 Hookup sorted_members(Hookup hookup) {
   for (Hookup& part : hookup.parts) part = sorted_members(std::move(part));
   if (hookup.join == Join::beside) {

@@ -14,7 +14,7 @@ namespace {
 void add_shares_by_cap(const Hookup& hookup, const OnLines& vessels, std::vector<double>& shares) {
   std::vector<double> caps;
   double sum = 0;
-  for (const Hookup& part : hookup.parts) sum += caps.emplace_back(feed_lines_pass(part, vessels));
+  for (const Hookup& part : hookup.parts) sum += caps.emplace_back(caps_pass(part, vessels));
   if (!std::isfinite(sum)) {
     for (double& cap : caps) cap = std::isfinite(cap) ? 0 : 1;
     sum = static_cast<double>(std::ranges::count(caps, 1.0));

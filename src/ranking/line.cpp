@@ -4,7 +4,9 @@
 #include <cmath>
 #include <limits>
 
+#include "vatwright/numeric/root.hpp"
 #include "vatwright/rating/rating.hpp"
+#include "vatwright/vessel/pressure_drop.hpp"
 #include "vatwright/vessel/rate_line.hpp"
 
 namespace vatwright {
@@ -46,6 +48,20 @@ bool slowness_convex(const RateTrack& track) {
   });
 }
 
+/// The flow at which a liquid loses just the pressure that a tube may cost; absent: it may cost any, or none is known.
+std::optional<double> flow_at_pressure_drop(const Vessel& v, const Feed& feed) {
+  if (!v.pressure_drop_Pa || feed.phase != Phase::liquid || !feed.viscosity_Pa_s || !feed.density_kg_m3)
+    return std::nullopt;
+  const auto over = [&](double ln_q) {
+    const Flow flow{std::exp(ln_q) * *feed.density_kg_m3, *feed.density_kg_m3, *feed.viscosity_Pa_s};
+    return pressure_gradient(v.kind, flow) * length_of(v.kind) - *v.pressure_drop_Pa;
+  };
+  const double lo = std::log(1e-12), hi = std::log(1e6);
+  if (!(over(lo) < 0 && over(hi) > 0)) return std::nullopt;
+  const auto root = find_root(over, lo, hi, {.rel_tol = 0, .abs_tol = 1e-12});
+  return answer(root) ? std::optional(std::exp(*answer(root))) : std::nullopt;
+}
+
 }  // namespace
 
 std::optional<Line> Line::find(const Problem& problem, const std::vector<int>& offered, std::string& why) {
@@ -81,7 +97,10 @@ std::optional<Line> Line::find(const Problem& problem, const std::vector<int>& o
       from_feed = from_feed || rates.starts_at() == RateLine::StartsAt::feed;
       line.from_end_ = line.from_end_ || rates.starts_at() == RateLine::StartsAt::end;
     }
-    OnLine on{nullptr, 0, rates.is_tank(), vessel.feed_line_m3_s.value_or(std::numeric_limits<double>::infinity())};
+    constexpr double any = std::numeric_limits<double>::infinity();
+    OnLine on{nullptr, 0, rates.is_tank(),
+              std::min(vessel.feed_line_m3_s.value_or(any),
+                       flow_at_pressure_drop(vessel, duty.chemistry.feed).value_or(any))};
     static const std::vector<double> looked_at = {0, 0.05, 0.2, 0.4, 0.6, 0.8, 0.95, 0.999};
     for (const auto& track : line.tracks_)
       if (const auto factor = ratio(rates, *track, looked_at)) {
@@ -122,10 +141,6 @@ std::optional<Line> Line::find(const Problem& problem, const std::vector<int>& o
   line.falls_ = all([](const RateTrack& track) { return track.falls(); });
   line.tanks_concave_ = line.falls_ && all(slowness_convex);
   return line;
-}
-
-void Line::narrow(std::size_t place, double cap_m3_s) {
-  if (vessels_[place]) vessels_[place]->cap_m3_s = std::min(vessels_[place]->cap_m3_s, cap_m3_s);
 }
 
 Line Line::without_caps() const {

@@ -20,8 +20,6 @@ class Line {
     bool is_tank = false;
     double cap_m3_s = 0;  ///< the most that may pass it: its feed line, its pressure drop; infinite: nothing limits it
   };
-  /// Lets no more than this pass the vessel at a place of vessels().
-  void narrow(std::size_t place, double cap_m3_s);
   /// The same with nothing in the way of any flow.
   [[nodiscard]] Line without_caps() const;
   /// What comes out, and how that moves with what comes in.

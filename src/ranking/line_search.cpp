@@ -2,7 +2,6 @@
 
 #include <algorithm>
 #include <cmath>
-#include <map>
 
 #include "vatwright/numeric/pool.hpp"
 #include "vatwright/ranking/enumerate.hpp"
@@ -12,11 +11,6 @@ namespace {
 
 using Join = Hookup::Join;
 
-/// All besides of one pattern of equals, with the free shares of each; leaves are places, equals beside each other.
-struct Beside {
-  Hookup hookup;
-  int free_shares = 0;
-};
 using Pattern = std::vector<int>;
 
 }  // namespace
@@ -28,32 +22,6 @@ void LineSearch::Cost::add(const Cost& other) {
   gap = std::max(gap, other.gap);
   failed = failed || other.failed;
 }
-
-/// Made for every pattern up to a size, before threads read them.
-struct LineSearch::Templates {
-  std::map<Pattern, std::vector<Beside>> of;
-  int size = 0;
-
-  void make_up_to(int most) {
-    for (; size < most; ++size) add_patterns({}, size + 1);
-  }
-  void add_patterns(Pattern pattern, int left) {
-    if (left == 0) return add(pattern);
-    for (int n = 1; n <= left; ++n) {
-      pattern.push_back(n);
-      add_patterns(pattern, left - n);
-      pattern.pop_back();
-    }
-  }
-  void add(const Pattern& pattern) {
-    std::vector<Beside>& list = of[pattern];
-    for (Hookup& h : hookups_of_classes(pattern))
-      if (h.join == Join::beside) {
-        const int free_shares = free_shares_of(h);
-        list.push_back({std::move(h), free_shares});
-      }
-  }
-};
 
 /// A class with what one of its vessels counts in the bound.
 struct LineSearch::Sized {
@@ -123,7 +91,7 @@ class LineSearch::Walk {
 
  private:
   struct Member {
-    const Beside* beside = nullptr;    // null: a vessel
+    const Hookup* beside = nullptr;    // null: a vessel
     std::vector<std::size_t> classes;  // of its leaves, in the order of places
   };
 
@@ -205,10 +173,9 @@ class LineSearch::Walk {
         follow(Member{nullptr, classes}, Hookup{Join::vessel, 0, {}, {}}, vessels, 0, need);
       return;
     }
-    for (const Beside& beside : search_.templates_->of.at(pattern)) {
-      if (search_.twins_.is_shown(beside.hookup, first_of_class))
-        follow(Member{&beside, classes}, beside.hookup, vessels, beside.free_shares, need);
-    }
+    for (const Hookup& beside : search_.templates_->known_besides(pattern))
+      if (search_.twins_.is_shown(beside, first_of_class))
+        follow(Member{&beside, classes}, beside, vessels, free_shares_of(beside), need);
   }
   [[nodiscard]] std::size_t class_of(std::size_t i) const { return sized_[i].place; }
 
@@ -253,7 +220,7 @@ class LineSearch::Walk {
       } else {
         std::vector<int> to;
         for (const std::size_t i : member.classes) to.push_back(vessel_of(i));
-        parts.push_back(sorted_members(relabelled(member.beside->hookup, to)));
+        parts.push_back(sorted_members(relabelled(*member.beside, to)));
       }
     }
     if (parts.size() == 1) return parts[0];
@@ -288,7 +255,7 @@ LineSearch::~LineSearch() = default;
 
 LineSearch::Cost LineSearch::run(double feed_m3_s, int fewest, int most, double tolerance, int threads,
                                  Wanted& wanted) const {
-  templates_->make_up_to(most);
+  templates_->make_besides_up_to(most);
   const std::vector<Sized> all = sized(feed_m3_s, most);
   struct Task {
     int members;
@@ -315,7 +282,7 @@ LineSearch::Cost LineSearch::run(double feed_m3_s, int fewest, int most, double 
 
 LineSearch::Cost LineSearch::run_among(std::size_t largest, Members members, double feed_m3_s, int fewest, int most,
                                        double tolerance, Wanted& wanted) const {
-  templates_->make_up_to(most);
+  templates_->make_besides_up_to(most);
   std::vector<Sized> all = sized(feed_m3_s, most);
   if (all.size() > largest) all.resize(largest);
   Walk walk(*this, all, feed_m3_s, fewest, most, tolerance, wanted);

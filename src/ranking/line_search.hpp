@@ -4,6 +4,7 @@
 
 #include "bound.hpp"
 #include "splits.hpp"
+#include "templates.hpp"
 #include "vatwright/ranking/twins.hpp"
 
 namespace vatwright {
@@ -55,7 +56,6 @@ class LineSearch {
                  Wanted& wanted) const;
 
  private:
-  struct Templates;
   struct Sized;
   class Walk;
   [[nodiscard]] std::vector<Sized> sized(double feed_m3_s, int most) const;

@@ -9,10 +9,7 @@
 namespace vatwright {
 namespace {
 
-constexpr double as_good_as = 1e-3;
 constexpr double none = -std::numeric_limits<double>::infinity();
-
-bool by_ceiling(By by) { return by == By::fit || by == By::ceiling; }
 
 // What is equal by algebra differs by rounding: the ninth digit is the last that counts, then the text decides.
 double nine_digits(double figure) {

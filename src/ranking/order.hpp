@@ -19,8 +19,13 @@ struct Entry {
   std::optional<double> reach;     ///< conversion, or yield under By::yield
   std::optional<Ceiling> ceiling;  ///< absent: not found out yet
   std::string text;
+  std::vector<std::string> stands_in_the_way;
 };
 
+/// Values are of one group where they lie within this share of the group's best.
+inline constexpr double as_good_as = 1e-3;
+/// Whether ceilings are what is ordered by.
+inline bool by_ceiling(By by) { return by == By::fit || by == By::ceiling; }
 /// The figure that `by` orders by, the higher the better; an open window is infinite, no figure is minus infinity.
 double figure_of(const Entry& entry, By by);
 /// What is told as `value`: finite or absent.

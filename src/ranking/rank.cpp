@@ -2,6 +2,7 @@
 
 #include <algorithm>
 
+#include "kept_out.hpp"
 #include "line_ranking.hpp"
 #include "vatwright/error/expects.hpp"
 #include "vatwright/numeric/pool.hpp"
@@ -14,8 +15,9 @@ namespace {
 bool is_certain(const Entry& e) { return e.split_certain && (!e.ceiling || e.ceiling->certain); }
 
 RankedSet ranked_set(const Problem& problem, const std::vector<int>& offered, const RankOptions& options,
-                     std::optional<Twins>& twins, std::optional<Rater>& rater, std::unique_ptr<OnOneLine>& line) {
-  line = OnOneLine::find(problem, offered, options);
+                     std::optional<Twins>& twins, std::optional<Rater>& rater, std::unique_ptr<OnOneLine>& line,
+                     std::string& why) {
+  line = OnOneLine::find(problem, offered, options, why);
   if (line)
     twins.emplace(line->twins());
   else
@@ -24,7 +26,7 @@ RankedSet ranked_set(const Problem& problem, const std::vector<int>& offered, co
     rater.emplace(problem, options, *twins,
                   Rater::Known{[&line](const Hookup& h) { return line->shares_of(h); },
                                [&line](const Hookup& h) { return line->ceiling_of(h); }});
-    if (auto set = line->rank(*rater)) return *std::move(set);
+    if (auto set = rank_on_line(*line, *rater)) return *std::move(set);
   } else {
     rater.emplace(problem, options, *twins);
   }
@@ -32,7 +34,7 @@ RankedSet ranked_set(const Problem& problem, const std::vector<int>& offered, co
   // where every hookup was rated and no split could be better, the order is proved as well
   if (line && !options.visit && set.complete == "visited" && std::ranges::all_of(set.entries, is_certain)) {
     set.complete = "proved";
-    set.within = line->within(*rater, set.entries);
+    set.within = line->within(options.by, set.entries);
   }
   return set;
 }
@@ -77,8 +79,8 @@ Ranking rank(const Problem& problem, const std::vector<int>& offered, const Rank
   std::optional<Twins> twins;
   std::optional<Rater> rater;
   std::unique_ptr<OnOneLine> line;
-  const RankedSet set = ranked_set(problem, offered, options, twins, rater, line);
   Ranking out;
+  const RankedSet set = ranked_set(problem, offered, options, twins, rater, line, out.why_not_proved);
   out.offered = static_cast<int>(offered.size());
   out.most = options.most;
   out.hookups = count_hookups_up_to(out.offered, options.most).value_or(-1);
@@ -89,7 +91,7 @@ Ranking rank(const Problem& problem, const std::vector<int>& offered, const Rank
   out.unsolved = set.unsolved;
   const auto order = in_order(set.entries, options);
   tell_places(*rater, set, order, out);
-  if (line && !order.empty()) out.kept_out = line->kept_out(*rater, set.entries[order.front()]);
+  if (line && !order.empty()) out.kept_out = kept_out(*line, *rater, set.entries[order.front()]);
   tell_stair(set, options, out);
   return out;
 }

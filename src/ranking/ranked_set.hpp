@@ -13,7 +13,7 @@ struct RankedSet {
   std::optional<Entry> today;
   bool today_listed = false;             ///< it is one of the space: what differs from it only in name is told
   std::optional<long long> today_place;  ///< among merged hookups, from 1
-  long long rated = 0;  ///< by the full models
+  long long rated = 0;                   ///< by the full models
   std::string complete = "partly", why_partly;
   std::optional<double> within;
   bool unsolved = false;  ///< something could not be solved

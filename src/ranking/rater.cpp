@@ -46,8 +46,8 @@ Entry Rater::rate(Hookup hookup) const {
   e.vessel_count = static_cast<int>(chooser.network().vessels().size());
   e.free_shares = free_shares_of(e.hookup);
   e.shares = judged.shares;
-  const auto free = chooser.choose_free(judged.feed_m3_s, Purpose::reach);
-  e.split_certain = e.free_shares == 0 || (known_.shares_of && free && free->shares == judged.shares);
+  e.split_certain = judged.shares_certain;
+  e.stands_in_the_way = finding.stands_in_the_way;
   e.text = to_text(e.hookup, problem_.site, judged.shares);
   if (const Stream* outlet = answer(judged.passes.outlet))
     e.reach = value_of(options_.by == By::yield ? objective_ : Objective{}, problem_.duty, *outlet);

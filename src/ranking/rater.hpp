@@ -27,7 +27,7 @@ class Rater {
   /// All that is told of an entry whose place is known. is_listed: not a hookup of the user's that stands besides.
   [[nodiscard]] Ranked tell(const Entry& entry, bool is_listed) const;
 
-  [[nodiscard]] bool needs_ceilings() const { return options_.by == By::fit || options_.by == By::ceiling; }
+  [[nodiscard]] bool needs_ceilings() const { return by_ceiling(options_.by); }
   [[nodiscard]] const Problem& problem() const { return problem_; }
   [[nodiscard]] const RankOptions& options() const { return options_; }
   [[nodiscard]] const Twins& twins() const { return twins_; }

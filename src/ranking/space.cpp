@@ -2,8 +2,8 @@
 
 #include <algorithm>
 #include <functional>
-#include <map>
 
+#include "templates.hpp"
 #include "vatwright/ranking/enumerate.hpp"
 
 namespace vatwright {
@@ -23,19 +23,6 @@ void for_each_multiset(const std::vector<std::vector<int>>& classes, int k, Coun
   }
   counts[from] = 0;
 }
-
-// The templates of one pattern of equals are made once.
-class Templates {
- public:
-  const std::vector<Hookup>& of(const Counts& pattern) {
-    const auto [it, is_new] = made_.try_emplace(pattern);
-    if (is_new) it->second = hookups_of_classes(pattern);
-    return it->second;
-  }
-
- private:
-  std::map<Counts, std::vector<Hookup>> made_;
-};
 
 }  // namespace
 

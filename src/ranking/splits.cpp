@@ -5,6 +5,7 @@
 #include <cmath>
 #include <limits>
 
+#include "roof.hpp"
 #include "vatwright/hookup/share_space.hpp"
 
 namespace vatwright {
@@ -21,40 +22,6 @@ constexpr std::size_t most_trials = 240;
 constexpr double trusted = 1.0 / 100, octave = 1.25;
 constexpr std::size_t most_branches = 8;
 
-/// A concave or straight piece above a function between two places.
-struct Roof {
-  double a = 0, b = 0;              // from, to
-  double at_a = 0, at_b = 0;        // values
-  double slope_a = 0, slope_b = 0;  // of the pieces that pass through them
-  double ridge = 0;                 // where they meet
-  [[nodiscard]] double over(double f) const { return std::min(at_a + slope_a * (f - a), at_b + slope_b * (f - b)); }
-};
-
-/// What is known of the moles that one side converts, at the ends of a cell.
-struct Side {
-  double value, slope;
-};
-
-Roof straight(double a, double b, double at_a, double at_b) {
-  const double slope = (at_b - at_a) / (b - a);
-  return {a, b, at_a, at_b, slope, slope, b};
-}
-
-/// bends: of z with space time in this cell, -1 concave, 1 convex, 0 not known (see Line::bends); moles bend alike.
-Roof roof(double a, double b, const Side& at_a, const Side& at_b, const Roof& monotone, int bends) {
-  const double chord = (at_b.value - at_a.value) / (b - a);
-  const double noise = 1e-9 * (std::abs(at_a.slope) + std::abs(at_b.slope));
-  if (bends < 0 && at_a.slope >= chord - noise && chord >= at_b.slope - noise) {
-    const double bend = at_a.slope - at_b.slope;
-    double ridge = bend > noise ? (at_b.value - at_a.value + at_a.slope * a - at_b.slope * b) / bend : (a + b) / 2;
-    ridge = std::clamp(ridge, a, b);
-    return {a, b, at_a.value, at_b.value, at_a.slope, at_b.slope, ridge};
-  }
-  if (bends > 0 && at_a.slope <= chord + noise && chord <= at_b.slope + noise)
-    return straight(a, b, at_a.value, at_b.value);
-  return monotone;
-}
-
 }  // namespace
 
 /// One branch of a joint, or several single vessels that go as one.
@@ -69,7 +36,8 @@ struct Splits::Branch {
 struct Splits::Joint {
   std::array<Branch, most_branches> branches;
   std::size_t count = 0;
-  double z_in = 0, whole = 0, least = 0;                           // flow of the joint, least flow of a branch
+  bool any_group = false, too_narrow = false;                      // too_narrow: the caps do not pass the flow
+  double z_in = 0, least = 0;                                      // least: flow of a branch
   std::array<double, most_branches + 1> cap_from{}, least_from{};  // sums over the branches from here on
 };
 
@@ -81,21 +49,14 @@ struct Splits::Trial {
   double value, slope;
 };
 
-double feed_lines_pass(const Hookup& hookup, std::span<const Line::OnLine* const> vessels) {
-  if (hookup.join == Join::vessel) return vessels[static_cast<std::size_t>(hookup.vessel)]->cap_m3_s;
-  double least = infinite, sum = 0;
-  for (const Hookup& part : hookup.parts) {
-    const double one = feed_lines_pass(part, vessels);
-    least = std::min(least, one);
-    sum += one;
-  }
-  return hookup.join == Join::then ? least : std::min(sum, least / least_share);
+double caps_pass(const Hookup& hookup, std::span<const Line::OnLine* const> vessels) {
+  return most_flow(hookup, [&](int place) { return vessels[static_cast<std::size_t>(place)]->cap_m3_s; });
 }
 
 Out Splits::best(const Hookup& hookup, std::span<const Line::OnLine* const> vessels, double z_in, double feed_m3_s,
                  double need) {
   vessels_ = vessels;
-  if (feed_lines_pass(hookup, vessels_) < feed_m3_s * (1 - hair)) return {no_shares, 0, 0};
+  if (caps_pass(hookup, vessels_) < feed_m3_s * (1 - hair)) return {no_shares, 0, 0};
   return pass(hookup, z_in, feed_m3_s, need);
 }
 
@@ -124,78 +85,80 @@ Out Splits::through(const Branch& branch, double z_in, double q, double need) {
   return line_.out(branch.group, z_in, q);
 }
 
-// Single vessels of one kind and concave outlets first as one; where that breaks a feed line, each for itself.
+/// Whether two members go as one: single vessels of one kind and rate, of which outlets are concave in space time.
+bool Splits::go_as_one(const Hookup& a, const Hookup& b) const {
+  if (a.join != Join::vessel || b.join != Join::vessel) return false;
+  const Line::OnLine &x = vessel(a), &y = vessel(b);
+  if (x.track != y.track || x.is_tank != y.is_tank) return false;
+  return x.is_tank ? line_.tanks_concave() : line_.falls();
+}
+
+Splits::Joint Splits::joint_of(const Hookup& hookup, double z_in, double q, bool grouped) const {
+  Joint j;
+  j.z_in = z_in;
+  j.least = least_share * q;
+  for (std::size_t i = 0; i < hookup.parts.size(); ++i) {
+    const Hookup& part = hookup.parts[i];
+    std::size_t at = grouped ? 0 : j.count;
+    while (at < j.count && !go_as_one(hookup.parts[j.branches[at].members[0]], part)) ++at;
+    Branch& b = j.branches[at];
+    if (at == j.count) {
+      ++j.count;
+      b.hookup = &part;
+      b.members[0] = i;
+      b.cap = caps_pass(part, vessels_);
+      continue;
+    }
+    if (b.hookup != nullptr) {  // the second: now it is a group
+      b.group = vessel(*b.hookup);
+      b.hookup = nullptr;
+      j.any_group = true;
+    }
+    b.group.volume_m3 += vessel(part).volume_m3;
+    b.members[b.count++] = i;
+  }
+  for (std::size_t at = 0; at < j.count; ++at) {
+    Branch& b = j.branches[at];
+    if (b.hookup != nullptr) continue;
+    b.cap = infinite;
+    for (std::size_t m = 0; m < b.count; ++m) {
+      const Line::OnLine& one = vessel(hookup.parts[b.members[m]]);
+      b.cap = std::min(b.cap, one.cap_m3_s * b.group.volume_m3 / one.volume_m3);
+    }
+  }
+  for (std::size_t at = j.count; at-- > 0;) {
+    const Branch& b = j.branches[at];
+    const double least = j.least * static_cast<double>(b.count);
+    j.cap_from[at] = j.cap_from[at + 1] + b.cap;
+    j.least_from[at] = j.least_from[at + 1] + least;
+    j.too_narrow = j.too_narrow || b.cap < least * (1 - hair);
+  }
+  j.too_narrow = j.too_narrow || j.cap_from[0] < q * (1 - hair);
+  return j;
+}
+
+// With groups first; where a cap binds inside one, its members are split each for itself.
 Out Splits::joint(const Hookup& hookup, double z_in, double q, double need, std::vector<double>* flows) {
-  const auto grouped = [&](std::size_t i, std::size_t k) {
-    const Hookup &a = hookup.parts[i], &b = hookup.parts[k];
-    if (a.join != Join::vessel || b.join != Join::vessel) return false;
-    const Line::OnLine &x = vessel(a), &y = vessel(b);
-    if (x.track != y.track || x.is_tank != y.is_tank) return false;
-    return x.is_tank ? line_.tanks_concave() : line_.falls();
-  };
-  for (const bool group : {true, false}) {
-    Joint j;
-    j.z_in = z_in;
-    j.whole = q;
-    j.least = least_share * q;
-    bool any_group = false;
-    for (std::size_t i = 0; i < hookup.parts.size(); ++i) {
-      const Hookup& part = hookup.parts[i];
-      std::size_t at = 0;
-      while (group && at < j.count && !grouped(j.branches[at].members[0], i)) ++at;
-      if (!group) at = j.count;
-      if (at < j.count) {
-        Branch& b = j.branches[at];
-        if (b.count == 1) b.group = vessel(hookup.parts[b.members[0]]);
-        b.hookup = nullptr;
-        b.group.volume_m3 += vessel(part).volume_m3;
-        b.members[b.count++] = i;
-        any_group = true;
-      } else {
-        Branch& b = j.branches[j.count++];
-        b = Branch{};
-        b.hookup = &part;
-        b.members[0] = i;
-        b.cap = feed_lines_pass(part, vessels_);
-      }
-    }
-    for (std::size_t at = 0; at < j.count; ++at) {
-      Branch& b = j.branches[at];
-      if (b.hookup != nullptr) continue;
-      b.cap = infinite;
-      for (std::size_t m = 0; m < b.count; ++m) {
-        const Line::OnLine& one = vessel(hookup.parts[b.members[m]]);
-        b.cap = std::min(b.cap, one.cap_m3_s * b.group.volume_m3 / one.volume_m3);
-      }
-    }
-    for (std::size_t at = j.count; at-- > 0;) {
-      j.cap_from[at] = j.cap_from[at + 1] + j.branches[at].cap;
-      j.least_from[at] = j.least_from[at + 1] + j.least * static_cast<double>(j.branches[at].count);
-    }
+  for (const bool grouped : {true, false}) {
+    const Joint j = joint_of(hookup, z_in, q, grouped);
+    if (j.too_narrow) continue;
     std::vector<double> of_branches;
-    bool too_narrow = j.cap_from[0] < q * (1 - hair);
-    for (std::size_t at = 0; at < j.count; ++at)
-      too_narrow = too_narrow || j.branches[at].cap < j.least * static_cast<double>(j.branches[at].count) * (1 - hair);
-    if (too_narrow) continue;
-    const bool flows_wanted = flows != nullptr || any_group;
-    const Out out = split(j, 0, q, need, flows_wanted ? &of_branches : nullptr);
+    const Out out = split(j, 0, q, need, flows != nullptr || j.any_group ? &of_branches : nullptr);
     if (!(out.z >= 0)) return out;
-    const bool short_of_need = of_branches.size() < j.count;
-    if (any_group && !short_of_need) {
-      bool binds = false;
-      for (std::size_t at = 0; at < j.count; ++at)
-        binds = binds || (j.branches[at].hookup == nullptr && of_branches[at] >= j.branches[at].cap * (1 - 1e-9));
-      if (binds) continue;
+    bool binds = false;
+    for (std::size_t at = 0; at < of_branches.size(); ++at) {
+      const Branch& b = j.branches[at];
+      binds = binds || (b.hookup == nullptr && of_branches[at] >= b.cap * (1 - 1e-9));
     }
-    if (flows != nullptr) {
-      flows->assign(hookup.parts.size(), 0);
-      for (std::size_t at = 0; at < j.count; ++at) {
-        const Branch& b = j.branches[at];
-        for (std::size_t m = 0; m < b.count; ++m) {
-          const double share =
-              b.hookup != nullptr ? 1 : vessel(hookup.parts[b.members[m]]).volume_m3 / b.group.volume_m3;
-          (*flows)[b.members[m]] = of_branches[at] * share;
-        }
+    if (binds) continue;
+    if (flows == nullptr) return out;
+    flows->assign(hookup.parts.size(), 0);
+    for (std::size_t at = 0; at < j.count; ++at) {
+      const Branch& b = j.branches[at];
+      for (std::size_t m = 0; m < b.count; ++m) {
+        const std::size_t i = b.members[m];
+        const double share = b.hookup != nullptr ? 1 : vessel(hookup.parts[i]).volume_m3 / b.group.volume_m3;
+        (*flows)[i] = of_branches[at] * share;
       }
     }
     return out;
@@ -267,19 +230,12 @@ Out Splits::split(const Joint& j, std::size_t from, double q, double need, std::
   };
   const double need_moles = (need - j.z_in) * q;
 
-  const bool plain = line_.tanks_concave() && j.branches[from].count >= 1;
-  std::array<double, 7> starts{};
-  std::size_t n_starts = 0;
-  if (plain)
-    for (const double s : {0.0, 0.5, 1.0}) starts[n_starts++] = s;
-  else
-    for (const double s : {0.0, 0.06, 0.25, 0.5, 0.75, 0.94, 1.0}) starts[n_starts++] = s;
-  if (hi - lo <= hair * q) {
-    n_starts = 1;
-    starts[0] = 0.5;
-  }
+  static constexpr std::array<double, 7> many = {0, 0.06, 0.25, 0.5, 0.75, 0.94, 1};
+  static constexpr std::array<double, 3> few = {0, 0.5, 1};  // where all is concave
+  std::span<const double> starts = line_.tanks_concave() ? std::span<const double>(few) : many;
+  if (hi - lo <= hair * q) starts = starts.first(1);
   std::size_t best = 0;
-  for (std::size_t i = 0; i < n_starts; ++i) {
+  for (std::size_t i = 0; i < starts.size(); ++i) {
     const Trial t = tried(j, from, q, lo + (hi - lo) * starts[i]);
     if (!std::isfinite(t.value)) return {std::numeric_limits<double>::quiet_NaN(), 0, 0};
     insert(t);

@@ -7,9 +7,8 @@
 
 namespace vatwright {
 
-/// The most that the feed lines of a hookup pass at any shares, no branch getting less than least_share of its joint.
-/// Leaves are places in `vessels`.
-double feed_lines_pass(const Hookup& hookup, std::span<const Line::OnLine* const> vessels);
+/// The most that the caps of a hookup's vessels pass at any shares. Leaves are places in `vessels`.
+double caps_pass(const Hookup& hookup, std::span<const Line::OnLine* const> vessels);
 
 /// The best shares of a hookup of a duty on a line, with a bound that nothing is better. As every vessel passes more on
 /// when it is given more, each joint is split for its own outlet, and inner joints are solved inside outer ones.
@@ -48,6 +47,8 @@ class Splits {
   Line::Out pass(const Hookup& hookup, double z_in, double q, double need);
   Line::Out along(const Hookup& hookup, double z_in, double q, double need);
   Line::Out joint(const Hookup& hookup, double z_in, double q, double need, std::vector<double>* flows);
+  [[nodiscard]] bool go_as_one(const Hookup& a, const Hookup& b) const;
+  [[nodiscard]] Joint joint_of(const Hookup& hookup, double z_in, double q, bool grouped) const;
   Line::Out split(const Joint& joint, std::size_t from, double q, double need, std::vector<double>* flows);
   Line::Out through(const Branch& branch, double z_in, double q, double need);
   [[nodiscard]] int bend_of(const Joint& joint, std::size_t from, std::size_t to, double z_lo, double z_hi,

@@ -31,7 +31,8 @@ std::string space_words(const Ranking& ranking) {
   if (ranking.complete == "proved") return text + "; proved: none that was passed over is better";
   if (ranking.complete == "visited")
     return text + ", every one visited (those that differ only in name once: " + std::to_string(ranking.rated) +
-           " rated); shares are the best found";
+           " rated); shares are the best found" +
+           (ranking.why_not_proved.empty() ? "" : ", not proved: " + ranking.why_not_proved);
   return text + ", of which " + std::to_string(ranking.rated) + " were rated" +
          (ranking.why_partly.empty() ? "" : ": " + ranking.why_partly);
 }

@@ -9,6 +9,7 @@ namespace vatwright {
 struct JudgedHookup {
   double feed_m3_s = 0;
   std::vector<double> shares;
+  bool shares_certain = false;  ///< no others do better but for limits: there are none to choose, or they are known
   NetworkOutcome passes;
   std::vector<Judged> vessels;      ///< in the order of the text
   std::vector<Limit> whole;         ///< limits of the whole: what all vessels draw together

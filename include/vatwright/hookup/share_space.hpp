@@ -3,12 +3,18 @@
 #include <vector>
 
 #include "vatwright/hookup/expression.hpp"
+#include "vatwright/numeric/rhs.hpp"
 
 namespace vatwright {
 
 /// The least share of a free branch, of what its beside leaves free: a closed branch is the smaller hookup, not this
 /// one.
 inline constexpr double least_share = 1e-4;
+
+/// The most that a hookup can be fed where every vessel passes so much: in series the least, beside each other the sum,
+/// no free branch getting less than least_share and a fixed one its share. Infinite: nothing limits it.
+///   passes: of a leaf, by its number.
+double most_flow(const Hookup& hookup, FunctionRef<double(int leaf)> passes);
 
 /// The free shares of a hookup as coordinates 0 .. 1. A beside whose m free members share R (1 less the fixed ones) has
 /// m - 1 of them:

@@ -27,9 +27,6 @@ std::vector<Hookup> hookups_of(std::span<const int> vessels);
 /// text.
 std::vector<Hookup> hookups_of_classes(const std::vector<int>& counts);
 
-/// Every choice of k out of n, rising, in lexical order.
-std::vector<std::vector<int>> choices(int n, int k);
-
 /// Members of every beside in the order of their smallest vessel. Precondition: all shares free.
 Hookup sorted_members(Hookup hookup);
 /// Every leaf's vessel v replaced by to[v].

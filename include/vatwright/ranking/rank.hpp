@@ -58,6 +58,7 @@ struct Ranking {
   long long hookups = 0, rated = 0;  ///< all labelled ones, before merging; those rated
   std::string complete = "partly";   ///< "proved" | "visited" | "partly"
   std::string why_partly;            ///< in words, where partly
+  std::string why_not_proved;        ///< in words, where no bound serves this duty
   std::optional<double> within;
   std::vector<KeptOut> kept_out;  ///< up to three, the best first
   std::optional<Ranked> today;
